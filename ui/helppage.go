@@ -1,0 +1,108 @@
+package ui
+
+import (
+	"slices"
+	"strings"
+
+	"github.com/charmbracelet/bubbles/help"
+	"github.com/charmbracelet/bubbles/key"
+
+	"emendary/ui/finder"
+	"emendary/ui/line"
+	"emendary/ui/style"
+	"emendary/ui/text"
+)
+
+// openHelp shows the help page.
+func (m *Model) openHelp() {
+	m.behind = m.screen
+	m.open(onHelp)
+	m.page.Show(m.helpLines(), 0)
+}
+
+// helpSection is the keys of one part under a heading.
+type helpSection struct {
+	name string
+	keys help.KeyMap
+}
+
+// helpSections composes the help of all parts, in the order of use.
+func (m Model) helpSections() []helpSection {
+	return []helpSection{
+		{"on the bench", m.Keys},
+		{"in the alignment", m.alignment.Keys},
+		{"in the concordance", m.concordance.Keys},
+		{"in the related forms", m.related.Keys},
+		{"in the strip of actions", m.Strip},
+		{"a correction of your own", line.CorrectionKeys()},
+		{"adding to a list", line.AdditionKeys()},
+		{"a query", line.QueryKeys()},
+		{"finding a form", finder.Keys()},
+		{"a page", m.page.Keys},
+		{"when a ruling could not be written", m.Failure},
+	}
+}
+
+// helpLines is the help page: the keys of every part, what is typed in a line,
+// and the marks.
+func (m Model) helpLines() []string {
+	s := m.sheet.Signs
+	lines := []string{
+		" A ruling applies to the checked citations; it is on disk before the screen moves",
+		" on, and any ruling can be undone. Nothing is unsaved when you leave.",
+	}
+	head := func(name string) { lines = append(lines, "", " "+m.sheet.Title.Render(name)) }
+	row := func(name, desc string) {
+		lines = append(lines, text.Cut("   "+text.Pad(m.sheet.Key.Render(m.keyName(name)), 16)+desc, m.width, s.Ellipsis))
+	}
+	for _, section := range m.helpSections() {
+		head(section.name)
+		for _, group := range section.keys.FullHelp() {
+			for _, b := range group {
+				row(b.Help().Key, b.Help().Desc)
+			}
+		}
+	}
+	head("editing within a line")
+	for _, b := range line.FieldKeys().FullHelp()[0] {
+		row(b.Help().Key, b.Help().Desc)
+	}
+	convention := m.opt.Convention
+	if convention == "" {
+		convention = style.British
+	}
+	head("marks (" + string(convention) + " convention)")
+	for _, r := range [][2]string{
+		{s.Agrees, "the candidate's letter is the form's"},
+		{s.Caret, "insert, at this place, what stands below"},
+		{"o" + s.Slash, "put o in place of the letter above"},
+		{s.Dele, "delete the letter above"},
+		{"tr " + s.Transpose, "transpose the two letters above"},
+		{s.Space, "a space"},
+		{s.CloseUp, "close up"},
+		{s.Capital + " " + s.Lower, "capital, lower case"},
+	} {
+		row(r[0], r[1])
+	}
+	head("figures")
+	row("bits", "cost of the candidate: its edits and how rare the word is; less is better")
+	row("share", "probability among the candidates of the form")
+	row(s.Strip[0]+s.Strip[len(s.Strip)/2]+s.Strip[len(s.Strip)-1], "how often the form stands in each part")
+	return lines
+}
+
+// keyName returns the name of a key as help texts have it, with arrows named in
+// words where the screen is ASCII.
+func (m Model) keyName(name string) string {
+	s := m.sheet.Signs
+	return strings.NewReplacer("↑", s.Up, "↓", s.Down, "←", s.Left, "→", s.Right).Replace(name)
+}
+
+// named returns bindings with their keys' names fit for the screen.
+func (m Model) named(keys []key.Binding) []key.Binding {
+	out := slices.Clone(keys)
+	for i, b := range out {
+		out[i].SetHelp(m.keyName(b.Help().Key), b.Help().Desc)
+	}
+	return out
+}

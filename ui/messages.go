@@ -1,0 +1,194 @@
+package ui
+
+import (
+	"fmt"
+	"strings"
+	"unicode"
+	"unicode/utf8"
+
+	"emendary/internal/docket"
+	"emendary/internal/ledger"
+	"emendary/ui/text"
+)
+
+// visible returns s fit for the screen.
+func (m *Model) visible(s string) string { return text.Visible(s, m.sheet.Signs.ASCII) }
+
+// count returns n with its noun: "1 citation", "3 citations", "2 entries".
+func count(n int, noun string) string {
+	switch {
+	case n == 1:
+		return "1 " + noun
+	case strings.HasSuffix(noun, "y") && !strings.HasSuffix(noun, "ey"):
+		return fmt.Sprintf("%d %sies", n, strings.TrimSuffix(noun, "y"))
+	}
+	return fmt.Sprintf("%d %ss", n, noun)
+}
+
+// capital reports whether s starts with a capital.
+func capital(s string) bool {
+	r, _ := utf8.DecodeRuneInString(s)
+	return unicode.IsUpper(r)
+}
+
+// summary says what a ruling did: "accepted harbour for harber".
+func (m *Model) summary(r ledger.Ruling) string {
+	form := m.visible(r.Form)
+	var s string
+	switch r.Act {
+	case ledger.Accept:
+		s = "accepted " + m.visible(r.Word) + " for " + form
+	case ledger.Reject:
+		s = form + " stands"
+	case ledger.Add:
+		s = "added " + form + " to the " + m.visible(r.List) + " list"
+		if r.Kind != "" {
+			s += " as " + m.visible(r.Kind)
+		}
+	case ledger.Query:
+		return "query to " + m.visible(r.To) + " on " + form
+	case ledger.Later:
+		return form + " put off"
+	default:
+		return string(r.Act) + " " + form
+	}
+	if r.Query != "" {
+		s += ", with a query to " + m.visible(r.To)
+	}
+	return s
+}
+
+// told is the message after rulings: what the first did and to how many
+// citations, what went with it, and how many of them were never on screen.
+func (m *Model) told(rulings []ledger.Ruling) string {
+	unseen := 0
+	for _, r := range rulings {
+		for _, o := range r.Occurrences {
+			if !o.Seen {
+				unseen++
+			}
+		}
+	}
+	s := m.summary(rulings[0]) + ", " + count(len(rulings[0].Occurrences), "citation")
+	if n := len(rulings) - 1; n > 0 {
+		var forms []string
+		for _, r := range rulings[1:] {
+			forms = append(forms, fmt.Sprintf("%s (%d)", m.visible(r.Form), len(r.Occurrences)))
+		}
+		s += "; with it " + strings.Join(forms, ", ")
+	}
+	if unseen > 0 {
+		s += fmt.Sprintf(" (%d never on screen)", unseen)
+	}
+	return s
+}
+
+// ruled says in a word or two what is in force on an occurrence.
+func (m *Model) ruled(r ledger.Ruling) string {
+	switch r.Act {
+	case ledger.Accept:
+		return m.sheet.Signs.Arrow + " " + m.visible(r.Word)
+	case ledger.Reject:
+		return "stands"
+	case ledger.Add:
+		return "added"
+	case ledger.Query:
+		return "query"
+	case ledger.Later:
+		return "later"
+	}
+	return string(r.Act)
+}
+
+// state says of an entry in the finder whether it is open or what was ruled.
+func (m *Model) state(e *docket.Entry) string {
+	rulings := e.Rulings()
+	switch {
+	case e.PutOff():
+		return "later"
+	case len(rulings) == 0:
+		return "open"
+	}
+	s := m.ruled(rulings[len(rulings)-1])
+	if e.Open() {
+		s += ", open"
+	}
+	return s
+}
+
+// welcome is the first message: what was done before, and what of it is lost.
+func (m *Model) welcome(last *ledger.Ruling) string {
+	var s []string
+	t := m.docket.Tally()
+	if last != nil {
+		s = append(s, "resumed: "+count(t.Ruled, "entry")+" ruled, the latest: "+m.summary(*last))
+	}
+	if n := len(m.docket.Unplaced); n > 0 {
+		u := m.docket.Unplaced[0]
+		s = append(s, fmt.Sprintf("%s of earlier rulings not found in the manuscript as it is now (first: %s)", count(n, "place"), m.visible(u.Ruling.Form)))
+	}
+	return strings.Join(s, "; ")
+}
+
+// facts is the line about the entry: what is the matter, where it stands, what
+// is near it, what was ruled.
+func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
+	dot := " " + m.sheet.Signs.Dot + " "
+	say := []string{string(e.Kind)}
+	if e.Why != "" {
+		say[0] += ": " + m.visible(e.Why)
+	}
+	if rulings := e.Rulings(); len(rulings) > 0 {
+		say = append(say, m.summary(rulings[len(rulings)-1]))
+	}
+	f := m.work(e).facts
+	if f == nil {
+		return strings.Join(say, dot), ""
+	}
+	parts := 0
+	for _, n := range f.parts {
+		if n > 0 {
+			parts++
+		}
+	}
+	if len(f.parts) > 1 {
+		say = append(say, fmt.Sprintf("in %d of %s", parts, count(len(f.parts), "part")))
+		strip = m.strip(f.parts)
+	}
+	if len(f.near) > 0 {
+		var near []string
+		for _, n := range f.near[:min(len(f.near), 6)] {
+			near = append(near, fmt.Sprintf("%s %s%d", m.visible(n.Form), m.sheet.Signs.Times, n.Count))
+		}
+		say = append(say, "near: "+strings.Join(near, ", "))
+	}
+	return strings.Join(say, dot), strip
+}
+
+// stripWidth is the most columns a dispersion strip takes; more parts share them.
+const stripWidth = 32
+
+// strip draws how often the form stands in each part, the highest bar the most.
+func (m *Model) strip(parts []int) string {
+	bars := parts
+	if len(parts) > stripWidth {
+		bars = make([]int, stripWidth)
+		for i, n := range parts {
+			bars[i*stripWidth/len(parts)] += n
+		}
+	}
+	most := 1
+	for _, n := range bars {
+		most = max(most, n)
+	}
+	signs := m.sheet.Signs.Strip
+	var b strings.Builder
+	for _, n := range bars {
+		level := 0
+		if n > 0 {
+			level = 1 + (n*(len(signs)-1)-1)/most
+		}
+		b.WriteString(signs[min(level, len(signs)-1)])
+	}
+	return b.String()
+}

@@ -1,0 +1,231 @@
+package ui
+
+import (
+	"context"
+	"sync"
+
+	tea "github.com/charmbracelet/bubbletea"
+
+	"emendary/internal/docket"
+	"emendary/internal/ledger"
+)
+
+// batch is rulings that are written together, and what follows once they are.
+type batch struct {
+	id      int
+	rulings []ledger.Ruling
+	said    string        // the message that follows
+	then    *docket.Entry // where to go; nil: to the next open entry
+	write   func() error  // once: whoever calls it waits for the one outcome
+}
+
+// written says how the writing of batch id went.
+type written struct {
+	id  int
+	err error
+}
+
+// again returns b ready to be written once more.
+func (b *batch) again() *batch { return &batch{rulings: b.rulings, said: b.said, then: b.then} }
+
+// send writes a batch beside the screen. Rulings that cannot be written twice by
+// mistake: they have their IDs already.
+func (m *Model) send(b *batch) tea.Cmd {
+	m.writes++
+	b.id = m.writes
+	ctx, write, rulings := context.WithoutCancel(m.ctx), m.opt.writer(m.session), b.rulings
+	b.write = sync.OnceValue(func() error { return write(ctx, rulings...) })
+	m.batch = b
+	m.screen = m.resting()
+	id, run := b.id, b.write
+	return func() tea.Msg { return written{id, run()} }
+}
+
+// settle records what is on disk and moves on, or says why nothing is.
+func (m *Model) settle(w written) tea.Cmd {
+	b := m.batch
+	if b == nil || b.id != w.id {
+		return nil
+	}
+	if w.err != nil {
+		m.warn("not written: " + m.visible(w.err.Error()) + m.dropHeld())
+		m.open(onFailure)
+		return nil
+	}
+	m.batch = nil
+	grows := false
+	for _, r := range b.rulings {
+		grows = grows || r.Act == ledger.Add || r.Act == ledger.Undo
+	}
+	m.docket.Record(b.rulings...)
+	m.forget()
+	to := b.then
+	if to == nil {
+		to = m.openAfter(m.index())
+	}
+	if grows {
+		m.grown()
+	}
+	m.goTo(to)
+	m.say(b.said)
+	return m.compute()
+}
+
+// dropHeld lets go of the keys typed after a ruling that could not be written:
+// they were meant for other entries than the one on screen.
+func (m *Model) dropHeld() string {
+	n := len(m.held)
+	m.held = nil
+	if n == 0 {
+		return ""
+	}
+	return " (" + count(n, "key") + " typed since not taken)"
+}
+
+// forget drops the checks of all entries, which rulings change; what has been
+// seen stays seen.
+func (m *Model) forget() {
+	for _, w := range m.works {
+		w.checked = nil
+	}
+}
+
+// rule sends a ruling on the entry, with the same for the related forms that are
+// checked. fill sets what the act needs; becomes is the related form's result.
+func (m *Model) rule(act ledger.Act, fill func(r *ledger.Ruling, becomes string)) tea.Cmd {
+	w := m.work(m.entry)
+	if m.concordance.Checked() == 0 {
+		m.open(onBench)
+		m.warn("no citation is checked: tab goes to the concordance, space checks")
+		return nil
+	}
+	lead := m.docket.Ruling(m.entry, act, w.checked, w.seen)
+	fill(&lead, m.typed)
+	rulings := []ledger.Ruling{lead}
+	if act == ledger.Accept || act == ledger.Reject || act == ledger.Add {
+		for i, row := range m.related.Rows() {
+			if r, ok := m.ruleRelated(m.kin[i], row.Checked, act, fill); ok {
+				r.With = lead.ID
+				r.Query, r.To = "", "" // it is asked once
+				rulings = append(rulings, r)
+			}
+		}
+	}
+	return m.send(&batch{rulings: rulings, said: m.told(rulings)})
+}
+
+// ruleRelated rules on a related form if it is checked and has something to rule on.
+func (m *Model) ruleRelated(k docket.Related, checked bool, act ledger.Act, fill func(*ledger.Ruling, string)) (ledger.Ruling, bool) {
+	if !checked || act == ledger.Accept && k.Text == "" {
+		return ledger.Ruling{}, false
+	}
+	checks := m.docket.Checked(k.Entry)
+	any := false
+	for _, c := range checks {
+		any = any || c
+	}
+	if !any {
+		return ledger.Ruling{}, false
+	}
+	r := m.docket.Ruling(k.Entry, act, checks, m.work(k.Entry).seen)
+	fill(&r, k.Text)
+	return r, true
+}
+
+// accept emends the checked citations to word; "" means the candidate under the cursor.
+func (m *Model) accept(word string) tea.Cmd { return m.acceptAsking(word, "", "") }
+
+func (m *Model) acceptAsking(word, query, to string) tea.Cmd {
+	if word == "" {
+		row, ok := m.alignment.Selected()
+		if !ok {
+			m.warn("there is no candidate to accept: ; corrects, d lets the form stand")
+			return nil
+		}
+		word = row.Text
+	}
+	m.typed = word
+	return m.rule(ledger.Accept, func(r *ledger.Ruling, becomes string) {
+		r.Word, r.Query, r.To = becomes, query, to
+	})
+}
+
+func (m *Model) stand() tea.Cmd { return m.standAsking("", "") }
+
+func (m *Model) standAsking(query, to string) tea.Cmd {
+	return m.rule(ledger.Reject, func(r *ledger.Ruling, _ string) { r.Query, r.To = query, to })
+}
+
+func (m *Model) add() tea.Cmd { return m.addAsking("", "") }
+
+func (m *Model) addAsking(query, to string) tea.Cmd {
+	list, kind, note := m.addition.List.Chosen(), m.addition.Kind.Chosen(), m.addition.Note()
+	m.lastList = list
+	m.lastKind[m.kindKey(list)] = kind
+	return m.rule(ledger.Add, func(r *ledger.Ruling, _ string) {
+		r.List, r.Kind, r.Note, r.Query, r.To = list, kind, note, query, to
+	})
+}
+
+// ask writes the query alone, or with the ruling it goes with.
+func (m *Model) ask() tea.Cmd {
+	question, to := m.query.Value(), m.query.Whom.Chosen()
+	m.lastWhom = to
+	switch goes := m.query.With.Chosen(); {
+	case goes == "with let stand":
+		return m.standAsking(question, to)
+	case m.query.With.At == 1 && m.typed != "":
+		return m.acceptAsking(m.typed, question, to)
+	case m.query.With.At > 0:
+		return m.addAsking(question, to)
+	}
+	return m.rule(ledger.Query, func(r *ledger.Ruling, _ string) { r.Query, r.To = question, to })
+}
+
+func (m *Model) later() tea.Cmd {
+	if !m.entry.Open() {
+		m.warn("this entry is ruled on: u undoes the latest ruling, another ruling takes its place")
+		return nil
+	}
+	return m.rule(ledger.Later, func(*ledger.Ruling, string) {})
+}
+
+// undo takes back the newest ruling in force and all that were made with it.
+func (m *Model) undo() tea.Cmd {
+	last, _ := m.docket.Last()
+	if last == nil {
+		m.warn("there is no ruling to undo")
+		return nil
+	}
+	r := m.leader(*last)
+	return m.send(&batch{
+		rulings: []ledger.Ruling{m.docket.Undo(r)}, then: m.entryOf(r), said: "undone: " + m.summary(r),
+	})
+}
+
+// redo takes back the newest undo.
+func (m *Model) redo() tea.Cmd {
+	_, undone := m.docket.Last()
+	if undone == nil {
+		m.warn("there is nothing to redo")
+		return nil
+	}
+	return m.send(&batch{
+		rulings: []ledger.Ruling{m.docket.Undo(*undone)}, then: m.entryOf(*undone), said: "redone: " + m.summary(*undone),
+	})
+}
+
+// leader returns the ruling that r was made with, or r itself.
+func (m *Model) leader(r ledger.Ruling) ledger.Ruling {
+	if r.With.IsZero() {
+		return r
+	}
+	for _, e := range m.docket.Entries {
+		for _, o := range e.Rulings() {
+			if o.ID == r.With {
+				return o
+			}
+		}
+	}
+	return r
+}

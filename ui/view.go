@@ -1,0 +1,210 @@
+package ui
+
+import (
+	"fmt"
+	"path/filepath"
+	"strings"
+
+	"github.com/charmbracelet/bubbles/help"
+	"github.com/charmbracelet/bubbles/key"
+
+	"emendary/ui/style"
+	"emendary/ui/text"
+)
+
+// footer returns the part that lists keys on a line, in our styles.
+func footer(sheet style.Sheet) help.Model {
+	h := help.New()
+	h.ShortSeparator = "  "
+	h.Ellipsis = sheet.Signs.Ellipsis
+	h.Styles = help.Styles{
+		ShortKey: sheet.Key, ShortDesc: sheet.Quiet, ShortSeparator: sheet.Quiet, Ellipsis: sheet.Quiet,
+	}
+	return h
+}
+
+// View draws the screen: exactly as many lines as the terminal has, none wider.
+func (m Model) View() string {
+	switch {
+	case m.width == 0:
+		return ""
+	case m.tooSmall():
+		return text.Cut(fmt.Sprintf("the bench needs %d columns and %d lines; there are %d and %d",
+			leastWidth, leastHeight, m.width, m.height), m.width, "")
+	}
+	lines := []string{m.head(), m.sheet.Quiet.Render(" " + strings.Repeat(m.sheet.Signs.Rule, m.width-2))}
+	keys := m.footer()
+	room := m.height - len(lines) - len(keys) - 1
+	lines = append(lines, text.Fit(m.middle(), m.width, room)...)
+	lines = append(lines, m.messageLine())
+	lines = append(lines, keys...)
+	return strings.Join(text.Fit(lines, m.width, m.height), "\n")
+}
+
+// head is the first line: where the editor is, and how far along.
+func (m Model) head() string {
+	d, s := m.docket, m.sheet.Signs
+	dot := " " + s.Dot + " "
+	title := m.visible(d.Document.Title)
+	if title == "" {
+		title = m.visible(filepath.Base(d.Document.Path))
+	}
+	where := ""
+	if m.entry != nil && len(m.entry.Occurrences) > 0 && len(d.Document.Parts) > 1 {
+		part := d.Citation(m.entry, m.concordance.Cursor()).Part
+		where = fmt.Sprintf("%spart %d of %d", dot, part+1, len(d.Document.Parts))
+		if name := m.visible(d.Document.Parts[part].Title); name != "" && m.width >= 100 {
+			where += dot + name
+		}
+	}
+	t := d.Tally()
+	tally := fmt.Sprintf("%d open%s%d ruled%s%d queries", t.Open, dot, t.Ruled, dot, t.Queries)
+	if t.PutOff > 0 {
+		tally = fmt.Sprintf("%d open (%d later)%s%d ruled%s%d queries", t.Open, t.PutOff, dot, t.Ruled, dot, t.Queries)
+	}
+	room := m.width - 4 - text.Width(tally) - text.Width(where)
+	return text.Ends(" "+m.sheet.Title.Render(text.Cut(title, max(room, 8), s.Ellipsis))+where, tally+" ", m.width, s.Ellipsis)
+}
+
+// messageLine says what the last key did.
+func (m Model) messageLine() string {
+	s := " " + text.Cut(m.message, m.width-2, m.sheet.Signs.Ellipsis)
+	if m.batch != nil && m.screen != onFailure {
+		s = " writing the ruling " + m.sheet.Signs.Ellipsis
+	}
+	if m.alarm {
+		return m.sheet.Alarm.Render(s)
+	}
+	return m.sheet.Settled.Render(s)
+}
+
+// footer lists the keys that matter now, on as many lines as the frame has.
+func (m Model) footer() []string {
+	list := func(keys ...key.Binding) string { return " " + m.help.ShortHelpView(m.named(keys)) }
+	full := m.frame().footer
+	only := func(keys []key.Binding) []string {
+		return text.Fit([]string{list(keys...)}, m.width, full)
+	}
+	switch m.screen {
+	case onFailure:
+		return only(m.Failure.ShortHelp())
+	case onHelp, onParagraph:
+		return only(m.page.Keys.ShortHelp())
+	case onFinder:
+		return only(m.finder.Keys.ShortHelp())
+	case onCorrection:
+		return only(m.correction.Keys.ShortHelp())
+	case onAddition:
+		return only(m.addition.Keys.ShortHelp())
+	case onQuery:
+		return only(m.query.Keys.ShortHelp())
+	case onActions:
+		return only(m.Strip.ShortHelp())
+	case onFinished:
+		return only([]key.Binding{m.Keys.Previous, m.Keys.Find, m.Keys.Undo, m.Keys.Redo, m.Keys.Help, m.Keys.Quit})
+	}
+	k := m.Keys
+	var second []key.Binding
+	switch m.focus {
+	case onAlignment:
+		second = []key.Binding{pair(m.alignment.Keys.Down, m.alignment.Keys.Up, "row"), pair(k.Previous, k.Next, "entry"), k.NextOpen, k.Find, m.nextPart()}
+	case onConcordance:
+		c := m.concordance.Keys
+		second = []key.Binding{pair(c.Down, c.Up, "row"), c.Check, c.Setting, c.Open, m.nextPart()}
+	case onRelated:
+		r := m.related.Keys
+		second = []key.Binding{pair(r.Down, r.Up, "row"), r.Check, pair(k.Previous, k.Next, "entry"), m.nextPart()}
+	}
+	second = append(second, k.Help, k.Quit)
+	return []string{list(k.rulings()...), list(second...)}[:full]
+}
+
+// pair names two keys that go opposite ways by their letters, under one word.
+func pair(a, b key.Binding, desc string) key.Binding {
+	first := func(k key.Binding) string { return strings.Fields(k.Help().Key)[0] }
+	return key.NewBinding(key.WithKeys(append(a.Keys(), b.Keys()...)...), key.WithHelp(first(a)+" "+first(b), desc))
+}
+
+// nextPart is the key for the next focus under the name of where it leads.
+func (m Model) nextPart() key.Binding {
+	b := m.Keys.Focus
+	switch {
+	case m.focus == onAlignment:
+		b.SetHelp(b.Help().Key, "concordance")
+	case m.focus == onConcordance && len(m.kin) > 0:
+		b.SetHelp(b.Help().Key, "related")
+	default:
+		b.SetHelp(b.Help().Key, "alignment")
+	}
+	return b
+}
+
+// middle is what stands between the head and the message.
+func (m Model) middle() []string {
+	switch m.screen {
+	case onHelp, onParagraph:
+		lines := strings.Split(m.page.View(), "\n")
+		if n := m.page.Rest(); n > 0 {
+			lines = append(lines, m.sheet.Quiet.Render(fmt.Sprintf(" %s %s below", m.sheet.Signs.Down, count(n, "line"))))
+		}
+		return lines
+	case onFinder:
+		return strings.Split(m.finder.View(), "\n")
+	}
+	if m.entry == nil {
+		return m.finished()
+	}
+	return m.bench()
+}
+
+// bench draws the entry.
+func (m Model) bench() []string {
+	f := m.frame()
+	split := func(s string, n int) []string { return text.Fit(strings.Split(s, "\n"), f.left, n) }
+	lines := split(m.passage.View(), f.passage)
+	lines = append(lines, make([]string, f.gap)...)
+	lines = append(lines, split(m.alignment.View(), f.alignment)...)
+	left, strip := m.factsLine(m.entry)
+	facts := text.Ends(" "+m.sheet.Quiet.Render(text.Cut(left, f.left-text.Width(strip)-5, m.sheet.Signs.Ellipsis)), m.sheet.Quiet.Render(strip)+" ", f.left, "")
+	line := split(strings.Join(m.typedView(f), "\n"), f.line)
+	rest := split(m.concordance.View(), f.concordance)
+	kin := split(m.related.View(), f.related)
+	if f.right == 0 {
+		lines = append(lines, facts)
+		lines = append(lines, line...)
+		lines = append(lines, rest...)
+		return append(lines, kin...)
+	}
+	lines = append(lines, facts)
+	lines = append(lines, make([]string, f.gap)...)
+	lines = append(lines, line...)
+	lines = append(lines, kin...)
+	return m.beside(lines, strings.Split(m.concordance.View(), "\n"), f)
+}
+
+// beside sets the concordance to the right of the other parts.
+func (m Model) beside(left, right []string, f frame) []string {
+	out := make([]string, f.concordance)
+	left = text.Fit(left, f.left, f.concordance)
+	right = text.Fit(right, f.right, f.concordance)
+	for i := range out {
+		out[i] = text.Pad(left[i], f.left) + m.sheet.Quiet.Render(m.sheet.Signs.Gap) + " " + right[i]
+	}
+	return out
+}
+
+// typedView draws what is being typed, or the strip of actions, under a rule.
+func (m Model) typedView(f frame) []string {
+	rule := m.sheet.Quiet.Render(" " + strings.Repeat(m.sheet.Signs.Rule, f.left-2))
+	switch m.screen {
+	case onCorrection:
+		return append([]string{rule}, m.correction.View(f.left)...)
+	case onAddition:
+		return append([]string{rule}, m.addition.View(f.left)...)
+	case onQuery:
+		return append([]string{rule}, m.query.View(f.left)...)
+	case onActions:
+		return append([]string{rule}, m.actionStrip(f.left)...)
+	}
+	return nil
+}
