@@ -1,0 +1,2 @@
+// Package manuscript reads manuscripts and writes emended copies of them.
+package manuscript
