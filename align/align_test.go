@@ -35,7 +35,7 @@ func TestTiesAreBrokenByTheStatedRule(t *testing.T) {
 		{"neeed", "need", "nee[e>]d"},
 		{"recieve", "receive", "rec[ie>ei]ve"},
 		{"nite", "night", "ni[>g][>h]t[e>]"}, // keeps t, at no more cost
-		{"aba", "bab", "[a>b][ba>ab]"}, // each way keeps two letters
+		{"aba", "bab", "[a>b][ba>ab]"},       // each way keeps two letters
 		{"abx", "ba", "[ab>ba][x>]"},
 		{"ab", "", "[a>][b>]"},
 		{"", "ab", "[>a][>b]"},
