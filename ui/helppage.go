@@ -1,11 +1,9 @@
 package ui
 
 import (
-	"slices"
 	"strings"
 
 	"github.com/charmbracelet/bubbles/help"
-	"github.com/charmbracelet/bubbles/key"
 
 	"emendary/ui/finder"
 	"emendary/ui/line"
@@ -96,13 +94,4 @@ func (m Model) helpLines() []string {
 func (m Model) keyName(name string) string {
 	s := m.sheet.Signs
 	return strings.NewReplacer("↑", s.Up, "↓", s.Down, "←", s.Left, "→", s.Right).Replace(name)
-}
-
-// named returns bindings with their keys' names fit for the screen.
-func (m Model) named(keys []key.Binding) []key.Binding {
-	out := slices.Clone(keys)
-	for i, b := range out {
-		out[i].SetHelp(m.keyName(b.Help().Key), b.Help().Desc)
-	}
-	return out
 }

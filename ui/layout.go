@@ -50,7 +50,7 @@ func (m *Model) frame() frame {
 	}
 	rest := m.body(f.footer) - f.passage - f.alignment - f.facts
 	if m.width >= wide {
-		f.left = min(m.width/2, 92)
+		f.left = min(m.width*11/20, 92)
 		f.right = m.width - f.left - 2
 		f.concordance = m.body(f.footer)
 		f.gap = 1
@@ -88,7 +88,6 @@ func (m *Model) layout() {
 	m.related.SetSize(f.left, f.related)
 	m.page.SetSize(m.width, m.height-5)
 	m.finder.SetSize(m.width, m.height-5)
-	m.help.Width = m.width - 2
 }
 
 // resize takes the terminal's new size.

@@ -17,7 +17,6 @@ import (
 	"context"
 	"slices"
 
-	"github.com/charmbracelet/bubbles/help"
 	tea "github.com/charmbracelet/bubbletea"
 
 	"emendary/internal/docket"
@@ -87,6 +86,7 @@ type Model struct {
 	lastList      string
 	lastWhom      string
 
+	begun   bool         // the first entry has been chosen
 	held    []tea.KeyMsg // keys that wait their turn
 	pumping bool         // a nextKey is on its way
 	batch   *batch       // the rulings being written
@@ -107,7 +107,6 @@ type Model struct {
 	query       line.Query
 	typed       string // the correction that a query goes with
 	action      int    // on the strip
-	help        help.Model
 }
 
 // New returns the bench for a session. It does no work yet; Init starts that.
@@ -119,7 +118,7 @@ func New(ctx context.Context, session *docket.Session, opt Options) Model {
 		works:    make(map[*docket.Entry]*work),
 		lastKind: make(map[string]string), lastList: "book", lastWhom: "author",
 		passage: passage.New(sheet), alignment: alignment.New(sheet), concordance: concordance.New(sheet),
-		related: related.New(sheet), page: page.New(sheet), help: footer(sheet),
+		related: related.New(sheet), page: page.New(sheet),
 	}
 	return m
 }
@@ -133,6 +132,7 @@ func (m Model) Init() tea.Cmd { return func() tea.Msg { return begin{} } }
 // start goes to the first open entry after the last ruling's place, and says
 // what was done before.
 func (m *Model) start() tea.Cmd {
+	m.begun = true
 	last, _ := m.docket.Last()
 	from := -1
 	if last != nil {

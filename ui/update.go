@@ -87,10 +87,10 @@ func (m *Model) pump() tea.Cmd {
 	return cmd
 }
 
-// waits reports whether k needs something that is not on screen yet: a ruling on
-// disk, candidates, what a search finds.
+// waits reports whether k needs something that is not on screen yet: the first
+// screen, a ruling on disk, candidates, what a search finds.
 func (m *Model) waits(k tea.KeyMsg) bool {
-	if m.batch != nil && m.screen != onFailure {
+	if !m.begun || m.width == 0 || m.batch != nil && m.screen != onFailure {
 		return true
 	}
 	switch m.screen {

@@ -5,22 +5,30 @@ import (
 	"path/filepath"
 	"strings"
 
-	"github.com/charmbracelet/bubbles/help"
 	"github.com/charmbracelet/bubbles/key"
 
-	"emendary/ui/style"
 	"emendary/ui/text"
 )
 
-// footer returns the part that lists keys on a line, in our styles.
-func footer(sheet style.Sheet) help.Model {
-	h := help.New()
-	h.ShortSeparator = "  "
-	h.Ellipsis = sheet.Signs.Ellipsis
-	h.Styles = help.Styles{
-		ShortKey: sheet.Key, ShortDesc: sheet.Quiet, ShortSeparator: sheet.Quiet, Ellipsis: sheet.Quiet,
+// keyLine lists keys on a line of width columns, whole ones only; a sign at the
+// end says that there are more.
+func (m Model) keyLine(keys []key.Binding, width int) string {
+	line := ""
+	for i, b := range keys {
+		item := m.sheet.Key.Render(m.keyName(b.Help().Key)) + " " + m.sheet.Quiet.Render(b.Help().Desc)
+		if i > 0 {
+			item = "  " + item
+		}
+		room := width - 2 // for the sign
+		if i == len(keys)-1 {
+			room = width
+		}
+		if text.Width(line)+text.Width(item) > room {
+			return line + " " + m.sheet.Quiet.Render(m.sheet.Signs.Ellipsis)
+		}
+		line += item
 	}
-	return h
+	return line
 }
 
 // View draws the screen: exactly as many lines as the terminal has, none wider.
@@ -80,7 +88,7 @@ func (m Model) messageLine() string {
 
 // footer lists the keys that matter now, on as many lines as the frame has.
 func (m Model) footer() []string {
-	list := func(keys ...key.Binding) string { return " " + m.help.ShortHelpView(m.named(keys)) }
+	list := func(keys ...key.Binding) string { return " " + m.keyLine(keys, m.width-2) }
 	full := m.frame().footer
 	only := func(keys []key.Binding) []string {
 		return text.Fit([]string{list(keys...)}, m.width, full)
@@ -115,8 +123,11 @@ func (m Model) footer() []string {
 		r := m.related.Keys
 		second = []key.Binding{pair(r.Down, r.Up, "row"), r.Check, pair(k.Previous, k.Next, "entry"), m.nextPart()}
 	}
+	if full == 1 {
+		return []string{list(k.Accept, k.Stand, k.Add, k.Query, k.Correct, k.Help)}
+	}
 	second = append(second, k.Help, k.Quit)
-	return []string{list(k.rulings()...), list(second...)}[:full]
+	return []string{list(k.rulings()...), list(second...)}
 }
 
 // pair names two keys that go opposite ways by their letters, under one word.

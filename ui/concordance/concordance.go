@@ -144,7 +144,7 @@ func (m Model) View() string {
 		head = " " + head
 	}
 	where := ""
-	if from > 0 || to < len(m.settings) {
+	if from < to && to-from < len(m.settings) {
 		where = m.sheet.Quiet.Render(fmt.Sprintf("%d to %d ", from+1, to))
 	}
 	lines := []string{text.Ends(head+count, where, m.width, s.Ellipsis)}

@@ -108,7 +108,7 @@ func (m Model) View() string {
 		wide = max(wide, min(text.Width(m.visible(r.Form)), m.width/3))
 	}
 	where := ""
-	if to-from < len(m.rows) {
+	if from < to && to-from < len(m.rows) {
 		where = m.sheet.Quiet.Render(fmt.Sprintf("%d to %d ", from+1, to))
 	}
 	lines := []string{text.Ends(fmt.Sprintf("%s %s %d of %d checked", head, s.Dot, checked, len(m.rows)), where, m.width, s.Ellipsis)}
