@@ -27,7 +27,7 @@ func addresses(text string, skips []extent) []reasoned {
 		if n < 0 {
 			n = len(text) - at
 		}
-		if n > 2 {
+		if n > 2 && mayBeAddress(text[at:at+n]) {
 			from, to := trimChunk(text, at, at+n)
 			if reason := addressReason(text[from:to]); reason != "" && !overlaps(skips, from, to) {
 				found = append(found, reasoned{extent{from, to}, reason})
@@ -41,7 +41,29 @@ func addresses(text string, skips []extent) []reasoned {
 }
 
 func endsChunk(r rune) bool {
-	return r <= ' ' || r >= 0x80 && unicode.IsSpace(r) || strings.ContainsRune("\"“”‘’«»<>—–…", r)
+	switch {
+	case r < utf8.RuneSelf:
+		return r <= ' ' || r == '"' || r == '<' || r == '>'
+	case unicode.IsSpace(r):
+		return true
+	}
+	return strings.ContainsRune("“”‘’«»—–…", r)
+}
+
+// mayBeAddress is a quick no to most words: an address holds one of its signs,
+// or a point that is not its last character.
+func mayBeAddress(chunk string) bool {
+	for i := range len(chunk) {
+		switch chunk[i] {
+		case '@', '#', '/', '\\', '_':
+			return true
+		case '.':
+			if i+1 < len(chunk) {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 // trimChunk takes brackets and quotes off both ends, points and the like off

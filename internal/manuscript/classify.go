@@ -8,6 +8,12 @@ import (
 
 // classify adds the traits and the fault that a word shows by itself.
 func classify(w *Word) {
+	if isPlain(w.Text) {
+		if strings.IndexByte("ivxl", w.Text[0]) >= 0 && isRomanWord(w.Text) {
+			w.Traits |= Roman
+		}
+		return
+	}
 	base, possessive := Base(w.Text)
 	upper, lower, digits := 0, 0, 0
 	for _, r := range base {
@@ -43,6 +49,17 @@ func classify(w *Word) {
 	}
 }
 
+// isPlain tells an ASCII letter followed by small ones, as most words are: such
+// a word can show no trait but Roman.
+func isPlain(s string) bool {
+	for i := range len(s) {
+		if c := s[i]; (c < 'a' || c > 'z') && (i > 0 || c < 'A' || c > 'Z') {
+			return false
+		}
+	}
+	return true
+}
+
 // classifyMixed judges a word of digits and letters.
 func classifyMixed(w *Word) {
 	sign, body := cutSign(w.Text)
@@ -58,7 +75,7 @@ func classifyMixed(w *Word) {
 		return
 	}
 	if number != "" {
-		if meant := meantDigits(number); meant != "" && (len(number) > 2 || suffix != "s") {
+		if meant := meantDigits(number, suffix != "s"); meant != "" && (len(number) > 2 || suffix != "s") {
 			if suffix != "s" {
 				suffix = ordinalSuffix(meant)
 			}
@@ -67,7 +84,7 @@ func classifyMixed(w *Word) {
 			return
 		}
 	}
-	if meant := meantDigits(body); meant != "" {
+	if meant := meantDigits(body, false); meant != "" {
 		w.Traits |= Number
 		w.Fault, w.Instead = LetterForDigit, sign+meant
 		return
@@ -125,13 +142,13 @@ func ordinalSuffix(number string) string {
 
 // meantDigits returns the number that was meant by digits with l, I, O or o
 // among them, "" where it is likelier something else. There must be a digit;
-// and where the letters are
+// and, but for the number of an ordinal, where the letters are
 //
 //   - one small l at the end, the rest must look like a year (191l, not 20l:
 //     litres);
 //   - one capital at the start, three digits must follow (I914, not I95);
 //   - one small o at the start, two digits must follow.
-func meantDigits(s string) string {
+func meantDigits(s string, ordinal bool) string {
 	digits, letters := 0, 0
 	for i := range len(s) {
 		switch c := s[i]; {
@@ -146,7 +163,7 @@ func meantDigits(s string) string {
 	if digits == 0 || letters == 0 {
 		return ""
 	}
-	if letters == 1 {
+	if letters == 1 && !ordinal {
 		switch last := len(s) - 1; {
 		case s[last] == 'l' && !(len(s) == 4 && (s[0] == '1' || s[0] == '2')):
 			return ""

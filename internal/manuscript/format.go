@@ -84,7 +84,7 @@ type prose struct {
 	text    strings.Builder
 	whole   string // the text, where it is one stretch of the source
 	pieces  []piece
-	italics []extent
+	italics []extent // in order, none overlapping another
 	skips   []extent // stretches without words, such as code
 }
 

@@ -1,7 +1,6 @@
 package manuscript
 
 import (
-	"fmt"
 	"path/filepath"
 	"slices"
 	"strings"
@@ -54,19 +53,15 @@ func (markdownFormat) recognise(path, text string) int {
 	return sure
 }
 
-// maxNesting is how deep blocks may open on one line. The parser recurses once
-// a level; no manuscript comes near.
-const maxNesting = 100
-
 func (markdownFormat) read(source string) (reading, error) {
-	if line := nestedLine(source); line > 0 {
-		return reading{}, fmt.Errorf("line %d: blocks nested more than %d deep; take out some of the markers at its start", line, maxNesting)
+	if err := checkMarkup(source); err != nil {
+		return reading{}, err
 	}
 	front, title := frontMatter(source)
 	r := markdownReader{source: source, bytes: parsable(source, front)}
 	r.title = title
 	if front > 0 {
-		r.passed = append(r.passed, passage{PassedFrontMatter, 0, front})
+		r.passed = append(r.passed, passage{PassedFrontMatter, 0, len(strings.TrimRight(source[:front], "\r\n"))})
 	}
 	r.walk(newMarkdownParser().Parse(text.NewReader(r.bytes)), Narration)
 	// Footnotes are gathered by the parser where the first one stands.
@@ -118,28 +113,6 @@ func parsable(source string, front int) []byte {
 		}
 	}
 	return out
-}
-
-// nestedLine returns the number of the first line that opens more than
-// maxNesting blocks, or 0.
-func nestedLine(source string) int {
-	for i, at := range lineStarts(source) {
-		depth := 0
-		for rest := source[at:]; depth <= maxNesting; depth++ {
-			rest = strings.TrimLeft(rest, " \t")
-			marker := strings.TrimLeft(rest, "0123456789")
-			if rest != marker && (strings.HasPrefix(marker, ". ") || strings.HasPrefix(marker, ") ")) ||
-				strings.HasPrefix(rest, "- ") || strings.HasPrefix(rest, "* ") || strings.HasPrefix(rest, "+ ") || strings.HasPrefix(rest, ">") {
-				rest = marker[1:]
-				continue
-			}
-			break
-		}
-		if depth > maxNesting {
-			return i + 1
-		}
-	}
-	return 0
 }
 
 // foundBlock is a block with what the choice of parts needs to know.

@@ -37,8 +37,9 @@ func (p linkParser) CloseBlock(parent ast.Node, block text.Reader, pc parser.Con
 // inlineReader collects the text of one block.
 type inlineReader struct {
 	*markdownReader
-	b     *block
-	lines *text.Segments
+	b      *block
+	lines  *text.Segments
+	italic bool // inside emphasis already
 }
 
 // walk adds the text of the inline nodes below n.
@@ -53,11 +54,7 @@ func (r *inlineReader) walk(n ast.Node) {
 			}
 			c = last
 		case *ast.Emphasis:
-			start := r.b.len()
-			r.walk(node)
-			if node.Level == 1 {
-				r.b.italics = append(r.b.italics, extent{start, r.b.len()})
-			}
+			r.emphasis(node)
 		case *ast.CodeSpan:
 			r.code(node)
 		case *ast.AutoLink:
@@ -73,6 +70,20 @@ func (r *inlineReader) walk(n ast.Node) {
 			}
 		}
 	}
+}
+
+// emphasis adds emphasised text; strong emphasis is no italics, nor is there
+// any within italics.
+func (r *inlineReader) emphasis(n *ast.Emphasis) {
+	if r.italic || n.Level != 1 {
+		r.walk(n)
+		return
+	}
+	start := r.b.len()
+	r.italic = true
+	r.walk(n)
+	r.italic = false
+	r.b.italics = append(r.b.italics, extent{start, r.b.len()})
 }
 
 // lastOfRun returns the last of the text nodes that follow one another without

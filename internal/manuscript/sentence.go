@@ -12,6 +12,8 @@ import (
 //   - after . ! ? or … and space, brackets and closing quotes between them
 //     allowed; after ! ? … or a closing quote only where the word does not begin
 //     with a small letter (“Where?” he said);
+//   - after a.m. and the like where a word follows that does not begin with a
+//     small letter;
 //   - not after the point of a title or other abbreviation that goes before a
 //     name or number (Mr. St. No.), nor after an initial's;
 //   - at the first word of speech: after a quote that opens at the start of the
@@ -76,6 +78,9 @@ func (s *sentence) word(i, last int, w *Word) bool {
 	r, _ := utf8.DecodeRuneInString(strings.TrimLeft(w.Text, "'’‘-"))
 	starts := s.starts && !(s.strict && unicode.IsLower(r))
 	s.starts, s.strict, s.point, s.pause = false, false, false, false
+	if w.Traits&Initial != 0 && strings.HasSuffix(w.Text, ".") && unicode.IsLower(r) && !isAbbreviation(strings.ReplaceAll(w.Text, ".", ""), "") {
+		s.starts, s.strict = true, true
+	}
 	if last+1 < len(s.tokens) && s.tokens[last+1].kind == end && isAbbreviation(w.Text, s.text[s.tokens[last].end:]) {
 		// Its point ends no sentence: pretend that a word goes on.
 		s.tokens[last+1].kind = other

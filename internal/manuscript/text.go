@@ -10,7 +10,7 @@ import (
 // textFormat reads plain text.
 //
 // Paragraphs are parted by blank lines, and by an indented line that follows a
-// line without indent. Where more than half of the text stands in lines longer
+// line without indent and not ending in a hyphen. Where more than half of the text stands in lines longer
 // than unwrappedLine bytes, lines are not wrapped, and each is a paragraph.
 // Space at either end of a line is no part of the paragraph's text. A paragraph
 // of two lines or more that are all indented is a quotation. Paragraphs that
@@ -70,13 +70,19 @@ func (textFormat) read(text string) (reading, error) {
 			flush(true)
 			blank++
 			continue
-		case len(open) > 0 && (unwrapped || l.indented && !open[len(open)-1].indented):
+		case len(open) > 0 && (unwrapped || l.indented && !open[len(open)-1].indented && !endsInHyphen(text, open[len(open)-1])):
 			flush(false)
 		}
 		open = append(open, l)
 	}
 	flush(true)
 	return found, nil
+}
+
+// endsInHyphen reports whether a line may end in the middle of a word.
+func endsInHyphen(text string, l textLine) bool {
+	r, _ := utf8.DecodeLastRuneInString(text[l.start:l.end])
+	return isHyphen(r) || r == '\u00AD'
 }
 
 // isUnwrapped reports whether most of the text stands in long lines.

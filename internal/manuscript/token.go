@@ -34,13 +34,51 @@ type token struct {
 
 // segments calls yield with each segment of text between two word boundaries of
 // UAX #29, untailored. It takes O(n) time.
+//
+// Runs of ASCII are cut here, the rest by the library; a run ends only where no
+// rule could join what follows, so the library may start afresh after it.
 func segments(text string, yield func(segment string)) {
 	state := -1
 	for len(text) > 0 {
+		if n := plainRun(text); n > 0 {
+			yield(text[:n])
+			text, state = text[n:], -1
+			continue
+		}
 		var segment string
 		segment, text, state = uniseg.FirstWordInString(text, state)
 		yield(segment)
 	}
+}
+
+// plainRun returns the length of the segment that text begins with where it is
+// a run of ASCII letters, digits and underscores (rules WB5, WB8 to WB10, WB13a
+// and WB13b) or one space, and its end is certain; else 0.
+func plainRun(text string) int {
+	n := 0
+	for n < len(text) && isAlphanumeric(text[n]) {
+		n++
+	}
+	switch {
+	case n == 0:
+		if text[0] == ' ' && len(text) > 1 && text[1] < utf8.RuneSelf && text[1] != ' ' {
+			return 1
+		}
+		return 0
+	case n == len(text):
+		return n
+	case text[n] >= utf8.RuneSelf:
+		return 0
+	case strings.IndexByte("'.:,;", text[n]) < 0:
+		return n
+	case n+1 == len(text) || text[n+1] < utf8.RuneSelf && !isAlphanumeric(text[n+1]):
+		return n // WB6, WB7, WB11 and WB12 need a letter or digit on both sides
+	}
+	return 0
+}
+
+func isAlphanumeric(c byte) bool {
+	return 'a' <= c && c <= 'z' || 'A' <= c && c <= 'Z' || '0' <= c && c <= '9' || c == '_'
 }
 
 // tokenise appends the tokens of text to s.tokens.
@@ -113,7 +151,7 @@ func kindOf(segment string) kind {
 //   - at ‘ between letters, unless it stands for an apostrophe: after o, d or l,
 //     or before an ending such as s, t or ll.
 func (s *splitter) cut(segment string, start int) {
-	if strings.IndexAny(segment, ":;_.‘\uFE55\uFF1A") < 0 {
+	if isWhole(segment) {
 		s.add(start, start+len(segment), wordToken)
 		return
 	}
@@ -142,6 +180,19 @@ func (s *splitter) cut(segment string, start int) {
 	if from < len(segment) {
 		s.add(start+from, start+len(segment), kindOf(segment[from:]))
 	}
+}
+
+// isWhole reports whether nothing is to be cut in a segment.
+func isWhole(segment string) bool {
+	for i := range len(segment) {
+		switch c := segment[i]; {
+		case c >= utf8.RuneSelf:
+			return !strings.ContainsAny(segment, ":;_.‘\uFE55\uFF1A")
+		case c == ':' || c == ';' || c == '_' || c == '.':
+			return false
+		}
+	}
+	return true
 }
 
 func isDigitAt(s string, i int) bool {

@@ -78,7 +78,10 @@ func (s *splitter) split(text string, base Setting, italics, skips []extent) ([]
 		}
 		first, last := s.extend(text, i)
 		w := s.word(text, first, last)
-		w.Setting = setting(base, t.speech, inExtent(italics, int(t.start)))
+		for len(italics) > 0 && italics[0].end <= int(t.start) {
+			italics = italics[1:]
+		}
+		w.Setting = setting(base, t.speech, len(italics) > 0 && italics[0].start <= int(t.start))
 		if base == Heading {
 			w.Traits |= HeadingWord
 		}
@@ -119,22 +122,12 @@ func setting(base Setting, speech, italics bool) Setting {
 	return Narration
 }
 
-// inExtent reports whether one of the extents, which are in order and may nest,
-// holds byte at. Paragraphs hold few.
-func inExtent(extents []extent, at int) bool {
-	for _, e := range extents {
-		if e.start <= at && at < e.end {
-			return true
-		}
-	}
-	return false
-}
-
 // extend returns the first and last token of the word around token i.
 //
 // Joined to a word are
 //   - an apostrophe before or after it, by the rule at assignRoles, and the s of
 //     1920’s;
+//   - after a number, a fraction (1½);
 //   - before a number, a currency sign, and a sign where no word stands before;
 //   - a hyphen and the word after it; not two hyphens, and no dash;
 //   - a hyphen (or soft hyphen) at the end of a line and the word that opens the
@@ -174,11 +167,16 @@ func (s *splitter) free(i int) bool {
 // join returns the last token of a word that so far ends at token i, or i.
 func (s *splitter) join(text string, i int) int {
 	switch s.kindAt(i + 1) {
+	case wordToken:
+		r, _ := utf8.DecodeRuneInString(text[s.tokens[i+1].start:])
+		if isDigitAt(text, int(s.tokens[i].end)-1) && unicode.Is(unicode.No, r) {
+			return i + 1
+		}
 	case single:
 		if s.tokens[i+1].role != apostrophe || s.tokens[i].kind == single {
 			return i
 		}
-		if s.kindAt(i+2) == wordToken && s.kindAt(i) == wordToken {
+		if s.kindAt(i+2) == wordToken && (s.kindAt(i) == wordToken || s.wordAt(text, i+2) == "s") {
 			return i + 2
 		}
 		return i + 1
@@ -303,14 +301,14 @@ func isInitial(word string) bool {
 func (s *splitter) word(text string, first, last int) Word {
 	w := Word{Start: int(s.tokens[first].start), End: int(s.tokens[last].end)}
 	raw := text[w.Start:w.End]
-	w.Text = raw
-	if i := strings.IndexAny(raw, "\n\u00AD\u2060\uFEFF"); i >= 0 {
-		if strings.Contains(raw, "\n") {
-			w.Traits |= Broken
-		}
-		w.Text = strings.NewReplacer("\n", "", "\u00AD", "", "\u2060", "", "\uFEFF", "").Replace(raw)
+	if strings.Contains(raw, "\n") {
+		w.Traits |= Broken
 	}
-	w.Text = composed(w.Text)
+	w.Text = reads(raw)
+	if first == last && isPlain(w.Text) {
+		classify(&w)
+		return w
+	}
 	for i := first; i <= last; i++ {
 		switch s.tokens[i].kind {
 		case hyphen:
@@ -330,6 +328,22 @@ func (s *splitter) word(text string, first, last int) Word {
 	}
 	classify(&w)
 	return w
+}
+
+// reads returns a word as it reads: in NFC, without line breaks and without
+// characters that only say where it may break. Most words are so already.
+func reads(raw string) string {
+	plain := true
+	for i := range len(raw) {
+		plain = plain && raw[i] < utf8.RuneSelf && raw[i] != '\n'
+	}
+	if plain {
+		return raw
+	}
+	if strings.ContainsAny(raw, "\n\u00AD\u2060\uFEFF") {
+		raw = strings.NewReplacer("\n", "", "\u00AD", "", "\u2060", "", "\uFEFF", "").Replace(raw)
+	}
+	return composed(raw)
 }
 
 func (s *splitter) startsWithDigit(text string, i int) bool {
