@@ -57,7 +57,10 @@ func (m Model) finished() []string {
 		{"report queries", "what to ask, and whom"},
 	} {
 		command := m.opt.program() + " " + c[0] + " " + quoted(name)
-		lines = append(lines, "   "+m.sheet.Key.Render(command), "      "+m.sheet.Quiet.Render(c[1]))
+		for _, l := range text.Wrap(command, m.width-4, [2]int{}) {
+			lines = append(lines, "   "+m.sheet.Key.Render(command[l.Start:l.End]))
+		}
+		lines = append(lines, "      "+m.sheet.Quiet.Render(c[1]))
 	}
 	return lines
 }

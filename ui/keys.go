@@ -16,7 +16,7 @@ type KeyMap struct {
 // Keys returns the keys with their help.
 func Keys() KeyMap {
 	return KeyMap{
-		Accept:   key.NewBinding(key.WithKeys("f", "enter"), key.WithHelp("f", "accept")),
+		Accept:   key.NewBinding(key.WithKeys("f", "enter"), key.WithHelp("f enter", "accept")),
 		Stand:    key.NewBinding(key.WithKeys("d"), key.WithHelp("d", "let stand")),
 		Add:      key.NewBinding(key.WithKeys("s"), key.WithHelp("s", "add")),
 		Query:    key.NewBinding(key.WithKeys("a"), key.WithHelp("a", "query")),
@@ -31,7 +31,7 @@ func Keys() KeyMap {
 		Focus:    key.NewBinding(key.WithKeys("tab"), key.WithHelp("tab", "next part of the screen")),
 		Actions:  key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "actions")),
 		Help:     key.NewBinding(key.WithKeys("?"), key.WithHelp("?", "help")),
-		Quit:     key.NewBinding(key.WithKeys("q", "ctrl+c"), key.WithHelp("q", "leave")),
+		Quit:     key.NewBinding(key.WithKeys("q", "ctrl+c"), key.WithHelp("q ctrl+c", "leave")),
 		Break:    key.NewBinding(key.WithKeys("ctrl+c"), key.WithHelp("ctrl+c", "leave from anywhere")),
 	}
 }
@@ -86,9 +86,9 @@ type FailureKeyMap struct {
 // FailureKeys returns the keys with their help.
 func FailureKeys() FailureKeyMap {
 	return FailureKeyMap{
-		Retry: key.NewBinding(key.WithKeys("r", "enter"), key.WithHelp("r", "write it again")),
+		Retry: key.NewBinding(key.WithKeys("r", "enter"), key.WithHelp("r enter", "write it again")),
 		Drop:  key.NewBinding(key.WithKeys("esc"), key.WithHelp("esc", "leave the entry open")),
-		Quit:  key.NewBinding(key.WithKeys("q", "ctrl+c"), key.WithHelp("q", "leave the bench")),
+		Quit:  key.NewBinding(key.WithKeys("q", "ctrl+c"), key.WithHelp("q ctrl+c", "leave the bench")),
 	}
 }
 

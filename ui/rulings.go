@@ -94,12 +94,15 @@ func (m *Model) forget() {
 // checked. fill sets what the act needs; becomes is the related form's result.
 func (m *Model) rule(act ledger.Act, fill func(r *ledger.Ruling, becomes string)) tea.Cmd {
 	w := m.work(m.entry)
+	checked := w.checked
 	if m.concordance.Checked() == 0 {
-		m.open(onBench)
-		m.warn("no citation is checked: tab goes to the concordance, space checks")
-		return nil
+		if checked = m.openOnes(act); checked == nil {
+			m.open(onBench)
+			m.warn("no citation is checked: check some in the concordance (tab, space), or let them stand (d)")
+			return nil
+		}
 	}
-	lead := m.docket.Ruling(m.entry, act, w.checked, w.seen)
+	lead := m.docket.Ruling(m.entry, act, checked, w.seen)
 	fill(&lead, m.typed)
 	rulings := []ledger.Ruling{lead}
 	if act == ledger.Accept || act == ledger.Reject || act == ledger.Add {
@@ -112,6 +115,20 @@ func (m *Model) rule(act ledger.Act, fill func(r *ledger.Ruling, becomes string)
 		}
 	}
 	return m.send(&batch{rulings: rulings, said: m.told(rulings)})
+}
+
+// openOnes returns the citations that a ruling takes where none is checked: all
+// open ones if it leaves the text as it is, as quotations stay as they are unless
+// the editor says otherwise. nil where there are none.
+func (m *Model) openOnes(act ledger.Act) []bool {
+	if act == ledger.Accept || !m.entry.Open() {
+		return nil
+	}
+	open := make([]bool, len(m.entry.Occurrences))
+	for i, o := range m.entry.Occurrences {
+		open[i] = o.Ruling == nil || o.Ruling.Act == ledger.Later
+	}
+	return open
 }
 
 // ruleRelated rules on a related form if it is checked and has something to rule on.

@@ -90,7 +90,7 @@ func Run(ctx context.Context, session *docket.Session, opt Options) error {
 	}()
 
 	final, err := program.Run()
-	if m, ok := final.(Model); ok {
+	if m, ok := final.(Model); ok && !errors.Is(err, tea.ErrProgramPanic) {
 		err = errors.Join(err, m.finish())
 	}
 	if errors.Is(err, tea.ErrInterrupted) {

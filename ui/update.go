@@ -55,8 +55,12 @@ func (m *Model) breaks(k tea.KeyMsg) bool {
 }
 
 // split takes runes that arrived together apart into the keys they are. A paste
-// stays whole.
+// stays whole. Enter, typed before the program had set the terminal up, comes as a
+// line feed.
 func split(k tea.KeyMsg) []tea.KeyMsg {
+	if k.Type == tea.KeyCtrlJ {
+		k.Type = tea.KeyEnter
+	}
 	if k.Type != tea.KeyRunes || k.Paste || k.Alt && len(k.Runes) == 1 {
 		return []tea.KeyMsg{k}
 	}

@@ -10,12 +10,12 @@ import (
 	"emendary/ui/text"
 )
 
-// keyLine lists keys on a line of width columns, whole ones only; a sign at the
-// end says that there are more.
+// keyLine lists keys by their first names on a line of width columns, whole ones
+// only; a sign at the end says that there are more.
 func (m Model) keyLine(keys []key.Binding, width int) string {
 	line := ""
 	for i, b := range keys {
-		item := m.sheet.Key.Render(m.keyName(b.Help().Key)) + " " + m.sheet.Quiet.Render(b.Help().Desc)
+		item := m.sheet.Key.Render(m.keyName(strings.Fields(b.Help().Key)[0])) + " " + m.sheet.Quiet.Render(b.Help().Desc)
 		if i > 0 {
 			item = "  " + item
 		}
@@ -118,10 +118,10 @@ func (m Model) footer() []string {
 		second = []key.Binding{pair(m.alignment.Keys.Down, m.alignment.Keys.Up, "row"), pair(k.Previous, k.Next, "entry"), k.NextOpen, k.Find, m.nextPart()}
 	case onConcordance:
 		c := m.concordance.Keys
-		second = []key.Binding{pair(c.Down, c.Up, "row"), c.Check, c.Setting, c.Open, m.nextPart()}
+		second = []key.Binding{pair(c.Down, c.Up, "row"), brief(c.Check, "check"), brief(c.Setting, "setting"), brief(c.Open, "paragraph"), m.nextPart()}
 	case onRelated:
 		r := m.related.Keys
-		second = []key.Binding{pair(r.Down, r.Up, "row"), r.Check, pair(k.Previous, k.Next, "entry"), m.nextPart()}
+		second = []key.Binding{pair(r.Down, r.Up, "row"), brief(r.Check, "check"), pair(k.Previous, k.Next, "entry"), m.nextPart()}
 	}
 	if full == 1 {
 		return []string{list(k.Accept, k.Stand, k.Add, k.Query, k.Correct, k.Help)}
@@ -133,21 +133,24 @@ func (m Model) footer() []string {
 // pair names two keys that go opposite ways by their letters, under one word.
 func pair(a, b key.Binding, desc string) key.Binding {
 	first := func(k key.Binding) string { return strings.Fields(k.Help().Key)[0] }
-	return key.NewBinding(key.WithKeys(append(a.Keys(), b.Keys()...)...), key.WithHelp(first(a)+" "+first(b), desc))
+	return key.NewBinding(key.WithKeys(append(a.Keys(), b.Keys()...)...), key.WithHelp(first(a)+first(b), desc))
+}
+
+// brief is a key under a shorter word than its help has.
+func brief(k key.Binding, desc string) key.Binding {
+	k.SetHelp(k.Help().Key, desc)
+	return k
 }
 
 // nextPart is the key for the next focus under the name of where it leads.
 func (m Model) nextPart() key.Binding {
-	b := m.Keys.Focus
 	switch {
 	case m.focus == onAlignment:
-		b.SetHelp(b.Help().Key, "concordance")
+		return brief(m.Keys.Focus, "concordance")
 	case m.focus == onConcordance && len(m.kin) > 0:
-		b.SetHelp(b.Help().Key, "related")
-	default:
-		b.SetHelp(b.Help().Key, "alignment")
+		return brief(m.Keys.Focus, "related")
 	}
-	return b
+	return brief(m.Keys.Focus, "alignment")
 }
 
 // middle is what stands between the head and the message.

@@ -156,10 +156,17 @@ func (t *teller) nth(i int) string {
 			}
 		}
 	}
-	if total == 1 || before >= len(numbers) {
-		return name(t.form[i : i+1])
+	bare, special := strings.CutPrefix(name(t.form[i:i+1]), "a ")
+	if !special {
+		bare, special = strings.CutPrefix(bare, "an ")
 	}
-	return "the " + numbers[before] + " " + strings.TrimPrefix(strings.TrimPrefix(name(t.form[i:i+1]), "an "), "a ")
+	switch {
+	case total > 1 && before < len(numbers):
+		return "the " + numbers[before] + " " + bare
+	case special:
+		return "the " + bare
+	}
+	return bare
 }
 
 // name returns letters as a sentence names them.

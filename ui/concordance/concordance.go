@@ -30,9 +30,9 @@ func Keys() KeyMap {
 	return KeyMap{
 		Down:    key.NewBinding(key.WithKeys("j", "down"), key.WithHelp("j ↓", "next citation")),
 		Up:      key.NewBinding(key.WithKeys("k", "up"), key.WithHelp("k ↑", "previous citation")),
-		Check:   key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "check")),
-		Setting: key.NewBinding(key.WithKeys("v"), key.WithHelp("v", "whole setting")),
-		Open:    key.NewBinding(key.WithKeys("o"), key.WithHelp("o", "in full")),
+		Check:   key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "check or uncheck the citation")),
+		Setting: key.NewBinding(key.WithKeys("v"), key.WithHelp("v", "check or uncheck its whole setting")),
+		Open:    key.NewBinding(key.WithKeys("o"), key.WithHelp("o", "show its paragraph in full")),
 	}
 }
 

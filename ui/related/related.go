@@ -32,7 +32,7 @@ func Keys() KeyMap {
 	return KeyMap{
 		Down:  key.NewBinding(key.WithKeys("j", "down"), key.WithHelp("j ↓", "next related form")),
 		Up:    key.NewBinding(key.WithKeys("k", "up"), key.WithHelp("k ↑", "previous related form")),
-		Check: key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "check")),
+		Check: key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "check or uncheck the form")),
 	}
 }
 
@@ -136,5 +136,5 @@ func (m Model) row(i, wide int) string {
 			line += m.sheet.Quiet.Render(" (in no list)")
 		}
 	}
-	return line + m.sheet.Quiet.Render(fmt.Sprintf("  %s %d", s.Times, r.Count))
+	return line + m.sheet.Quiet.Render(fmt.Sprintf("  %s%d", s.Times, r.Count))
 }
