@@ -141,8 +141,8 @@ func (s Status) String() string {
 }
 
 // Finding is the answer to a lookup: the words that cover the form, the highest
-// layer first, and within a layer those first that decide: an entry exactly as
-// the form is written, then words of the variety in use, then the rest.
+// layer first, and the word that decides first of all: where the status is Barred
+// its Instead is what the list names.
 type Finding struct {
 	Status Status
 	Words  []Word
@@ -151,13 +151,14 @@ type Finding struct {
 // Find looks form up under the rules for case, apostrophes and full stops of the
 // package comment.
 //
-// The highest layer with an entry that covers the form decides. There, an entry
-// that is exactly as the form is written decides over others; else the form is
-// barred if all of them are. So a higher layer that lists a word un-bars it.
+// The highest layer with an entry that covers the form decides, so that a higher
+// layer that lists a word un-bars it. In that layer an entry with the form's own
+// capitals decides whether the form is barred; else it is if no entry lists it.
+// It is known where an entry that covers it is of the variety in use.
 //
 // It takes O(letters × alphabet) time, about a microsecond.
 func (x *Lexicon) Find(form string) Finding {
-	if x == nil || form == "" {
+	if x == nil || x.alphabet == nil {
 		return Finding{}
 	}
 	var f Finding
@@ -187,17 +188,18 @@ func (x *Lexicon) Find(form string) Finding {
 
 // rank orders the words of a layer that cover a form by which of them decides.
 func (x *Lexicon) rank(w Word, form string) int {
-	rank := 0
-	switch x.status(w) {
-	case Barred:
-		rank = 1
-	case OtherVariety:
-		rank = 2
+	exact := w.Text == form || x.sameCapitals(w.Text, form)
+	switch status := x.status(w); {
+	case status == Known && exact:
+		return 0
+	case status == Barred && exact:
+		return 1
+	case status == Known:
+		return 2
+	case status == Barred:
+		return 3
 	}
-	if w.Text != form && !x.sameCapitals(w.Text, form) {
-		rank += 3
-	}
-	return rank
+	return 4
 }
 
 // sameCapitals reports whether a and b are the same but for apostrophes, hyphens

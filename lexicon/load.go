@@ -79,6 +79,7 @@ func parseLine(line string) (w Word, ok bool, err error) {
 	}
 	first, rest, _ := strings.Cut(line, "\t")
 	second, note, _ := strings.Cut(rest, "\t")
+	note = strings.TrimSpace(note)
 	first, commented := cutComment(first)
 	if commented {
 		second, note = "", ""
@@ -91,7 +92,7 @@ func parseLine(line string) (w Word, ok bool, err error) {
 		}
 		return w, false, nil
 	}
-	w = Word{Text: first, Kind: second, Note: strings.TrimSpace(note)}
+	w = Word{Text: first, Kind: second, Note: note}
 	for _, arrow := range []string{"→", "->"} {
 		if word, instead, found := strings.Cut(first, arrow); found {
 			w.Text, w.Instead, w.Barred = strings.TrimSpace(word), strings.TrimSpace(instead), true

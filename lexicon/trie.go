@@ -53,39 +53,6 @@ func (t *trie) number(labels []uint32) (uint32, bool) {
 	return 0, false
 }
 
-// visitor is asked about every arc of a walk.
-type visitor interface {
-	// enter takes the arc with label from depth (0 at the root) to depth+1 and
-	// reports whether the walk shall go on below it.
-	enter(depth int, label uint32) bool
-	// word is called after enter where a word ends on that arc.
-	word(depth int, number uint32)
-}
-
-// walk visits the arcs of the node whose first arc is given, and those below
-// them as far as v goes on, in the order of the words. It allocates nothing.
-func (t *trie) walk(v visitor, arc uint32, depth int, number uint32) {
-	if arc == 0 {
-		return
-	}
-	for ; ; arc++ {
-		head := t.arcs[2*arc]
-		goOn := v.enter(depth, head>>labelBit)
-		if head&endsWord != 0 || goOn {
-			n := number + t.skips[arc]
-			if head&endsWord != 0 {
-				v.word(depth+1, n)
-			}
-			if goOn {
-				t.walk(v, t.arcs[2*arc+1], depth+1, n+head&endsWord)
-			}
-		}
-		if head&lastArc != 0 {
-			return
-		}
-	}
-}
-
 // draft is an arc of a node that is still open to more words.
 type draft struct {
 	label uint32

@@ -15,11 +15,16 @@ type Near struct {
 	Distance int            // restricted Damerau, on folded letters
 }
 
+// maxForm is the most letters a form may have to be searched for: it bounds the
+// space a search takes, also where k is far beyond use.
+const maxForm = 10 * MaxLetters
+
 // Within returns all known words within restricted distance k of form
 // ([align.Restricted] on folded letters), by distance, then by text: every
 // written form of its own, from every layer, with its highest layer where several
 // have the same text. Words that [Lexicon.Find] would not find known are left
-// out: those of other varieties only, and barred ones. The answer is exact.
+// out: those of other varieties only, and barred ones. The answer is exact for
+// forms of up to 1,000 letters; no word is near a longer one.
 //
 // The search walks the tries and leaves every branch on which no word can come
 // within k; it takes time in the order of the branches entered, about 0.1 ms for
@@ -29,6 +34,9 @@ func (x *Lexicon) Within(form string, k int) []Near {
 		return nil
 	}
 	folded := x.alphabet.Fold(x.alphabet.Letters(form))
+	if len(folded) > maxForm {
+		return nil
+	}
 	k = min(k, max(len(folded), MaxLetters)) // no distance is greater
 	s := x.searches.Get().(*search)
 	defer x.searches.Put(s)
