@@ -148,17 +148,17 @@ func (d *Document) replace(paragraph int, at extent, with string) (splice, error
 	if span := p.pieceAt(at.end-1) - p.pieceAt(at.start); span > 0 && p.markedWithin(at) {
 		return splice{}, fmt.Errorf("%s: markup runs through the letter %q; change it by hand", d.place(paragraph, at.start), old)
 	}
+	first := at.start == 0 || p.Text[at.start-1] == '\n'
 	switch {
 	case with == "":
 	case strings.HasPrefix(with, old):
-		from, with = to, with[len(old):]
+		from, with, first = to, with[len(old):], false
 	case strings.HasSuffix(with, old):
 		to, with = from, with[:len(with)-len(old)]
 	}
 	source := d.source.text
 	line := source[d.lines[d.lineOf(from)]:from]
-	first := at.start == 0 || p.Text[at.start-1] == '\n'
-	encoded, err := d.source.encode(d.format.write(with, line, source[to:min(len(source), to+1)], first && from < to))
+	encoded, err := d.source.encode(d.format.write(with, line, source[to:min(len(source), to+1)], first))
 	if err != nil {
 		return splice{}, fmt.Errorf("%s: %s has no letter %q; choose another spelling or convert the file to UTF-8", d.place(paragraph, at.start), d.Encoding, with)
 	}
@@ -198,8 +198,10 @@ func (d *Document) verify(data []byte, intended map[int]string) error {
 		if !ok {
 			want = d.Paragraphs[i].Text
 		}
-		if i < len(found.blocks) && found.blocks[i].string() == want {
-			continue
+		if i < len(found.blocks) {
+			if got := found.blocks[i].string(); got == want || settled(got) == settled(want) {
+				continue
+			}
 		}
 		return fmt.Errorf("%s: the emended paragraph would not read as intended, since a letter would become markup; change it by hand", d.place(i, 0))
 	}
@@ -207,4 +209,15 @@ func (d *Document) verify(data []byte, intended map[int]string) error {
 		return fmt.Errorf("%s: the emended copy would have a paragraph more, since a letter would become markup; change it by hand", d.Path)
 	}
 	return nil
+}
+
+// settled returns text in NFC and without space at the ends of its lines: an
+// encoding may have a letter decomposed only, and the space beside a word that
+// was deleted at a line's end is no text any more.
+func settled(text string) string {
+	lines := strings.Split(composed(text), "\n")
+	for i, l := range lines {
+		lines[i] = strings.TrimSpace(l)
+	}
+	return strings.Join(lines, "\n")
 }

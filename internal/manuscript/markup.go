@@ -66,7 +66,7 @@ func (markdownFormat) write(letter, before, after string, first bool) string {
 		case '#', '+', '-', '=', ':':
 			escape = first && i == 0
 		case '(':
-			escape = strings.HasSuffix(sofar, "]")
+			escape = i == 0 && strings.HasSuffix(before, "]")
 		case '!':
 			escape = strings.HasPrefix(after, "[")
 		case '.', ')':

@@ -51,8 +51,11 @@ func isTextHeading(line string, blank int) bool {
 }
 
 // numbered reports whether a heading goes on with a number after its division:
-// Chapter 3; Part Two: The Mole.
+// Chapter 3; Part Two: The Mole; Part the Third.
 func numbered(rest string) bool {
+	if cut, ok := strings.CutPrefix(strings.ToLower(rest), "the "); ok {
+		rest = rest[len(rest)-len(cut):]
+	}
 	number, title, _ := strings.Cut(rest, " ")
 	bare := strings.TrimRight(number, ".:,—–")
 	if !isHeadingNumber(strings.ToUpper(bare)) && !isNumberName(bare) {
@@ -95,10 +98,9 @@ func isHeadingNumber(s string) bool {
 }
 
 // isNumberName tells the names of the numbers up to a hundred, as far as their
-// first word tells: One, Twenty-first, the third.
+// first member tells: One, Twenty-first.
 func isNumberName(s string) bool {
-	s = strings.ToLower(strings.TrimPrefix(strings.ToLower(s), "the "))
-	head, _, _ := strings.Cut(s, "-")
+	head, _, _ := strings.Cut(strings.ToLower(s), "-")
 	switch head {
 	case "one", "two", "three", "four", "five", "six", "seven", "eight", "nine", "ten",
 		"eleven", "twelve", "thirteen", "fourteen", "fifteen", "sixteen", "seventeen", "eighteen", "nineteen",
