@@ -13,11 +13,15 @@ import (
 	"sync"
 
 	"modernc.org/sqlite"
+	sqlite3 "modernc.org/sqlite/lib"
 )
 
 // busyMillis is how long a statement waits for another program's lock, in
 // milliseconds. A commit or a reading takes a small part of it.
 const busyMillis = "10000"
+
+// marks asks an SQLite file what it is.
+const marks = "SELECT application_id, user_version FROM pragma_application_id, pragma_user_version"
 
 // Ledger is the durable record of all rulings on one manuscript. Open and
 // OpenToRead return one; the zero value is an empty ledger that writes nothing.
@@ -221,18 +225,21 @@ func fill(file string) error {
 // recognise reports whether file is a ledger that this version can use, without
 // locking it, recovering it or writing to it.
 func recognise(path, file string) error {
-	db, err := openFile(file, url.Values{"mode": {"ro"}, "immutable": {"1"}})
-	if err != nil {
-		return explain(path, err)
-	}
-	defer db.Close()
 	var app, have int64
-	err = db.QueryRow("SELECT application_id, user_version FROM pragma_application_id, pragma_user_version").Scan(&app, &have)
+	db, err := openFile(file, url.Values{"mode": {"ro"}, "immutable": {"1"}})
+	if err == nil {
+		err = db.QueryRow(marks).Scan(&app, &have)
+		_ = db.Close()
+	}
 	if err != nil {
 		if info, e := os.Stat(file + "-journal"); e == nil && info.Size() > 0 {
 			return nil // written half; it is whole again once the journal is rolled back
 		}
-		return notLedger(path)
+		var s *sqlite.Error
+		if errors.As(err, &s) && s.Code() == sqlite3.SQLITE_NOTADB {
+			return notLedger(path)
+		}
+		return explain(path, err)
 	}
 	return accept(path, app, have)
 }
@@ -259,7 +266,7 @@ func notLedger(path string) error {
 func verify(path string, db *sql.DB) error {
 	var app, have int64
 	var check string
-	err := db.QueryRow("SELECT application_id, user_version FROM pragma_application_id, pragma_user_version").Scan(&app, &have)
+	err := db.QueryRow(marks).Scan(&app, &have)
 	if err == nil {
 		if err := accept(path, app, have); err != nil {
 			return err
