@@ -65,7 +65,7 @@ func (m Model) helpLines() []string {
 	for _, b := range line.FieldKeys().FullHelp()[0] {
 		row(b.Help().Key, b.Help().Desc)
 	}
-	convention := m.opt.Convention
+	convention := m.opt.Marks
 	if convention == "" {
 		convention = style.British
 	}
@@ -86,6 +86,9 @@ func (m Model) helpLines() []string {
 	row("bits", "cost of the candidate: its edits and how rare the word is; less is better")
 	row("share", "probability among the candidates of the form")
 	row(s.Strip[0]+s.Strip[len(s.Strip)/2]+s.Strip[len(s.Strip)-1], "how often the form stands in each part")
+	if m.opt.Version != "" {
+		lines = append(lines, "", " "+m.sheet.Quiet.Render(m.opt.program()+" "+m.visible(m.opt.Version)))
+	}
 	return lines
 }
 

@@ -94,8 +94,11 @@ func (m *Model) layout() {
 func (m *Model) resize(width, height int) {
 	m.width, m.height = width, height
 	m.layout()
-	if m.screen == onHelp {
+	switch m.screen {
+	case onHelp:
 		m.page.Show(m.helpLines(), 0)
+	case onParagraph:
+		m.showParagraph()
 	}
 }
 

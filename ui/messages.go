@@ -120,6 +120,12 @@ func (m *Model) state(e *docket.Entry) string {
 func (m *Model) welcome(last *ledger.Ruling) string {
 	var s []string
 	t := m.docket.Tally()
+	if len(m.session.Attested) > 0 {
+		s = append(s, "English: "+m.session.Variety.String())
+		if !m.session.Chosen {
+			s[0] += ", as the manuscript has it"
+		}
+	}
 	if last != nil {
 		s = append(s, "resumed: "+count(t.Ruled, "entry")+" ruled, the latest: "+m.summary(*last))
 	}
@@ -130,7 +136,7 @@ func (m *Model) welcome(last *ledger.Ruling) string {
 	return strings.Join(s, "; ")
 }
 
-// facts is the line about the entry: what is the matter, where it stands, what
+// factsLine is the line about the entry: what is the matter, where it stands, what
 // is near it, what was ruled.
 func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 	dot := " " + m.sheet.Signs.Dot + " "
@@ -145,15 +151,15 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 	if f == nil {
 		return strings.Join(say, dot), ""
 	}
-	parts := 0
-	for _, n := range f.parts {
-		if n > 0 {
-			parts++
+	if chapters := f.parts[min(m.firstChapter(), len(f.parts)):]; len(chapters) > 1 {
+		in := 0
+		for _, n := range chapters {
+			if n > 0 {
+				in++
+			}
 		}
-	}
-	if len(f.parts) > 1 {
-		say = append(say, fmt.Sprintf("in %d of %s", parts, count(len(f.parts), "part")))
-		strip = m.strip(f.parts)
+		say = append(say, fmt.Sprintf("in %d of %s", in, count(len(chapters), "chapter")))
+		strip = m.strip(chapters)
 	}
 	if len(f.near) > 0 {
 		var near []string
@@ -163,6 +169,16 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 		say = append(say, "near: "+strings.Join(near, ", "))
 	}
 	return strings.Join(say, dot), strip
+}
+
+// firstChapter returns the index of the first part that counts as a chapter: what
+// stands before the first heading, or under the title alone, does not.
+func (m *Model) firstChapter() int {
+	d := m.docket.Document
+	if len(d.Parts) > 1 && (d.Parts[0].Title == "" || d.Parts[0].Title == d.Title) {
+		return 1
+	}
+	return 0
 }
 
 // stripWidth is the most columns a dispersion strip takes; more parts share them.

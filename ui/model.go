@@ -77,6 +77,7 @@ type Model struct {
 	width, height int
 	screen        screen
 	behind        screen // where a page returns to
+	asking        screen // where the line for a query returns to
 	focus         focus
 	entry         *docket.Entry           // the one on screen; nil on onFinished
 	works         map[*docket.Entry]*work // what is known and checked, entry by entry

@@ -24,8 +24,9 @@ type Options struct {
 	Output     io.Writer
 	ASCII      bool                // signs in ASCII, whatever the locale
 	NoColor    bool                // no colours, whatever the terminal
-	Background ground.Background   // Unknown means what COLORFGBG says
-	Convention style.Convention    // of the proof-correction marks; "" means British
+	Background string              // dark or light; "" means what COLORFGBG says
+	Marks      style.Convention    // of the proof-correction marks; "" means British
+	Version    string              // shown on the help page
 	Program    string              // how the next commands are named; "" means emendary
 	Getenv     func(string) string // nil means os.Getenv
 
@@ -43,8 +44,8 @@ func (o Options) ability() style.Ability {
 	if o.NoColor {
 		a.Profile = termenv.Ascii
 	}
-	if o.Background != ground.Unknown {
-		a.Background = o.Background
+	if o.Background != "" {
+		a.Background = ground.Background(o.Background)
 	}
 	return a
 }

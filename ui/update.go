@@ -161,9 +161,9 @@ func (m *Model) pressBench(k tea.KeyMsg) tea.Cmd {
 	case key.Matches(k, m.Keys.Redo):
 		return m.redo()
 	case key.Matches(k, m.Keys.Next):
-		return m.move(m.step(1))
+		return m.moveBy(1, "this is the last entry")
 	case key.Matches(k, m.Keys.Previous):
-		return m.move(m.step(-1))
+		return m.moveBy(-1, "this is the first entry")
 	case key.Matches(k, m.Keys.NextOpen):
 		return m.move(m.openAfter(m.index()))
 	case m.screen == onFinished:
@@ -325,8 +325,7 @@ func (m *Model) pressAddition(k tea.KeyMsg) tea.Cmd {
 func (m *Model) pressQuery(k tea.KeyMsg) tea.Cmd {
 	switch {
 	case key.Matches(k, m.query.Keys.Leave):
-		m.open(onBench)
-		m.layRows(m.alignment.Cursor())
+		m.open(m.asking)
 	case key.Matches(k, m.query.Keys.Ask):
 		if m.query.Value() == "" {
 			m.warn("type the question, or esc to go back")
@@ -351,6 +350,15 @@ func (m *Model) pressFailure(k tea.KeyMsg) tea.Cmd {
 		m.say("nothing was ruled; the entry is as it was")
 	}
 	return nil
+}
+
+// moveBy goes n entries on, or says that there is none further.
+func (m *Model) moveBy(n int, end string) tea.Cmd {
+	e := m.step(n)
+	if e == m.entry && e != nil {
+		m.say(end)
+	}
+	return m.move(e)
 }
 
 // move puts e on screen and asks for what is not known about it yet.
@@ -428,6 +436,7 @@ func (m *Model) kindKey(list string) string {
 // the typed correction, -1 the addition as it is set.
 func (m *Model) openQuery(with int) {
 	m.say("")
+	m.asking = m.screen
 	options := []string{"alone"}
 	at := 0
 	row, ok := m.alignment.Selected()
@@ -452,8 +461,13 @@ func (m *Model) openQuery(with int) {
 
 func (m *Model) openParagraph() {
 	m.behind = m.screen
+	m.open(onParagraph)
+	m.showParagraph()
+}
+
+// showParagraph puts the whole paragraph on the page, the form in sight.
+func (m *Model) showParagraph() {
 	p := m.passage
 	p.SetSize(m.width, m.height)
-	m.open(onParagraph)
 	m.page.Show(p.Render(0, p.Lines()), p.FormLine())
 }

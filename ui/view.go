@@ -58,18 +58,21 @@ func (m Model) head() string {
 		title = m.visible(filepath.Base(d.Document.Path))
 	}
 	where := ""
-	if m.entry != nil && len(m.entry.Occurrences) > 0 && len(d.Document.Parts) > 1 {
+	if first := m.firstChapter(); m.entry != nil && len(m.entry.Occurrences) > 0 && len(d.Document.Parts) > first+1 {
 		part := d.Citation(m.entry, m.concordance.Cursor()).Part
-		where = fmt.Sprintf("%spart %d of %d", dot, part+1, len(d.Document.Parts))
+		if part >= first {
+			where = fmt.Sprintf("%schapter %d of %d", dot, part-first+1, len(d.Document.Parts)-first)
+		}
 		if name := m.visible(d.Document.Parts[part].Title); name != "" && m.width >= 100 {
 			where += dot + name
 		}
 	}
 	t := d.Tally()
-	tally := fmt.Sprintf("%d open%s%d ruled%s%d queries", t.Open, dot, t.Ruled, dot, t.Queries)
+	open := fmt.Sprintf("%d open", t.Open)
 	if t.PutOff > 0 {
-		tally = fmt.Sprintf("%d open (%d later)%s%d ruled%s%d queries", t.Open, t.PutOff, dot, t.Ruled, dot, t.Queries)
+		open += fmt.Sprintf(" (%d later)", t.PutOff)
 	}
+	tally := fmt.Sprintf("%s%s%d ruled%s%s", open, dot, t.Ruled, dot, count(t.Queries, "query"))
 	room := m.width - 4 - text.Width(tally) - text.Width(where)
 	return text.Ends(" "+m.sheet.Title.Render(text.Cut(title, max(room, 8), s.Ellipsis))+where, tally+" ", m.width, s.Ellipsis)
 }

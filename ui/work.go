@@ -169,7 +169,7 @@ func (m *Model) setting(o docket.Occurrence) manuscript.Setting {
 
 func (m *Model) citation(e *docket.Entry, i int) concordance.Row {
 	c := m.docket.Citation(e, i)
-	row := concordance.Row{Part: c.Part + 1, Paragraph: c.Paragraph, Before: c.Before, Form: c.Form, After: c.After}
+	row := concordance.Row{Part: c.Part - m.firstChapter() + 1, Paragraph: c.Paragraph, Before: c.Before, Form: c.Form, After: c.After}
 	if r := e.Occurrences[i].Ruling; r != nil {
 		row.Ruled = m.ruled(*r)
 	}
