@@ -124,7 +124,7 @@ func compareToScan(t *testing.T, s scan, forms []string, most int) {
 
 func TestWithinEqualsAScanOfTheWholeBase(t *testing.T) {
 	base := english.Base()
-	forms := append(misspellings(texts(base), 200, 3), "harber", "recieve", "ca", "a", "", "thsi", "ZZZZZZ", "naïve", "Ångstrm")
+	forms := append(misspellings(texts(base), 100, 3), "harber", "recieve", "ca", "a", "", "thsi", "ZZZZZZ", "naïve", "Ångstrm")
 	x := lexicon.New(base, lexicon.BritishIse)
 	compareToScan(t, newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: base}), forms, 3)
 }
@@ -192,7 +192,7 @@ func TestWithinEqualsAScanOfLongWords(t *testing.T) {
 	var words []lexicon.Word
 	var forms []string
 	for _, n := range []int{61, 62, 63, 64, 65, 66, 98, 99, 100} {
-		for range 6 {
+		for range 3 {
 			word := make([]rune, n)
 			for i := range word {
 				word[i] = rune("abé"[0]) + rune(random.IntN(2))
@@ -210,7 +210,7 @@ func TestWithinEqualsAScanOfLongWords(t *testing.T) {
 	x := lexicon.New(list, lexicon.AnyVariety)
 	s := newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: list})
 	compareToScan(t, s, forms, 5)
-	compareToScan(t, s, []string{forms[0] + forms[20], forms[5] + forms[50], strings.Repeat("ab", 64)}, 70)
+	compareToScan(t, s, []string{forms[0] + forms[20], strings.Repeat("ab", 64)}, 45)
 	assert.Empty(t, x.Within(strings.Repeat("a", 1_000_000), 1_000_000))
 }
 

@@ -4,31 +4,102 @@ import (
 	"crypto/sha256"
 	"encoding/hex"
 	"os"
+	"strings"
 	"testing"
-	"time"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
 
 	"emendary/lexicon"
 	"emendary/lexicon/english"
 )
 
-func TestTry(t *testing.T) {
-	t0 := time.Now()
-	b := english.Base()
-	t.Log(time.Since(t0), b.Len())
-	x := lexicon.New(b, lexicon.American)
-	t.Log(time.Since(t0), b.Len())
-	for _, f := range []string{"harbor", "Harbor", "harbour", "HARBOR", "HarBor", "thames", "Thames", "MCKAY", "Mckay", "don’t", "o’clock", "O’clock", "’Tis", "U.S.", "e.g", "e.g.", "Mr", "Mr.", "US", "us", "okay", "café"} {
-		t.Logf("%s %v", f, x.Find(f))
-	}
-	t0 = time.Now()
-	n := x.Within("harber", 2)
-	t.Log(time.Since(t0))
-	for _, w := range n[:20] {
-		t.Log(w.Distance, w.Word.Text, w.Word.Sources)
-	}
-	data, _ := os.ReadFile("english.lexicon")
+func TestEmbeddedBytesAreTheRecordedOnes(t *testing.T) {
+	data, err := os.ReadFile("english.lexicon")
+	require.NoError(t, err)
 	sum := sha256.Sum256(data)
-	if hex.EncodeToString(sum[:]) != english.SHA256 || b.Len() != english.Words {
-		t.Error("no")
+	assert.Equal(t, english.SHA256, hex.EncodeToString(sum[:]))
+	assert.Equal(t, english.Words, english.Base().Len())
+	assert.Equal(t, "English", english.Base().Name())
+	assert.Equal(t, "2020.12.07-2", english.Version)
+}
+
+// Every word is found, as itself; no other test looks at each.
+func TestEveryWordIsFoundAsWritten(t *testing.T) {
+	x := lexicon.New(english.Base(), lexicon.AnyVariety)
+	count := 0
+	for w := range english.Base().Words() {
+		count++
+		require.NotEmpty(t, w.Sources, w.Text)
+		found := x.Find(w.Text)
+		require.NotEqual(t, lexicon.Unknown, found.Status, w.Text)
+		self := false
+		for _, f := range found.Words {
+			self = self || f.Text == w.Text
+		}
+		require.True(t, self, w.Text)
+		for _, s := range w.Sources {
+			require.True(t, s.Level >= 10 && s.Level <= 70, w.Text)
+		}
+	}
+	assert.Equal(t, english.Words, count)
+}
+
+// Levels, categories and classes as the files of Debian's scowl 2020.12.07-2 have
+// them, by a search of the files.
+func TestKnownWords(t *testing.T) {
+	x := lexicon.New(english.Base(), lexicon.AnyVariety)
+	for _, c := range []struct {
+		text, class string
+		varieties   string
+		level       int // in any variety
+	}{
+		{"water", "words", "american british-ise british-ize canadian australian", 10},
+		{"Thames", "upper", "american british-ise british-ize canadian australian", 50},
+		{"McKay", "proper-names", "american british-ise british-ize canadian australian", 50},
+		{"etc", "abbreviations", "american british-ise british-ize canadian australian", 40},
+		{"o'clock", "contractions", "american british-ise british-ize canadian australian", 35},
+		{"café", "words", "american british-ise british-ize canadian australian", 20},
+		{"colour", "words", "british-ise british-ize canadian australian", 10},
+		{"color", "words", "american", 10},
+		{"organisation", "words", "british-ise australian", 10},
+		{"organization", "words", "american british-ize canadian", 10},
+		{"aluminum", "words", "american canadian", 35},
+		{"theatre", "words", "british-ise british-ize canadian australian", 20},
+		{"arvo", "words", "american british-ise british-ize canadian australian", 35},
+		{"'tis", "contractions", "american british-ise british-ize canadian australian", 35}, // of our own additions
+	} {
+		found := x.Find(c.text)
+		require.NotEmpty(t, found.Words, c.text)
+		w := found.Words[0]
+		assert.Equal(t, c.text, w.Text)
+		level, ok := w.Level(lexicon.AnyVariety)
+		assert.True(t, ok, c.text)
+		assert.Equal(t, c.level, level, c.text)
+		assert.Equal(t, c.class, w.Sources[0].Class, c.text)
+		var flags []string
+		for _, v := range w.Varieties() {
+			flags = append(flags, v.Flag())
+		}
+		assert.Equal(t, c.varieties, strings.Join(flags, " "), c.text)
+	}
+	for _, unlisted := range []string{"thames", "harbour's", "xii", "harber", "Mr's", "sallow-quay"} {
+		assert.Equal(t, lexicon.Unknown, x.Find(unlisted).Status, unlisted)
+	}
+}
+
+func TestBaseOpensOnce(t *testing.T) {
+	assert.Same(t, english.Base(), english.Base())
+}
+
+// BenchmarkOpen tells what a program's start pays for the lexicon.
+func BenchmarkOpen(b *testing.B) {
+	data, err := os.ReadFile("english.lexicon")
+	require.NoError(b, err)
+	flat := string(data)
+	for b.Loop() {
+		l, err := lexicon.Open("English", flat)
+		require.NoError(b, err)
+		lexicon.New(l, lexicon.American)
 	}
 }

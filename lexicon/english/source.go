@@ -11,5 +11,5 @@ const (
 	Words   = 137446 // written forms
 
 	// SHA256 is the checksum of english.lexicon.
-	SHA256 = "f4985e15896eb89b49d240465dc3ced6f2c3194e21c10aa9171004d67e8571fd"
+	SHA256 = "d75594239cdf896cbd5c65d873b968f683e51c74a857692f42fac48d55908029"
 )

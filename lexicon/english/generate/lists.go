@@ -148,6 +148,9 @@ func (c collection) readAdditions(path string) error {
 		if err != nil || level > maxLevel {
 			return fmt.Errorf("%s: the level of %s is %q; give a number up to %d", path, w.Text, w.Note, maxLevel)
 		}
+		if len(c[w.Text]) > 0 {
+			return fmt.Errorf("%s: the package has %s; take it out", path, w.Text)
+		}
 		c.add(w.Text, lexicon.Source{Category: "english", Class: w.Kind, Level: uint8(level)})
 	}
 	return nil
