@@ -106,8 +106,9 @@ type Model struct {
 	correction  line.Correction
 	addition    line.Addition
 	query       line.Query
-	typed       string // the correction that a query goes with
-	action      int    // on the strip
+	companions  []ledger.Act // what the query may go with, option by option
+	typed       string       // the word that an accept is for
+	action      int          // on the strip
 }
 
 // New returns the bench for a session. It does no work yet; Init starts that.

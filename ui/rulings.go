@@ -188,12 +188,12 @@ func (m *Model) addAsking(query, to string) tea.Cmd {
 func (m *Model) ask() tea.Cmd {
 	question, to := m.query.Value(), m.query.Whom.Chosen()
 	m.lastWhom = to
-	switch goes := m.query.With.Chosen(); {
-	case goes == "with let stand":
-		return m.standAsking(question, to)
-	case m.query.With.At == 1 && m.typed != "":
+	switch m.companions[m.query.With.At] {
+	case ledger.Accept:
 		return m.acceptAsking(m.typed, question, to)
-	case m.query.With.At > 0:
+	case ledger.Reject:
+		return m.standAsking(question, to)
+	case ledger.Add:
 		return m.addAsking(question, to)
 	}
 	return m.rule(ledger.Query, func(r *ledger.Ruling, _ string) { r.Query, r.To = question, to })
