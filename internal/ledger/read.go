@@ -7,6 +7,11 @@ import (
 	"fmt"
 )
 
+// lookEvery is after how many rows a reading looks whether its context has ended.
+// The driver would look at every row, with a goroutine each time, which takes
+// longer than reading the row.
+const lookEvery = 1000
+
 const selectRulings = `SELECT id, made_with, undoes, entry_kind, form, act, word, list, kind, note, query, asks,
 	scope, who, at, manuscript FROM rulings ORDER BY seq`
 
@@ -62,13 +67,16 @@ func (l *Ledger) read(ctx context.Context, do func(*sql.Tx) error) error {
 	if err != nil {
 		return explain(l.path, err)
 	}
-	err = do(tx)
+	// The first statement waits for the lock, and stops waiting when ctx ends.
+	if _, err = tx.ExecContext(ctx, "SELECT 1 FROM settings LIMIT 1"); err == nil {
+		err = do(tx)
+	}
 	_ = tx.Rollback() // there is nothing to lose
 	return explain(l.path, ended(ctx, err))
 }
 
 func readRulings(ctx context.Context, tx *sql.Tx) ([]Ruling, error) {
-	rows, err := tx.QueryContext(ctx, selectRulings)
+	rows, err := tx.QueryContext(context.WithoutCancel(ctx), selectRulings)
 	if err != nil {
 		return nil, err
 	}
@@ -77,6 +85,9 @@ func readRulings(ctx context.Context, tx *sql.Tx) ([]Ruling, error) {
 	var id, with, undoes, manuscript sql.RawBytes
 	var at string
 	for rows.Next() {
+		if len(rulings)%lookEvery == 0 && ctx.Err() != nil {
+			return nil, ctx.Err()
+		}
 		var r Ruling
 		if err := rows.Scan(&id, &with, &undoes, &r.EntryKind, &r.Form, &r.Act, &r.Word, &r.List, &r.Kind,
 			&r.Note, &r.Query, &r.To, &r.Scope, &r.Who, &at, &manuscript); err != nil {
@@ -101,7 +112,7 @@ func readOccurrences(ctx context.Context, tx *sql.Tx, rulings []Ruling) error {
 	for i := range rulings {
 		at[rulings[i].ID] = i
 	}
-	rows, err := tx.QueryContext(ctx, selectOccurrences)
+	rows, err := tx.QueryContext(context.WithoutCancel(ctx), selectOccurrences)
 	if err != nil {
 		return err
 	}
@@ -109,7 +120,10 @@ func readOccurrences(ctx context.Context, tx *sql.Tx, rulings []Ruling) error {
 	var raw sql.RawBytes
 	var id ID
 	var of *Ruling // the ruling that id names
-	for rows.Next() {
+	for n := 0; rows.Next(); n++ {
+		if n%lookEvery == 0 && ctx.Err() != nil {
+			return ctx.Err()
+		}
 		var o Occurrence
 		if err := rows.Scan(&raw, &o.Part, &o.PartIndex, &o.Paragraph, &o.Start, &o.End, &o.Line, &o.Column,
 			&o.Text, &o.Before, &o.After, &o.Seen); err != nil {

@@ -312,22 +312,33 @@ func TestWhereNothingCanBeWritten(t *testing.T) {
 	assert.True(t, errors.Is(err, syscall.EROFS))
 }
 
-func TestALongReviewIsReadQuickly(t *testing.T) {
-	path := filepath.Join(t.TempDir(), "l")
-	l := open(t, path)
-	many := make([]Ruling, 50000)
+// long returns a ledger of n rulings with two occurrences each, as a TSV of
+// rulings made elsewhere or years of work would fill it.
+func long(tb testing.TB, n int) (*Ledger, []Ruling) {
+	tb.Helper()
+	l, err := Open(filepath.Join(tb.TempDir(), "l"), "anna")
+	require.NoError(tb, err)
+	tb.Cleanup(func() { assert.NoError(tb, l.Close()) })
+	many := make([]Ruling, n)
 	for i := range many {
 		many[i] = sample("harber")
 	}
-	require.NoError(t, l.Append(t.Context(), many...))
-	begin := time.Now()
+	require.NoError(tb, l.Append(context.Background(), many...))
+	return l, many
+}
+
+func TestALongReviewComesBackWhole(t *testing.T) {
+	l, many := long(t, 2*lookEvery+1)
 	got, err := l.Rulings(t.Context())
 	require.NoError(t, err)
-	t.Logf("%d rulings with two occurrences each read in %v", len(got), time.Since(begin))
-	require.Len(t, got, len(many))
-	assert.Equal(t, many[len(many)-1], got[len(got)-1])
-	require.NoError(t, l.Close())
-	begin = time.Now()
-	l = open(t, path)
-	t.Logf("opened in %v", time.Since(begin))
+	assert.Equal(t, many, got)
+}
+
+func BenchmarkRulings(b *testing.B) {
+	l, many := long(b, 50000)
+	for b.Loop() {
+		got, err := l.Rulings(b.Context())
+		require.NoError(b, err)
+		require.Len(b, got, len(many))
+	}
 }
