@@ -14,9 +14,9 @@ import (
 type batch struct {
 	id      int
 	rulings []ledger.Ruling
-	said    string        // the message that follows
-	then    *docket.Entry // where to go; nil: to the next open entry
-	write   func() error  // once: whoever calls it waits for the one outcome
+	said    func(*Model) string // the message that follows, once they are recorded
+	then    *docket.Entry       // where to go; nil: to the next open entry
+	write   func() error        // once: whoever calls it waits for the one outcome
 }
 
 // written says how the writing of batch id went.
@@ -67,7 +67,7 @@ func (m *Model) settle(w written) tea.Cmd {
 		m.grown()
 	}
 	m.goTo(to)
-	m.say(b.said)
+	m.say(b.said(m))
 	return m.compute()
 }
 
@@ -91,18 +91,16 @@ func (m *Model) forget() {
 }
 
 // rule sends a ruling on the entry, with the same for the related forms that are
-// checked. fill sets what the act needs; becomes is the related form's result.
+// checked. Where no citation is checked, accept has nothing to act on; what leaves
+// the text as it is takes all open ones (Docket.Ruling). fill sets what the act needs; becomes is the related form's result.
 func (m *Model) rule(act ledger.Act, fill func(r *ledger.Ruling, becomes string)) tea.Cmd {
 	w := m.work(m.entry)
-	checked := w.checked
-	if m.concordance.Checked() == 0 {
-		if checked = m.openOnes(act); checked == nil {
-			m.open(onBench)
-			m.warn("no citation is checked: check some in the concordance (tab, space), or let them stand (d)")
-			return nil
-		}
+	lead := m.docket.Ruling(m.entry, act, w.checked, w.seen)
+	if len(lead.Occurrences) == 0 {
+		m.open(onBench)
+		m.warn("no citation is checked: check some in the concordance (tab, space), or let them stand (d)")
+		return nil
 	}
-	lead := m.docket.Ruling(m.entry, act, checked, w.seen)
 	fill(&lead, m.typed)
 	rulings := []ledger.Ruling{lead}
 	if act == ledger.Accept || act == ledger.Reject || act == ledger.Add {
@@ -114,21 +112,7 @@ func (m *Model) rule(act ledger.Act, fill func(r *ledger.Ruling, becomes string)
 			}
 		}
 	}
-	return m.send(&batch{rulings: rulings, said: m.told(rulings)})
-}
-
-// openOnes returns the citations that a ruling takes where none is checked: all
-// open ones if it leaves the text as it is, as quotations stay as they are unless
-// the editor says otherwise. nil where there are none.
-func (m *Model) openOnes(act ledger.Act) []bool {
-	if act == ledger.Accept || !m.entry.Open() {
-		return nil
-	}
-	open := make([]bool, len(m.entry.Occurrences))
-	for i, o := range m.entry.Occurrences {
-		open[i] = o.Ruling == nil || o.Ruling.Act == ledger.Later
-	}
-	return open
+	return m.send(&batch{rulings: rulings, said: func(m *Model) string { return m.told(rulings) }})
 }
 
 // ruleRelated rules on a related form if it is checked and has something to rule on.
@@ -214,35 +198,28 @@ func (m *Model) undo() tea.Cmd {
 		m.warn("there is no ruling to undo")
 		return nil
 	}
-	r := m.leader(*last)
 	return m.send(&batch{
-		rulings: []ledger.Ruling{m.docket.Undo(r)}, then: m.entryOf(r), said: "undone: " + m.summary(r),
+		rulings: []ledger.Ruling{m.docket.Undo(*last)}, then: m.entryOf(*last),
+		said: func(m *Model) string { return "undone: " + m.summary(*last) },
 	})
 }
 
 // redo takes back the newest undo.
 func (m *Model) redo() tea.Cmd {
-	_, undone := m.docket.Last()
-	if undone == nil {
+	_, undo := m.docket.Last()
+	if undo == nil {
 		m.warn("there is nothing to redo")
 		return nil
 	}
 	return m.send(&batch{
-		rulings: []ledger.Ruling{m.docket.Undo(*undone)}, then: m.entryOf(*undone), said: "redone: " + m.summary(*undone),
-	})
-}
-
-// leader returns the ruling that r was made with, or r itself.
-func (m *Model) leader(r ledger.Ruling) ledger.Ruling {
-	if r.With.IsZero() {
-		return r
-	}
-	for _, e := range m.docket.Entries {
-		for _, o := range e.Rulings() {
-			if o.ID == r.With {
-				return o
+		rulings: []ledger.Ruling{m.docket.Undo(*undo)}, then: m.entryOf(*undo),
+		said: func(m *Model) string {
+			for _, r := range m.docket.Rulings() {
+				if r.ID == undo.Undoes {
+					return "redone: " + m.summary(r)
+				}
 			}
-		}
-	}
-	return r
+			return "redone"
+		},
+	})
 }

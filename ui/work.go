@@ -193,7 +193,7 @@ func (m *Model) layRows(at int) {
 	var form []string
 	var rows []alignment.Row
 	lay := func(word string) alignment.Row {
-		letters, wordLetters, a := m.docket.Align(e, word)
+		letters, wordLetters, a := m.docket.Align(e.Form, word)
 		alphabet := m.docket.Lexicon().Alphabet()
 		row := alignment.Row{Text: word, Alignment: a}
 		for _, l := range wordLetters {

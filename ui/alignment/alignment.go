@@ -22,7 +22,7 @@ type Row struct {
 	Text      string   // what would stand in the form's place
 	Letters   []string // its letters, as written
 	Alignment align.Alignment
-	Cost      float64 // bits
+	Cost      float64 // of the edits
 	Share     float64 // of all candidates, 0 to 1
 	Priced    bool    // Cost and Share are known: a word that was typed has none
 	Remark    string

@@ -51,7 +51,7 @@ var plain = style.Ability{Profile: termenv.Ascii, Plain: true}
 func TestTheGrid(t *testing.T) {
 	for _, c := range []struct{ name, form, words, want string }{
 		{"insertions open columns", "harber", "harbour harbor barber harper", `
-                 h  a  r  b  e  ‸  r    bits  share
+                 h  a  r  b  e  ‸  r    cost  share
  ▸ harbour       ·  ·  ·  ·  o  u  ·     8.1   61 %
    harbor        ·  ·  ·  ·  o     ·     8.1   61 %
    barber        b  ·  ·  ·  ·     ·     8.1   61 %
@@ -61,35 +61,35 @@ func TestTheGrid(t *testing.T) {
    substitute o for e, insert u after it
 `},
 		{"a transposition crosses", "recieve", "receive", `
-                 r  e  c  i  e  v  e    bits  share
+                 r  e  c  i  e  v  e    cost  share
  ▸ receive       ·  ·  ·  e  i  ·  ·     8.1   61 %
                  r  e  c  i  e  v  e
                           tr ∽
    transpose i and the second e
 `},
 		{"a deletion has its dele", "neeed", "need", `
-                 n  e  e  e  d    bits  share
+                 n  e  e  e  d    cost  share
  ▸ need          ·  ·  ·  ₰  ·     8.1   61 %
                  n  e  e  e  d
                           ₰
    delete the third e
 `},
 		{"capitals", "rose", "Rose", `
-                 r  o  s  e    bits  share
+                 r  o  s  e    cost  share
  ▸ Rose          R  ·  ·  ·     8.1   61 %
                  r  o  s  e
                  cap
    capital R
 `},
 		{"capitals in a row", "usa", "USA", `
-                 u  s  a    bits  share
+                 u  s  a    cost  share
  ▸ USA           U  S  A     8.1   61 %
                  u  s  a
                  cap── ──
    all in capitals
 `},
 		{"double width and combining", "漢字e\u0301", "漢e\u0301s", `
-                 漢  字  é  ‸    bits  share
+                 漢  字  é  ‸    cost  share
  ▸ 漢és          ·   ₰   ·  s     8.1   61 %
                  漢  字  é  ‸
                      ₰      s

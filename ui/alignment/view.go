@@ -3,6 +3,7 @@ package alignment
 import (
 	"fmt"
 	"math"
+	"strconv"
 	"strings"
 
 	"github.com/charmbracelet/lipgloss"
@@ -77,7 +78,7 @@ func (m Model) plan() plan {
 }
 
 // lead and tail are the columns left and right of the grid: the cursor and the
-// gap after the word; bits and share.
+// gap after the word; cost and share.
 const (
 	lead = 3 + 2
 	tail = 6 + 7
@@ -163,7 +164,7 @@ func (m Model) heads(p plan) string {
 		b.WriteString(text.Pad(m.head(i, m.sheet.Head), p.widths[i]))
 	}
 	if len(m.rows) > 0 {
-		b.WriteString(m.sheet.Quiet.Render("  bits  share"))
+		b.WriteString(m.sheet.Quiet.Render("  cost  share"))
 	}
 	return m.edges(b.String(), p)
 }
@@ -212,7 +213,7 @@ func (m Model) row(r int, p plan) string {
 	b.WriteString(cursor + text.Pad(word, p.word+lead-3))
 	b.WriteString(m.cells(r, p))
 	if row.Priced {
-		b.WriteString(text.PadLeft(bits(row.Cost), 6) + text.PadLeft(share(row.Share), 7))
+		b.WriteString(text.PadLeft(price(row.Cost), 6) + text.PadLeft(share(row.Share), 7))
 	} else {
 		b.WriteString(strings.Repeat(" ", tail))
 	}
@@ -222,11 +223,11 @@ func (m Model) row(r int, p plan) string {
 	return b.String()
 }
 
-func bits(cost float64) string {
+func price(cost float64) string {
 	if math.IsInf(cost, 0) || math.IsNaN(cost) {
 		return ""
 	}
-	return fmt.Sprintf("%.1f", cost)
+	return strconv.FormatFloat(math.Round(10*cost)/10, 'f', -1, 64)
 }
 
 func share(s float64) string {
