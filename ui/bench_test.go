@@ -324,7 +324,7 @@ func TestStaleCandidatesAreDropped(t *testing.T) {
 }
 
 func TestAnAddMakesTheOtherCandidatesAnew(t *testing.T) {
-	h := ready(t, "The skerrin lay by the skerrins. A skerrine.\n")
+	h := ready(t, "The skerrin was by the skerrins. A skerrine.\n")
 	h.press("s", "s")
 	f := h.m.work(h.m.entry).facts
 	require.NotNil(t, f)
@@ -367,7 +367,7 @@ func TestAReviewResumesAfterTheLastRuling(t *testing.T) {
 }
 
 func TestControlCharactersNeverReachTheTerminal(t *testing.T) {
-	h := ready(t, "The pilot \x1b]0;owned\x07 and the harb\u202eor \u2066came\x9b.\n\nThe harbor\x00 \u200f.\n", func(o *Options) { o.Getenv = dumb })
+	h := ready(t, "The pilot \x1b]0;owned\x07 and the harb\u202eor \u2066came\u009b.\n\nThe harbor\x01 \u200f.\n", func(o *Options) { o.Getenv = dumb })
 	for _, keys := range [][]string{nil, {"tab", "o"}, {"esc", "/"}, {"esc", "f"}} {
 		h.press(keys...)
 		for _, r := range h.m.View() {

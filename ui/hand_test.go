@@ -22,6 +22,8 @@ var words = strings.Fields(`a all and at before boats brought by came clerk dawn
 
 const storm = `# The Storm
 
+## The Mole
+
 The pilot brought her round the point before dawn, and by six the whole of the
 harbor had turned out to see what the storm had left of the mole.
 
@@ -29,7 +31,7 @@ harbor had turned out to see what the storm had left of the mole.
 
 She came down to the harbor with the clerk. The quai was old.
 
-“The harbor was left to the boats,” said the clerk. Harbors all round.
+“The harbor was left to the boats,” said the clerk. She turned to the old harbors.
 
 The stromm came in by the quai at dawn.
 `

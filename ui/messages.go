@@ -172,10 +172,10 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 }
 
 // firstChapter returns the index of the first part that counts as a chapter: what
-// stands before the first heading, or under the title alone, does not.
+// stands before the first heading does not, nor does the title by itself.
 func (m *Model) firstChapter() int {
-	d := m.docket.Document
-	if len(d.Parts) > 1 && (d.Parts[0].Title == "" || d.Parts[0].Title == d.Title) {
+	parts := m.docket.Document.Parts
+	if len(parts) > 1 && (parts[0].Title == "" || parts[1].First-parts[0].First == 1) {
 		return 1
 	}
 	return 0
