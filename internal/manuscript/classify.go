@@ -35,7 +35,7 @@ func classify(w *Word) {
 			w.Traits |= Ordinal // 1920’s
 		}
 	}
-	if strings.HasSuffix(base, ".") || strings.Contains(base, ".") && upper+lower > 0 {
+	if pointless, ok := strings.CutSuffix(base, "."); ok && isInitial(pointless) || isPointed(pointless) {
 		w.Traits |= Initial
 	}
 	if isRomanWord(base) {
@@ -190,7 +190,7 @@ func meantDigits(s string, ordinal bool) string {
 // and at the start before a consonant, else l.
 func meantLetters(s string) string {
 	at := strings.IndexAny(s, "01")
-	if at < 0 || strings.IndexAny(s[at+1:], "0123456789") >= 0 {
+	if at < 0 || strings.ContainsAny(s[at+1:], "0123456789") {
 		return ""
 	}
 	letters, tail := 0, s[at+1:]

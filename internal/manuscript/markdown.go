@@ -148,7 +148,11 @@ func (r *markdownReader) walk(n ast.Node, setting Setting) {
 		case *ast.LinkReferenceDefinition:
 			r.pass(PassedLinkTarget, c.Lines(), -1)
 		case *ast.Blockquote:
-			r.walk(c, Quotation)
+			if setting == Note {
+				r.walk(c, Note)
+			} else {
+				r.walk(c, Quotation)
+			}
 		case *extast.Footnote:
 			r.walk(c, Note)
 		default:

@@ -122,7 +122,7 @@ func TestMarkdownPartsAndTitle(t *testing.T) {
 }
 
 func TestMarkdownSettings(t *testing.T) {
-	d, err := Read("m.md", []byte("# *One*\n\n*a* **b** “*c*” *d *e* f*\n\n> *g* “h”\n>\n> # i\n\n[^1]: “j”\n"), Options{})
+	d, err := Read("m.md", []byte("# *One*\n\n*a* **b** “*c*” *d *e* f*\n\n> *g* “h”\n>\n> # i\n\n[^1]: “j”\n\n    > k\n"), Options{})
 	require.NoError(t, err)
 	got := map[string]Setting{}
 	for _, p := range d.Paragraphs {
@@ -131,7 +131,7 @@ func TestMarkdownSettings(t *testing.T) {
 		}
 	}
 	assert.Equal(t, map[string]Setting{"One": Heading, "a": Italics, "b": Narration, "c": Speech, "d": Italics, "e": Italics, "f": Italics,
-		"g": Quotation, "h": Quotation, "i": Heading, "j": Note}, got)
+		"g": Quotation, "h": Quotation, "i": Heading, "j": Note, "k": Note}, got)
 }
 
 // Text that makes naive parsers slow or deep is read in moderate time or refused

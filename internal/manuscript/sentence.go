@@ -46,12 +46,11 @@ func (s *sentence) pass(i int) {
 	case space, lineBreak:
 		s.starts = s.starts || s.point
 	case double, single:
-		if s.opensAt(i) {
-			if s.pause && !s.starts && !s.heading {
-				s.starts, s.strict = true, true
-			}
-		} else if s.point {
-			s.strict = true
+		switch {
+		case t.role != opening:
+			s.strict = s.strict || s.point
+		case s.pause && !s.starts && !s.heading:
+			s.starts, s.strict = true, true
 		}
 	case skip:
 		*s = sentence{text: s.text, tokens: s.tokens, heading: s.heading}
@@ -63,18 +62,9 @@ func (s *sentence) pass(i int) {
 	}
 }
 
-// opensAt reports whether the quote at token i opens.
-func (s *sentence) opensAt(i int) bool {
-	t := s.tokens[i]
-	if t.kind == single {
-		return t.role == opening
-	}
-	return t.role == opening
-}
-
-// word takes in a word, tokens i to last, and reports whether it starts a
+// word takes in a word that ends at token last, and reports whether it starts a
 // sentence.
-func (s *sentence) word(i, last int, w *Word) bool {
+func (s *sentence) word(last int, w *Word) bool {
 	r, _ := utf8.DecodeRuneInString(strings.TrimLeft(w.Text, "'’‘-"))
 	starts := s.starts && !(s.strict && unicode.IsLower(r))
 	s.starts, s.strict, s.point, s.pause = false, false, false, false

@@ -85,7 +85,7 @@ func (s *splitter) split(text string, base Setting, italics, skips []extent) ([]
 		if base == Heading {
 			w.Traits |= HeadingWord
 		}
-		if sentence.word(i, last, &w) {
+		if sentence.word(last, &w) {
 			w.Traits |= SentenceStart
 		}
 		s.words = append(s.words, w)
@@ -369,8 +369,9 @@ func Base(text string) (base, possessive string) {
 	if n := len(stem); n > 0 && (stem[n-1] == 's' || stem[n-1] == 'S') {
 		stem = stem[:n-1]
 	}
-	cut := strings.TrimSuffix(strings.TrimSuffix(strings.TrimSuffix(stem, "'"), "’"), "‘")
-	if cut == stem || cut == "" || strings.Trim(cut, "'’‘") == "" {
+	r, n := utf8.DecodeLastRuneInString(stem)
+	cut := stem[:len(stem)-n]
+	if !strings.ContainsRune("'’‘ʼ", r) || strings.Trim(cut, "'’‘ʼ") == "" {
 		return text, ""
 	}
 	if stem == text && strings.IndexByte("sSxXzZ", cut[len(cut)-1]) < 0 {

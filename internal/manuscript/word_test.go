@@ -65,6 +65,7 @@ func TestWords(t *testing.T) {
 		{"suspended at a line end", "two-\nand three-masted", "two- suspended|and|three-masted hyphenated"},
 		{"soft hyphens go", "har\u00ADbour har\u00AD\nbour", "harbour|harbour broken"},
 		{"initials", "J. R. Pell, of the U.S. and U.K., at 4 p.m., e.g. here", "J. initial|R. initial|Pell|of|the|U.S. caps initial|and|U.K. caps initial|at|4 number|p.m. initial|e.g. initial|here"},
+		{"points that are none of an abbreviation", "3.5mm, 4.2.1a, U.N.-chartered", "3.5mm|4.2.1a|U.N.-chartered hyphenated"},
 		{"the possessive of an abbreviation", "the U.S.’s ships and the U.N.’s", "the|U.S.’s caps initial|ships|and|the|U.N.’s caps initial"},
 		{"I is an initial only beside another", "So did I. He left. I. K. Pell", "So|did|I|He|left|I. initial|K. initial|Pell"},
 		{"a degree", "Pell, Ph.D., came", "Pell|Ph.D. initial|came"},
@@ -162,6 +163,9 @@ func TestBase(t *testing.T) {
 		{"harber", "harber", ""},
 		{"Marx’", "Marx", "’"},
 		{"harber‘s", "harber", "‘s"},
+		{"harberʼs", "harber", "ʼs"},
+		{"harber''", "harber''", ""},
+		{"é’", "é’", ""},
 	} {
 		base, possessive := Base(test.text)
 		assert.Equal(t, [2]string{test.base, test.possessive}, [2]string{base, possessive}, test.text)
