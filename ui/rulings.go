@@ -2,6 +2,7 @@ package ui
 
 import (
 	"context"
+	"slices"
 	"sync"
 
 	tea "github.com/charmbracelet/bubbletea"
@@ -121,11 +122,7 @@ func (m *Model) ruleRelated(k docket.Related, checked bool, act ledger.Act, fill
 		return ledger.Ruling{}, false
 	}
 	checks := m.docket.Checked(k.Entry)
-	any := false
-	for _, c := range checks {
-		any = any || c
-	}
-	if !any {
+	if !slices.Contains(checks, true) {
 		return ledger.Ruling{}, false
 	}
 	r := m.docket.Ruling(k.Entry, act, checks, m.work(k.Entry).seen)

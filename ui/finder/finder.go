@@ -3,7 +3,9 @@
 package finder
 
 import (
+	"cmp"
 	"fmt"
+	"slices"
 	"strings"
 
 	"github.com/charmbracelet/bubbles/key"
@@ -115,7 +117,8 @@ func (m Model) Update(msg tea.Msg) (Model, tea.Cmd) {
 	return m, nil
 }
 
-// search matches pattern against all items in O(n·m); an exact match comes first.
+// search matches pattern against all items in O(n·m) and sorts what it finds;
+// exact matches come first.
 func search(id int, pattern string, items []Item) Found {
 	f := Found{ID: id, Total: len(items)}
 	pattern = strings.TrimSpace(pattern)
@@ -127,14 +130,25 @@ func search(id int, pattern string, items []Item) Found {
 	}
 	matches := fuzzy.FindFrom(pattern, source(items))
 	f.Total = len(matches)
-	for _, exact := range []bool{true, false} {
-		for _, m := range matches {
-			if strings.EqualFold(m.Str, pattern) == exact && len(f.Matches) < most {
-				f.Matches = append(f.Matches, m.Index)
-			}
-		}
+	slices.SortStableFunc(matches, func(a, b fuzzy.Match) int {
+		return cmp.Compare(likeness(b.Str, pattern), likeness(a.Str, pattern))
+	})
+	for _, m := range matches[:min(len(matches), most)] {
+		f.Matches = append(f.Matches, m.Index)
 	}
 	return f
+}
+
+// likeness puts the form that was typed, letter for letter, before the same with
+// other capitals, and both before what is merely similar.
+func likeness(form, pattern string) int {
+	switch {
+	case form == pattern:
+		return 2
+	case strings.EqualFold(form, pattern):
+		return 1
+	}
+	return 0
 }
 
 type source []Item
