@@ -98,9 +98,8 @@ func (d *Document) emendOne(e Emendation, out *strings.Builder) ([]splice, error
 	text := d.Paragraphs[e.Paragraph].Text
 	var letters []Letter
 	var extents []extent
-	d.eachLetter(e.Paragraph, e.Start, e.End, func(l Letter, at extent) bool {
+	d.eachLetter(e.Paragraph, e.Start, e.End, func(l Letter, at extent) {
 		letters, extents = append(letters, l), append(extents, at)
-		return true
 	})
 	if len(letters) != len(e.Letters) {
 		return nil, fmt.Errorf("%s: %d letters for %d; review the manuscript again", d.place(e.Paragraph, e.Start), len(e.Letters), len(letters))

@@ -3,6 +3,7 @@ package manuscript
 import (
 	"bytes"
 	"fmt"
+	"runtime"
 	"strings"
 	"testing"
 
@@ -198,6 +199,17 @@ func BenchmarkRead(b *testing.B) {
 		require.NoError(b, err)
 		require.Greater(b, len(d.Paragraphs), 4000)
 	}
+	var before, after runtime.MemStats
+	runtime.GC()
+	runtime.ReadMemStats(&before)
+	d, err := Read("m.md", data, Options{})
+	require.NoError(b, err)
+	runtime.GC()
+	runtime.ReadMemStats(&after)
+	runtime.KeepAlive(d)
+	kept := float64(after.HeapAlloc-before.HeapAlloc) / 1e6
+	require.Less(b, kept, 40.0)
+	b.ReportMetric(kept, "MB-kept")
 }
 
 func BenchmarkEmend(b *testing.B) {

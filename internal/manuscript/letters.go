@@ -27,18 +27,19 @@ type Letter struct {
 // at a line end, which the Text of a broken word keeps. It takes O(end−start)
 // time and a binary search.
 func (d *Document) Letters(paragraph, start, end int) []Letter {
-	return slices.Collect(func(yield func(Letter) bool) {
-		d.eachLetter(paragraph, start, end, func(l Letter, _ extent) bool { return yield(l) })
-	})
+	if paragraph < 0 || paragraph >= len(d.Paragraphs) {
+		return nil
+	}
+	start, end = max(start, 0), min(end, len(d.Paragraphs[paragraph].Text))
+	letters := make([]Letter, 0, max(end-start, 0))
+	d.eachLetter(paragraph, start, end, func(l Letter, _ extent) { letters = append(letters, l) })
+	return letters
 }
 
-// eachLetter calls yield with each letter and its bytes of the paragraph's Text.
-func (d *Document) eachLetter(paragraph, start, end int, yield func(Letter, extent) bool) {
-	if paragraph < 0 || paragraph >= len(d.Paragraphs) {
-		return
-	}
+// eachLetter calls yield with each letter and its bytes of the paragraph's Text,
+// in which the range must lie.
+func (d *Document) eachLetter(paragraph, start, end int, yield func(Letter, extent)) {
 	p := &d.Paragraphs[paragraph]
-	start, end = max(start, 0), min(end, len(p.Text))
 	last := -1 // the atom that the letter before came from
 	for start < end {
 		n := letterLength(p.Text[start:end])
@@ -55,9 +56,7 @@ func (d *Document) eachLetter(paragraph, start, end int, yield func(Letter, exte
 			Span: d.source.fileSpan(from, to),
 			Mark: isFormatting(text) || isLineEnd(p.Text, start, end),
 		}
-		if !yield(letter, extent{start, start + n}) {
-			return
-		}
+		yield(letter, extent{start, start + n})
 		start += n
 	}
 }

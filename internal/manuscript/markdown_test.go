@@ -163,6 +163,6 @@ func TestMarkdownDoesNotHang(t *testing.T) {
 		} else if assert.Error(t, err, test.name) {
 			assert.Contains(t, err.Error(), test.refused, test.name)
 		}
-		assert.Less(t, time.Since(start), 10*time.Second, test.name)
+		assert.Less(t, time.Since(start), 30*time.Second, test.name)
 	}
 }

@@ -28,13 +28,15 @@ const (
 // assignRoles tells apostrophes from single quotes.
 //
 // Before a word (leading):
-//   - ’ is an apostrophe, unless it stands right after punctuation while a
-//     quotation is open;
-//   - ' and ‘ are one before the n of rock 'n' roll, and before a word that is
-//     only ever elided (’tis, ’em) or a year (’90s) – ‘ only where nothing
-//     after it may close a quotation after punctuation; and ' also before a
-//     word often elided (’round, ’cause) or one that lost its h (’ouse) where
-//     nothing after it closes;
+//   - certain words take one: the n of rock ’n’ roll, a word that is only ever
+//     elided (’tis, ’em), a year (’90s). ’ and ' before them are apostrophes; ‘
+//     is one, turned, where nothing after it closes a quotation right after
+//     punctuation;
+//   - before any other word ’ is an apostrophe, unless a quotation is open and
+//     it stands right after punctuation;
+//   - ' is one also before a word often elided (’round, ’cause) or one in small
+//     letters that lost its h (’ouse), where a quotation is open already or
+//     nothing after it closes one;
 //   - else they open a quotation.
 //
 // After a word (trailing), ’ and ' are
@@ -134,20 +136,14 @@ func (s *splitter) wordAt(text string, i int) string {
 }
 
 func (s *splitter) leadingRole(text string, i int, mark rune, open bool, ahead following) role {
+	word := s.wordAt(text, i+1)
+	certain := isElided(word) || isShortYear(word) || word == "n" && (s.kindAt(i+2) == single || s.kindAt(i+2) == hyphen)
 	if mark == '’' {
-		if before := s.kindAt(i - 1); open && (before == end || before == other) && text[s.tokens[i].start-1] != '(' {
+		if !certain && open && closesBefore(text[:s.tokens[i].start]) {
 			return closing
 		}
 		return apostrophe
 	}
-	word := s.wordAt(text, i+1)
-	if word == "n" && s.kindAt(i+2) == single {
-		return apostrophe
-	}
-	if word == "n" && s.kindAt(i+2) == hyphen {
-		return apostrophe
-	}
-	certain := isElided(word) || isShortYear(word)
 	if mark == '‘' {
 		if certain && ahead != closes {
 			return apostrophe
@@ -157,10 +153,17 @@ func (s *splitter) leadingRole(text string, i int, mark rune, open bool, ahead f
 	if certain {
 		return apostrophe
 	}
-	if ahead == nothingCloses && (isOftenElided(word) || startsWithLostH(text[s.tokens[i+1].start:])) {
+	if (open || ahead == nothingCloses) && (isOftenElided(word) || startsWithLostH(text[s.tokens[i+1].start:])) {
 		return apostrophe
 	}
 	return opening
+}
+
+// closesBefore reports whether a text ends in punctuation after which a quote
+// closes.
+func closesBefore(text string) bool {
+	r, _ := utf8.DecodeLastRuneInString(text)
+	return strings.ContainsRune(".!?…,;:)]—–", r)
 }
 
 func (s *splitter) trailingRole(text string, i int, mark rune, open bool, ahead following) role {
