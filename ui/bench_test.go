@@ -283,7 +283,8 @@ func TestAFailedWriteKeepsTheRulingForAnotherTry(t *testing.T) {
 	h.send(keyMsg("d"))
 	h.drain()
 	assert.Empty(t, h.rulings("harbor"))
-	assert.Contains(t, h.screen(), "not written: the disk is full (1 key typed since not taken)")
+	assert.Contains(t, h.screen(), "not written, but kept: accepted harbour for harbor")
+	assert.Contains(t, h.screen(), "the disk is full (1 key typed since not taken)")
 	h.press("x")
 	assert.Equal(t, onFailure, h.m.screen)
 	fail = false

@@ -5,10 +5,10 @@ const wide = 120
 
 // frame is how many lines each part of the bench gets.
 type frame struct {
-	passage, gap, alignment, facts, line, concordance, related int
-	footer                                                     int
-	left                                                       int // columns of the left half; all of them where narrow
-	right                                                      int // of the right half; 0 where narrow
+	passage, gap, alignment, air, facts, line, concordance, related int
+	footer                                                          int
+	left                                                            int // columns of the left half; all of them where narrow
+	right                                                           int // of the right half; 0 where narrow
 }
 
 // typedLines is how many lines the line being typed takes.
@@ -20,6 +20,8 @@ func (m *Model) typedLines() int {
 		return 4
 	case onActions:
 		return 3
+	case onFailure:
+		return 4
 	}
 	return 0
 }
@@ -54,6 +56,9 @@ func (m *Model) frame() frame {
 		f.right = m.width - f.left - 2
 		f.concordance = m.body(f.footer)
 		f.gap = 1
+		if rest > f.line+1+kin+2 {
+			f.air, rest = 1, rest-1
+		}
 		f.related = min(max(0, rest-f.line-f.gap), 1+kin)
 		if kin == 0 {
 			f.related = 0
@@ -62,6 +67,9 @@ func (m *Model) frame() frame {
 	}
 	if rest-f.related > 5 {
 		f.gap, rest = 1, rest-1
+	}
+	if extra > 4 {
+		f.air, rest = 1, rest-1
 	}
 	if f.line > 0 {
 		f.related = 0 // what is typed comes first
@@ -79,10 +87,11 @@ func (m *Model) layout() {
 	}
 	f := m.frame()
 	m.passage.SetSize(f.left, f.passage)
-	m.alignment.SetSize(f.left, f.alignment)
 	if f.right > 0 {
+		m.alignment.SetSize(f.left-1, f.alignment)
 		m.concordance.SetSize(f.right, f.concordance)
 	} else {
+		m.alignment.SetSize(f.left, f.alignment)
 		m.concordance.SetSize(f.left, f.concordance)
 	}
 	m.related.SetSize(f.left, f.related)

@@ -119,19 +119,18 @@ func (m *Model) state(e *docket.Entry) string {
 // welcome is the first message: what was done before, and what of it is lost.
 func (m *Model) welcome(last *ledger.Ruling) string {
 	var s []string
-	t := m.docket.Tally()
-	if len(m.session.Attested) > 0 {
-		s = append(s, "English: "+m.session.Variety.String())
-		if !m.session.Chosen {
-			s[0] += ", as the manuscript has it"
-		}
+	if n := len(m.docket.Unplaced); n > 0 {
+		s = append(s, fmt.Sprintf("%s of earlier rulings not in the manuscript as it is now (first: %s)",
+			count(n, "place"), m.visible(m.docket.Unplaced[0].Ruling.Form)))
 	}
 	if last != nil {
-		s = append(s, "resumed: "+count(t.Ruled, "entry")+" ruled, the latest: "+m.summary(*last))
-	}
-	if n := len(m.docket.Unplaced); n > 0 {
-		u := m.docket.Unplaced[0]
-		s = append(s, fmt.Sprintf("%s of earlier rulings not found in the manuscript as it is now (first: %s)", count(n, "place"), m.visible(u.Ruling.Form)))
+		s = append(s, "resumed: "+count(m.docket.Tally().Ruled, "entry")+" ruled, the latest: "+m.summary(*last))
+	} else if len(m.session.Attested) > 0 {
+		english := "English: " + m.session.Variety.String()
+		if !m.session.Chosen {
+			english += ", as the manuscript has it"
+		}
+		s = append(s, english)
 	}
 	return strings.Join(s, "; ")
 }

@@ -93,6 +93,7 @@ type Model struct {
 	batch   *batch       // the rulings being written
 	writes  int          // the number of the latest batch
 
+	failure string // why the batch could not be written
 	message string
 	alarm   bool
 

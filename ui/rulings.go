@@ -49,8 +49,9 @@ func (m *Model) settle(w written) tea.Cmd {
 		return nil
 	}
 	if w.err != nil {
-		m.warn("not written: " + m.visible(w.err.Error()) + m.dropHeld())
+		m.failure = w.err.Error() + m.dropHeld()
 		m.open(onFailure)
+		m.warn("not written, but kept: " + m.summary(b.rulings[0]))
 		return nil
 	}
 	m.batch = nil

@@ -181,6 +181,7 @@ func (m Model) bench() []string {
 	lines := split(m.passage.View(), f.passage)
 	lines = append(lines, make([]string, f.gap)...)
 	lines = append(lines, split(m.alignment.View(), f.alignment)...)
+	lines = append(lines, make([]string, f.air)...)
 	left, strip := m.factsLine(m.entry)
 	facts := text.Ends(" "+m.sheet.Quiet.Render(text.Cut(left, f.left-text.Width(strip)-5, m.sheet.Signs.Ellipsis)), m.sheet.Quiet.Render(strip)+" ", f.left, "")
 	line := split(strings.Join(m.typedView(f), "\n"), f.line)
@@ -222,6 +223,8 @@ func (m Model) typedView(f frame) []string {
 		return append([]string{rule}, m.query.View(f.left)...)
 	case onActions:
 		return append([]string{rule}, m.actionStrip(f.left)...)
+	case onFailure:
+		return append([]string{rule}, m.failureView(f.left)...)
 	}
 	return nil
 }
