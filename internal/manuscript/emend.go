@@ -36,7 +36,8 @@ type splice struct {
 //   - a range outside the text, or with another number of letters;
 //   - emendations that overlap;
 //   - a letter that the encoding lacks, and a control character or line break;
-//   - a letter that markup runs through, unless it stays;
+//   - a letter that markup runs through, or that shares a character reference
+//     with one outside the range, unless it stays;
 //   - a result that does not read back as intended, because a letter became
 //     markup that the format cannot escape.
 //
@@ -95,7 +96,8 @@ func (d *Document) Emend(emendations []Emendation) ([]byte, error) {
 
 // emendOne writes what the range is to read as to out, and returns its splices.
 func (d *Document) emendOne(e Emendation, out *strings.Builder) ([]splice, error) {
-	text := d.Paragraphs[e.Paragraph].Text
+	p := &d.Paragraphs[e.Paragraph]
+	text := p.Text
 	var letters []Letter
 	var extents []extent
 	d.eachLetter(e.Paragraph, e.Start, e.End, func(l Letter, at extent) {
@@ -108,7 +110,7 @@ func (d *Document) emendOne(e Emendation, out *strings.Builder) ([]splice, error
 	for i := 0; i < len(letters); {
 		// Letters that share a character reference are written together.
 		n := 1
-		for i+n < len(letters) && letters[i+n].Span.Start == letters[i+n].Span.End {
+		for i+n < len(letters) && p.shared(extents[i+n].start) {
 			n++
 		}
 		with, changed := "", false
@@ -144,7 +146,10 @@ func (d *Document) replace(paragraph int, at extent, with string) (splice, error
 		}
 	}
 	from, to := p.sourceSpan(at.start, at.end)
-	if span := p.pieceAt(at.end-1) - p.pieceAt(at.start); span > 0 && p.markedWithin(at) {
+	if p.shared(at.start) || p.shared(at.end) {
+		return splice{}, fmt.Errorf("%s: the letter %q shares a character reference with its neighbour; change it by hand", d.place(paragraph, at.start), old)
+	}
+	if p.markedWithin(at) {
 		return splice{}, fmt.Errorf("%s: markup runs through the letter %q; change it by hand", d.place(paragraph, at.start), old)
 	}
 	first := at.start == 0 || p.Text[at.start-1] == '\n'

@@ -133,11 +133,13 @@ func FuzzEmend(f *testing.F) {
 				continue
 			}
 			i := int(pick) % len(d.Paragraphs)
-			letters := d.Letters(i, 0, len(d.Paragraphs[i].Text))
-			e := Emendation{Paragraph: i, End: len(d.Paragraphs[i].Text)}
-			for _, l := range letters {
-				e.Letters = append(e.Letters, l.Text)
-			}
+			p := &d.Paragraphs[i]
+			e := Emendation{Paragraph: i, End: len(p.Text)}
+			var letters []Letter
+			var starts []int
+			d.eachLetter(i, 0, len(p.Text), func(l Letter, at extent) {
+				letters, starts, e.Letters = append(letters, l), append(starts, at.start), append(e.Letters, l.Text)
+			})
 			j := int(pick) / len(d.Paragraphs) % len(letters)
 			e.Letters[j] = with
 			out, err := d.Emend([]Emendation{e})
@@ -146,10 +148,10 @@ func FuzzEmend(f *testing.F) {
 			}
 			// Letters that share a reference are written together.
 			from, to := j, j
-			for from > 0 && letters[from].Span.Start == letters[from].Span.End {
+			for p.shared(starts[from]) {
 				from--
 			}
-			for to+1 < len(letters) && letters[to+1].Span.Start == letters[to+1].Span.End {
+			for to+1 < len(letters) && p.shared(starts[to+1]) {
 				to++
 			}
 			span := Span{letters[from].Span.Start, letters[to].Span.End}

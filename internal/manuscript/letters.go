@@ -15,7 +15,7 @@ import (
 // cluster of UAX #29) and where it comes from.
 type Letter struct {
 	Text string // NFC; a typographic ligature such as ﬁ stays one letter
-	Span Span   // its bytes in the file; empty where a character reference before it stands for this letter too
+	Span Span   // its bytes in the file; without those of a character reference that stands for the letter before it too
 	Mark bool   // stands in the word but is no letter of its form: soft hyphen, line-end hyphen and the break
 }
 
@@ -40,20 +40,16 @@ func (d *Document) Letters(paragraph, start, end int) []Letter {
 // in which the range must lie.
 func (d *Document) eachLetter(paragraph, start, end int, yield func(Letter, extent)) {
 	p := &d.Paragraphs[paragraph]
-	last := -1 // the atom that the letter before came from
-	for start < end {
+	for begin := start; start < end; {
 		n := letterLength(p.Text[start:end])
 		from, to := p.sourceSpan(start, start+n)
-		if i := p.pieceAt(start); p.pieces[i].atom {
-			if i == last && p.pieceAt(start+n-1) == i {
-				from = to
-			}
-			last = i
+		if start > begin && p.shared(start) {
+			from = int(p.pieces[p.pieceAt(start)].end)
 		}
 		text := p.Text[start : start+n]
 		letter := Letter{
 			Text: composed(text),
-			Span: d.source.fileSpan(from, to),
+			Span: d.source.fileSpan(from, max(from, to)),
 			Mark: isFormatting(text) || isLineEnd(p.Text, start, end),
 		}
 		yield(letter, extent{start, start + n})
@@ -112,6 +108,16 @@ func isHyphen(r rune) bool { return r == '-' || r == '\u2010' || r == '\u2011' }
 func (p *Paragraph) pieceAt(at int) int {
 	i := sort.Search(len(p.pieces), func(i int) bool { return int(p.pieces[i].text) > at })
 	return max(i-1, 0)
+}
+
+// shared reports whether byte at of the text comes from the same character
+// reference as the byte before it.
+func (p *Paragraph) shared(at int) bool {
+	if at <= 0 || at >= len(p.Text) {
+		return false
+	}
+	i := p.pieceAt(at)
+	return p.pieces[i].atom && int(p.pieces[i].text) < at
 }
 
 // sourceSpan returns the bytes of the file's text that [start,end) of the
