@@ -4,14 +4,15 @@ import (
 	"fmt"
 	"strings"
 
+	"emendary/internal/docket"
 	"emendary/internal/ledger"
+	"emendary/ui/line"
 	"emendary/ui/text"
 )
 
 // finished is the screen where nothing is open: what was done, what is still to
 // be asked, and what to run next.
 func (m Model) finished() []string {
-	t := m.docket.Tally()
 	if len(m.docket.Entries) == 0 {
 		return []string{"", " " + m.sheet.Title.Render("The docket is empty."), "",
 			" Every form of the manuscript is known, so there is nothing to rule on.",
@@ -21,11 +22,13 @@ func (m Model) finished() []string {
 	lists := make(map[string]int)
 	asked := make(map[string]int)
 	for _, e := range m.docket.Entries {
-		for _, r := range e.Rulings() {
+		for r := range rulingsOn(e) {
 			acts[r.Act]++
 			if r.Act == ledger.Add {
 				lists[r.List]++
 			}
+		}
+		for _, r := range e.Rulings() {
 			if r.Query != "" {
 				asked[r.To]++
 			}
@@ -37,16 +40,14 @@ func (m Model) finished() []string {
 			lines = append(lines, text.PadLeft(fmt.Sprint(n), 7)+"  "+what)
 		}
 	}
-	row(acts[ledger.Accept], "accepted: emended in the copy")
-	row(acts[ledger.Reject], "let stand")
+	forms := func(n int, what string) { row(n, plural(n, "form")+" "+what) }
+	forms(acts[ledger.Accept], "accepted, to be emended in the copy")
+	forms(acts[ledger.Reject], "let stand")
 	for _, list := range []string{"book", "series", "house"} {
-		row(lists[list], "added to the "+list+" list")
+		forms(lists[list], "added to the "+list+" list")
 	}
-	for _, whom := range []string{"author", "publisher", "self"} {
-		row(asked[whom], "to ask: "+whom)
-	}
-	if t.Queries > 0 && len(asked) == 0 {
-		row(t.Queries, "queries")
+	for _, whom := range line.Addressees() {
+		row(asked[whom], plural(asked[whom], "query")+" to "+whom)
 	}
 	name := m.visible(m.docket.Document.Path)
 	lines = append(lines, "", " "+m.sheet.Title.Render("Next"), "")
@@ -63,6 +64,17 @@ func (m Model) finished() []string {
 		lines = append(lines, "      "+m.sheet.Quiet.Render(c[1]))
 	}
 	return lines
+}
+
+// rulingsOn returns the rulings that stand on the occurrences of e.
+func rulingsOn(e *docket.Entry) map[*ledger.Ruling]bool {
+	on := make(map[*ledger.Ruling]bool)
+	for _, o := range e.Occurrences {
+		if o.Ruling != nil {
+			on[o.Ruling] = true
+		}
+	}
+	return on
 }
 
 // quoted returns a file's name fit for a shell's command line.

@@ -15,14 +15,17 @@ import (
 func (m *Model) visible(s string) string { return text.Visible(s, m.sheet.Signs.ASCII) }
 
 // count returns n with its noun: "1 citation", "3 citations", "2 entries".
-func count(n int, noun string) string {
+func count(n int, noun string) string { return fmt.Sprintf("%d %s", n, plural(n, noun)) }
+
+// plural returns the form of noun that goes with n.
+func plural(n int, noun string) string {
 	switch {
 	case n == 1:
-		return "1 " + noun
+		return noun
 	case strings.HasSuffix(noun, "y") && !strings.HasSuffix(noun, "ey"):
-		return fmt.Sprintf("%d %sies", n, strings.TrimSuffix(noun, "y"))
+		return strings.TrimSuffix(noun, "y") + "ies"
 	}
-	return fmt.Sprintf("%d %ss", n, noun)
+	return noun + "s"
 }
 
 // capital reports whether s starts with a capital.
@@ -158,7 +161,7 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 			}
 		}
 		say = append(say, fmt.Sprintf("in %d of %s", in, count(len(chapters), "chapter")))
-		strip = m.strip(chapters)
+		strip = m.strip(chapters, max(8, m.frame().left/4))
 	}
 	if len(f.near) > 0 {
 		var near []string
@@ -180,16 +183,14 @@ func (m *Model) firstChapter() int {
 	return 0
 }
 
-// stripWidth is the most columns a dispersion strip takes; more parts share them.
-const stripWidth = 32
-
-// strip draws how often the form stands in each part, the highest bar the most.
-func (m *Model) strip(parts []int) string {
+// strip draws how often the form stands in each part, the highest bar the most,
+// in at most width columns; where there are more parts, neighbours share one.
+func (m *Model) strip(parts []int, width int) string {
 	bars := parts
-	if len(parts) > stripWidth {
-		bars = make([]int, stripWidth)
+	if len(parts) > width {
+		bars = make([]int, width)
 		for i, n := range parts {
-			bars[i*stripWidth/len(parts)] += n
+			bars[i*width/len(parts)] += n
 		}
 	}
 	most := 1

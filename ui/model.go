@@ -129,7 +129,8 @@ func New(ctx context.Context, session *docket.Session, opt Options) Model {
 // begin is the message that starts the work once the program runs.
 type begin struct{}
 
-// Init asks for the first candidates.
+// Init starts the work: the first message chooses the entry and asks for its
+// candidates.
 func (m Model) Init() tea.Cmd { return func() tea.Msg { return begin{} } }
 
 // start goes to the first open entry after the last ruling's place, and says

@@ -2,6 +2,7 @@ package ui
 
 import (
 	"fmt"
+	"slices"
 
 	"github.com/charmbracelet/bubbles/key"
 	tea "github.com/charmbracelet/bubbletea"
@@ -79,9 +80,12 @@ func (m *Model) pressPart(k tea.KeyMsg) {
 			m.showPassage()
 		}
 	case onRelated:
+		before := slices.Clone(m.related.Rows())
 		m.related, _ = m.related.Update(k)
 		for i, r := range m.related.Rows() {
-			m.work(m.entry).kin[m.kin[i].Entry] = r.Checked
+			if r.Checked != before[i].Checked {
+				m.work(m.entry).kin[m.kin[i].Entry] = r.Checked
+			}
 		}
 	}
 }
@@ -213,7 +217,7 @@ func (m *Model) pressFailure(k tea.KeyMsg) tea.Cmd {
 		return m.send(m.batch.again())
 	case key.Matches(k, m.Failure.Drop):
 		m.batch = nil
-		m.open(m.resting())
+		m.goTo(m.entry)
 		m.say("nothing was ruled; the entry is as it was")
 	}
 	return nil

@@ -29,15 +29,15 @@ type written struct {
 // again returns b ready to be written once more.
 func (b *batch) again() *batch { return &batch{rulings: b.rulings, said: b.said, then: b.then} }
 
-// send writes a batch beside the screen. Rulings that cannot be written twice by
-// mistake: they have their IDs already.
+// send writes a batch beside the screen. Writing it again after a failure cannot
+// double a ruling, since each has its ID already.
 func (m *Model) send(b *batch) tea.Cmd {
 	m.writes++
 	b.id = m.writes
 	ctx, write, rulings := context.WithoutCancel(m.ctx), m.opt.writer(m.session), b.rulings
 	b.write = sync.OnceValue(func() error { return write(ctx, rulings...) })
 	m.batch = b
-	m.screen = m.resting()
+	m.open(m.resting())
 	id, run := b.id, b.write
 	return func() tea.Msg { return written{id, run()} }
 }
@@ -70,6 +70,9 @@ func (m *Model) settle(w written) tea.Cmd {
 	}
 	m.goTo(to)
 	m.say(b.said(m))
+	if b.then == nil && to != nil && to.PutOff() {
+		m.message += "; only entries put off are left"
+	}
 	return m.compute()
 }
 
@@ -94,13 +97,13 @@ func (m *Model) forget() {
 
 // rule sends a ruling on the entry, with the same for the related forms that are
 // checked. Where no citation is checked, accept has nothing to act on; what leaves
-// the text as it is takes all open ones (Docket.Ruling). fill sets what the act needs; becomes is the related form's result.
+// the text as it is takes all open ones (Docket.Ruling). fill sets what the act
+// needs; becomes is the word that takes the form's place, or the related form's.
 func (m *Model) rule(act ledger.Act, fill func(r *ledger.Ruling, becomes string)) tea.Cmd {
 	w := m.work(m.entry)
 	lead := m.docket.Ruling(m.entry, act, w.checked, w.seen)
 	if len(lead.Occurrences) == 0 {
-		m.open(onBench)
-		m.warn("no citation is checked: check some in the concordance (tab, space), or let them stand (d)")
+		m.warn("no citation is checked: tab and space check some, d lets them stand")
 		return nil
 	}
 	fill(&lead, m.typed)

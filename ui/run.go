@@ -91,11 +91,11 @@ func Run(ctx context.Context, session *docket.Session, opt Options) error {
 	}()
 
 	final, err := program.Run()
+	if errors.Is(err, tea.ErrInterrupted) {
+		err = nil // SIGINT leaves the bench as ctrl+c does
+	}
 	if m, ok := final.(Model); ok && !errors.Is(err, tea.ErrProgramPanic) {
 		err = errors.Join(err, m.finish())
-	}
-	if errors.Is(err, tea.ErrInterrupted) {
-		return nil // SIGINT leaves the bench as ctrl+c does
 	}
 	return err
 }

@@ -159,6 +159,7 @@ func (m *Model) show() {
 	m.concordance.Show(settings, func(i int) concordance.Row { return m.citation(e, i) }, w.checked, w.seen, max(0, first))
 	m.showPassage()
 	m.layRows(0)
+	m.related.Top()
 	m.showRelated()
 }
 

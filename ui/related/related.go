@@ -67,6 +67,9 @@ func (m *Model) Show(rows []Row) {
 	m.cursor = max(0, min(m.cursor, len(rows)-1))
 }
 
+// Top puts the cursor on the first row.
+func (m *Model) Top() { m.cursor = 0 }
+
 // Rows returns the rows with their checks as they stand.
 func (m Model) Rows() []Row { return m.rows }
 
