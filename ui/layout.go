@@ -95,7 +95,7 @@ func (m *Model) layout() {
 		m.concordance.SetSize(f.left, f.concordance)
 	}
 	m.related.SetSize(f.left, f.related)
-	m.page.SetSize(m.width, m.height-5)
+	m.page.SetSize(m.width, m.height-6) // a line says how much is below
 	m.finder.SetSize(m.width, m.height-5)
 }
 

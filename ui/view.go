@@ -100,17 +100,20 @@ func (m Model) footer() []string {
 	case onFailure:
 		return only(m.Failure.ShortHelp())
 	case onHelp, onParagraph:
-		return only(m.page.Keys.ShortHelp())
+		p := m.page.Keys
+		return only([]key.Binding{p.Close, pair(p.Down, p.Up, "line"), pair(p.PageUp, p.PageDown, "page")})
 	case onFinder:
 		return only(m.finder.Keys.ShortHelp())
 	case onCorrection:
-		return only(m.correction.Keys.ShortHelp())
+		c := m.correction.Keys
+		return only([]key.Binding{c.Accept, brief(c.Query, "with a query"), brief(c.Form, "the form"), brief(c.Candidate, "the candidate"), c.Leave})
 	case onAddition:
-		return only(m.addition.Keys.ShortHelp())
+		a := m.addition.Keys
+		return only([]key.Binding{a.Add, pair(a.Left, a.Right, "choose"), pair(a.Down, a.Up, "list, kind, note"), brief(a.Query, "with a query"), a.Leave})
 	case onQuery:
 		return only(m.query.Keys.ShortHelp())
 	case onActions:
-		return only(m.Strip.ShortHelp())
+		return only([]key.Binding{pair(m.Strip.Left, m.Strip.Right, "choose"), m.Strip.Do, m.Strip.Close})
 	case onFinished:
 		return only([]key.Binding{m.Keys.Previous, m.Keys.Find, m.Keys.Undo, m.Keys.Redo, m.Keys.Help, m.Keys.Quit})
 	}
