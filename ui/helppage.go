@@ -83,7 +83,7 @@ func (m Model) helpLines() []string {
 		row(r[0], r[1])
 	}
 	head("figures")
-	row("cost", "what the edits cost, one each under unit costs; less is nearer")
+	row("cost", "what the edits cost; under unit costs each is 1")
 	row("share", "probability among the candidates of the form")
 	row(s.Strip[0]+s.Strip[len(s.Strip)/2]+s.Strip[len(s.Strip)-1], "how often the form stands in each part")
 	if m.opt.Version != "" {

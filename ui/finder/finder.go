@@ -121,7 +121,7 @@ func (m Model) Update(msg tea.Msg) (Model, tea.Cmd) {
 // exact matches come first.
 func search(id int, pattern string, items []Item) Found {
 	f := Found{ID: id, Total: len(items)}
-	pattern = strings.TrimSpace(pattern)
+	pattern = plain(strings.TrimSpace(pattern))
 	if pattern == "" {
 		for i := range min(len(items), most) {
 			f.Matches = append(f.Matches, i)
@@ -151,9 +151,15 @@ func likeness(form, pattern string) int {
 	return 0
 }
 
+// plain returns s with straight apostrophes and the common hyphen: whichever was
+// typed finds either.
+func plain(s string) string {
+	return strings.NewReplacer("’", "'", "‘", "'", "‐", "-", "‑", "-").Replace(s)
+}
+
 type source []Item
 
-func (s source) String(i int) string { return s[i].Form }
+func (s source) String(i int) string { return plain(s[i].Form) }
 func (s source) Len() int            { return len(s) }
 
 // View returns the pattern and the forms found, in the lines it was given.

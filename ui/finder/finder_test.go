@@ -39,6 +39,15 @@ func TestAnExactMatchComesFirst(t *testing.T) {
 	assert.Equal(t, "harbour", m.Selected())
 }
 
+func TestEitherApostropheFindsTheOther(t *testing.T) {
+	for _, c := range [][2]string{{"'tis", "’tis"}, {"’tis", "'tis"}} {
+		m := finder.New(style.Make(style.Ability{}), []finder.Item{{Form: c[0]}, {Form: "is"}})
+		m, cmd := typed(t, m, c[1])
+		m, _ = m.Update(cmd())
+		assert.Equal(t, c[0], m.Selected())
+	}
+}
+
 func TestLettersMayBeLeftOut(t *testing.T) {
 	m, cmd := typed(t, newFinder(), "hrbr")
 	m, _ = m.Update(cmd())
