@@ -1,0 +1,214 @@
+package docket
+
+import (
+	"cmp"
+	"context"
+	"slices"
+	"sync/atomic"
+	"time"
+
+	"emendary/internal/ledger"
+	"emendary/internal/manuscript"
+	"emendary/internal/rank"
+	"emendary/lexicon"
+)
+
+// Docket is the entries of one manuscript, in the order of review (by first
+// place). Its state changes by Record alone, and Find may add an entry; both
+// belong to one goroutine. Candidates, Lexicon, Near, Parts and Citation may run
+// beside it in others.
+type Docket struct {
+	Document *manuscript.Document
+	Entries  []*Entry
+	Unplaced []Unplaced // rulings whose places could not be found again
+
+	census *census
+	use    map[string]int   // count of each form by key
+	base   *lexicon.Lexicon // decides what is on the docket: all layers but the book's
+	model  rank.Model
+	lex    atomic.Pointer[lexicon.Lexicon] // base and what this book's rulings added
+
+	byForm map[string]*Entry   // by exact form
+	byKey  map[string][]*Entry // by key
+	log    []ledger.Ruling     // all rulings recorded, undos included
+	who    string
+	now    func() time.Time
+}
+
+// Unplaced is a place of a ruling that the manuscript as it is now does not have.
+type Unplaced struct {
+	Ruling     ledger.Ruling
+	Occurrence ledger.Occurrence
+}
+
+// lay lays out the docket of a census under lex. ours are the keys of the forms
+// that the manuscript's own rulings put on lists.
+func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, ours map[string]bool) *Docket {
+	d := &Docket{
+		Document: doc, census: c, base: lex, model: rank.Default(), now: time.Now,
+		use: map[string]int{}, byForm: map[string]*Entry{}, byKey: map[string][]*Entry{},
+	}
+	d.lex.Store(lex)
+	for text, f := range c.forms {
+		d.use[key(text)] += len(f.places)
+	}
+	for _, e := range d.entries(ours) {
+		d.list(e)
+	}
+	return d
+}
+
+func (d *Docket) list(e *Entry) {
+	d.Entries = append(d.Entries, e)
+	d.byForm[e.Form] = e
+	k := key(e.Form)
+	d.byKey[k] = append(d.byKey[k], e)
+}
+
+// Lexicon returns the lexicon in use: it grows as words are added.
+func (d *Docket) Lexicon() *lexicon.Lexicon { return d.lex.Load() }
+
+// Size returns how many running words the manuscript has.
+func (d *Docket) Size() int { return d.census.size }
+
+// Parts returns how often the form of e stands in each part of the manuscript.
+func (d *Docket) Parts(e *Entry) []int {
+	parts := make([]int, len(d.Document.Parts))
+	for _, o := range e.Occurrences {
+		if part := d.Document.Paragraphs[o.Paragraph].Part; part < len(parts) {
+			parts[part]++
+		}
+	}
+	return parts
+}
+
+// Find returns the entry of a form, ruled on or not, whatever its capitals if
+// none has them just so; a listed word's entry is made on the spot, of kind
+// WordInContext, and stays. nil where the manuscript lacks the form.
+func (d *Docket) Find(text string) *Entry {
+	text = plainApostrophe(text)
+	if e := d.byForm[text]; e != nil {
+		return e
+	}
+	if f := d.census.forms[text]; f != nil {
+		if e := d.inContext(f); e != nil {
+			return e
+		}
+	}
+	if es := d.byKey[key(text)]; len(es) > 0 {
+		return es[0]
+	}
+	for _, other := range d.spellings(key(text)) {
+		if e := d.inContext(other); e != nil {
+			return e
+		}
+	}
+	return nil
+}
+
+// spellings returns the forms that share a key, in alphabetical order.
+func (d *Docket) spellings(k string) []*form {
+	if d.use[k] == 0 {
+		return nil
+	}
+	var out []*form
+	for text, f := range d.census.forms {
+		if key(text) == k {
+			out = append(out, f)
+		}
+	}
+	slices.SortFunc(out, func(a, b *form) int { return cmp.Compare(a.text, b.text) })
+	return out
+}
+
+// inContext makes an entry of those places of f that no entry has.
+func (d *Docket) inContext(f *form) *Entry {
+	taken := map[place]bool{}
+	for _, e := range d.byKey[key(f.text)] {
+		for _, o := range e.Occurrences {
+			taken[place{int32(o.Paragraph), int32(o.Word)}] = true
+		}
+	}
+	e := &Entry{Kind: WordInContext, Form: f.text}
+	for _, p := range f.places {
+		if !taken[p] {
+			e.Occurrences = append(e.Occurrences, d.occurrence(p))
+		}
+	}
+	if len(e.Occurrences) == 0 {
+		return nil
+	}
+	e.open = len(e.Occurrences)
+	d.list(e)
+	return e
+}
+
+// FormCount is a form of the manuscript with its count.
+type FormCount struct {
+	Form  string
+	Count int
+	Entry bool // it is on the docket, ruled or open
+}
+
+// Forms returns every form of the manuscript, entries first, then by alphabet:
+// what a form is found in by fuzzy match. O(n log n) in the distinct forms.
+func (d *Docket) Forms() []FormCount {
+	out := make([]FormCount, 0, len(d.census.forms)+len(d.Entries))
+	for _, e := range d.Entries {
+		out = append(out, FormCount{e.Form, len(e.Occurrences), true})
+	}
+	for text, f := range d.census.forms {
+		if len(d.byKey[key(text)]) == 0 {
+			out = append(out, FormCount{text, len(f.places), false})
+		}
+	}
+	slices.SortFunc(out, func(a, b FormCount) int {
+		if a.Entry != b.Entry {
+			if a.Entry {
+				return -1
+			}
+			return 1
+		}
+		return cmp.Or(cmp.Compare(key(a.Form), key(b.Form)), cmp.Compare(a.Form, b.Form))
+	})
+	return out
+}
+
+// Tally counts where the review stands: entries open (put-off ones included) and
+// ruled on, queries in force, entries put off.
+type Tally struct{ Open, Ruled, Queries, PutOff int }
+
+// Tally counts the entries. A listed word counts only once it is ruled on. O(entries).
+func (d *Docket) Tally() Tally {
+	var t Tally
+	for _, e := range d.Entries {
+		switch {
+		case !e.Open():
+			t.Ruled++
+		case e.Kind != WordInContext:
+			t.Open++
+		}
+		if e.PutOff() {
+			t.PutOff++
+		}
+		for _, r := range e.rulings {
+			if r.Query != "" {
+				t.Queries++
+			}
+		}
+	}
+	return t
+}
+
+// counted is count without progress, for callers that show none.
+func noProgress(int, int) {}
+
+// Build reads doc against lex without a ledger: the docket of a manuscript
+// nobody has ruled on.
+func Build(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon) (*Docket, error) {
+	c, err := count(ctx, doc, lex, noProgress)
+	if err != nil {
+		return nil, err
+	}
+	return lay(doc, c, lex, nil), nil
+}

@@ -1,0 +1,210 @@
+package docket
+
+import (
+	"fmt"
+	"slices"
+
+	"emendary/internal/ledger"
+)
+
+// Dispute is a line that was not taken, and why.
+type Dispute struct {
+	Line   Line
+	Reason string // "ruled reject by anna on 2026-12-01", "line 12 rules it otherwise", "not in the manuscript"
+}
+
+// RulingsFrom turns lines into rulings on the docket. A line for places outranks
+// one for a form with just those capitals, which outranks one whose capitals
+// differ. A line that a ruling in force or another line contradicts becomes a
+// dispute, and neither is overridden; one that is in force already gives nothing.
+func (d *Docket) RulingsFrom(lines []Line) ([]ledger.Ruling, []Dispute) {
+	m := &matching{d: d, exact: map[string]*Line{}, folded: map[string][]*Line{}, claims: map[*Entry][]*Line{}}
+	for i := range lines {
+		m.sort(&lines[i])
+	}
+	for _, l := range m.placed {
+		m.claimPlaces(l)
+	}
+	for _, l := range m.order {
+		m.claimForm(l)
+	}
+	return m.rulings(), m.disputes
+}
+
+// matching finds for each occurrence the line that rules it.
+type matching struct {
+	d        *Docket
+	placed   []*Line            // scope checked
+	order    []*Line            // scope every, in order
+	exact    map[string]*Line   // by form
+	folded   map[string][]*Line // by key
+	claims   map[*Entry][]*Line // the line for each occurrence, nil for none
+	entries  []*Entry           // those with claims, in order
+	disputes []Dispute
+}
+
+func (m *matching) dispute(l *Line, format string, args ...any) {
+	m.disputes = append(m.disputes, Dispute{*l, fmt.Sprintf(format, args...)})
+}
+
+func (m *matching) sort(l *Line) {
+	if l.Scope == ledger.Checked {
+		m.placed = append(m.placed, l)
+		return
+	}
+	if first := m.exact[l.Form]; first != nil {
+		if !alike(first, l) {
+			m.dispute(l, "line %d rules it otherwise", first.Number)
+		}
+		return
+	}
+	m.exact[l.Form] = l
+	m.folded[key(l.Form)] = append(m.folded[key(l.Form)], l)
+	m.order = append(m.order, l)
+}
+
+// alike reports whether two lines say the same.
+func alike(a, b *Line) bool {
+	return a.Act == b.Act && a.Word == b.Word && a.List == b.List && a.Query == b.Query
+}
+
+func (m *matching) claim(e *Entry) []*Line {
+	if m.claims[e] == nil {
+		m.claims[e] = make([]*Line, len(e.Occurrences))
+		m.entries = append(m.entries, e)
+	}
+	return m.claims[e]
+}
+
+func (m *matching) claimPlaces(l *Line) {
+	entries := m.entriesOf(l)
+	if len(entries) == 0 {
+		m.dispute(l, "not in the manuscript")
+		return
+	}
+	wanted := slices.Clone(l.Places)
+	for _, e := range entries {
+		claims := m.claim(e)
+		for i := range e.Occurrences {
+			at := slices.Index(wanted, m.d.at(e, i))
+			if at < 0 {
+				continue
+			}
+			if other := claims[i]; other != nil && !alike(other, l) {
+				m.dispute(l, "line %d rules %s otherwise", other.Number, wanted[at])
+			} else {
+				claims[i] = l
+			}
+			wanted = slices.Delete(wanted, at, at+1)
+		}
+	}
+	for _, place := range wanted {
+		m.dispute(l, "no %s at %s", l.Form, place)
+	}
+}
+
+// entriesOf returns the entries whose form a line may be on.
+func (m *matching) entriesOf(l *Line) []*Entry {
+	if es := m.d.byKey[key(l.Form)]; len(es) > 0 {
+		return slices.Clone(es)
+	}
+	if e := m.d.Find(l.Form); e != nil {
+		return []*Entry{e}
+	}
+	return nil
+}
+
+func (m *matching) claimForm(l *Line) {
+	entries := m.entriesOf(l)
+	if len(entries) == 0 {
+		m.dispute(l, "not in the manuscript")
+		return
+	}
+	for _, e := range entries {
+		claims := m.claim(e)
+		for i := range claims {
+			if claims[i] == nil && m.best(e, e.Occurrences[i]) == l {
+				claims[i] = l
+			}
+		}
+	}
+}
+
+// best returns the line for an occurrence among those of scope every: with its
+// very capitals, else with those of its entry, else the first.
+func (m *matching) best(e *Entry, o Occurrence) *Line {
+	if l := m.exact[plainApostrophe(o.Text)]; l != nil {
+		return l
+	}
+	if l := m.exact[e.Form]; l != nil {
+		return l
+	}
+	return m.folded[key(e.Form)][0]
+}
+
+// rulings makes one ruling of each line on each entry, for the occurrences that
+// are not ruled on yet.
+func (m *matching) rulings() []ledger.Ruling {
+	var out []ledger.Ruling
+	for _, e := range m.entries {
+		claims := m.claims[e]
+		var lines []*Line
+		for _, l := range claims {
+			if l != nil && !slices.Contains(lines, l) {
+				lines = append(lines, l)
+			}
+		}
+		for _, l := range lines {
+			if r, ok := m.ruling(e, l, claims); ok {
+				out = append(out, r)
+			}
+		}
+	}
+	return out
+}
+
+func (m *matching) ruling(e *Entry, l *Line, claims []*Line) (ledger.Ruling, bool) {
+	word := l.Word
+	if l.Act == ledger.Accept {
+		lex := m.d.Lexicon()
+		word = carry(l.Form, e.Form, l.Word, func(s string) bool { return known(lex, s) })
+	}
+	checked := make([]bool, len(claims))
+	any := false
+	for i, claim := range claims {
+		if claim != l {
+			continue
+		}
+		old := e.Occurrences[i].Ruling
+		switch {
+		case old == nil:
+			checked[i], any = true, true
+		case old.Act != l.Act || old.Word != word:
+			m.dispute(l, "ruled %s by %s on %s", saying(old), old.Who, old.When.Format("2006-01-02"))
+			return ledger.Ruling{}, false
+		}
+	}
+	if !any || l.Act == ledger.Later && e.PutOff() {
+		return ledger.Ruling{}, false
+	}
+	r := m.d.Ruling(e, l.Act, checked, nil)
+	r.Word, r.List, r.Kind, r.Note, r.Query, r.To = word, l.List, l.Kind, l.Note, l.Query, l.To
+	if r.Act == ledger.Add && r.List == "" {
+		r.List = "book"
+	}
+	if l.Who != "" {
+		r.Who = l.Who
+	}
+	if !l.When.IsZero() {
+		r.When = l.When
+	}
+	return r, true
+}
+
+// saying is a ruling in a word or two.
+func saying(r *ledger.Ruling) string {
+	if r.Act == ledger.Accept {
+		return "accept " + r.Word
+	}
+	return string(r.Act)
+}
