@@ -349,24 +349,6 @@ func TestARulingSaysHowManyCitationsWereNeverOnScreen(t *testing.T) {
 	assert.Regexp(t, `30 citations$`, h.m.message)
 }
 
-func TestAReviewResumesAfterTheLastRuling(t *testing.T) {
-	s := start(t, storm)
-	path := s.Options.Manuscript
-	h := newHand(t, s, 80, 24)
-	h.drain()
-	h.press("l", "d")
-	require.NoError(t, s.Close())
-	h = newHand(t, restart(t, path), 80, 24)
-	h.drain()
-	assert.Contains(t, h.m.message, "resumed: 1 entry ruled, the latest: quai stands")
-	assert.Equal(t, "harbors", h.form())
-	h.press("u")
-	assert.Equal(t, "quai", h.form(), "undo works after a restart")
-	assert.Empty(t, h.rulings("quai"))
-	h.press("r")
-	assert.Len(t, h.rulings("quai"), 1)
-}
-
 func TestControlCharactersNeverReachTheTerminal(t *testing.T) {
 	h := ready(t, "The pilot \x1b]0;owned\x07 and the harb\u202eor \u2066came\u009b.\n\nThe harbor\x01 \u200f.\n", func(o *Options) { o.Getenv = dumb })
 	for _, keys := range [][]string{nil, {"tab", "o"}, {"esc", "/"}, {"esc", "f"}} {

@@ -46,11 +46,15 @@ func start(t *testing.T, manuscript string) *docket.Session {
 }
 
 // restart opens the manuscript at path, whose lexicon stands beside it.
-func restart(t *testing.T, path string) *docket.Session {
+func restart(t *testing.T, path string, change ...func(*docket.Options)) *docket.Session {
 	t.Helper()
 	list := filepath.Join(filepath.Dir(path), "words.txt")
 	require.NoError(t, os.WriteFile(list, []byte(strings.Join(words, "\n")+"\n"), 0o600))
-	s, err := docket.Start(context.Background(), docket.Options{Manuscript: path, Lexicon: list, Variety: "any", Who: "a tester"})
+	opt := docket.Options{Manuscript: path, Lexicon: list, Variety: "any", Who: "a tester"}
+	for _, c := range change {
+		c(&opt)
+	}
+	s, err := docket.Start(context.Background(), opt)
 	require.NoError(t, err)
 	t.Cleanup(func() { s.Close() })
 	return s
