@@ -196,6 +196,20 @@ func TestRulingAgainTakesThePlaceOfTheRuling(t *testing.T) {
 	assert.Equal(t, ledger.Reject, e.Occurrences[0].Ruling.Act)
 }
 
+func TestARejectedFormIsShownAsStet(t *testing.T) {
+	h := ready(t, "The harbor.\n\nThe quai.\n")
+	h.press("d", "h")
+	assert.Contains(t, h.screen(), "stet: the form stands")
+	h.press("f")
+	assert.Equal(t, ledger.Accept, h.m.docket.Find("harbor").Occurrences[0].Ruling.Act)
+}
+
+func TestTheConcordanceTellsWhatAcceptKeeps(t *testing.T) {
+	h := ready(t, "The harbor was old. The HARBOR’S mole.\n")
+	h.press("tab", "j")
+	assert.Contains(t, h.m.message, "accept makes it HARBOUR’S here")
+}
+
 func TestKeysOfOneBurstAllCount(t *testing.T) {
 	s := start(t, "The harbor.\n\nThe quai.\n\nThe stromm and the pilott.\n")
 	h := newHand(t, s, 80, 24)

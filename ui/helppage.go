@@ -78,6 +78,7 @@ func (m Model) helpLines() []string {
 		{"tr " + s.Transpose, "transpose the two letters above"},
 		{s.Space, "a space"},
 		{s.CloseUp, "close up"},
+		{s.Stet + s.Stet + s.Stet, "stet: the form above stands"},
 		{s.Capital + " " + s.Lower, "capital, lower case"},
 	} {
 		row(r[0], r[1])

@@ -86,6 +86,18 @@ func (m *Model) told(rulings []ledger.Ruling) string {
 	return s
 }
 
+// sayResult says what accept makes of the citation under the cursor, where that is
+// not the candidate letter for letter.
+func (m *Model) sayResult() {
+	row, ok := m.alignment.Selected()
+	if !ok {
+		return
+	}
+	if result := m.docket.Result(m.entry, m.concordance.Cursor(), row.Text); result != row.Text {
+		m.say("accept makes it " + m.visible(result) + " here")
+	}
+}
+
 // ruled says in a word or two what is in force on an occurrence.
 func (m *Model) ruled(r ledger.Ruling) string {
 	switch r.Act {

@@ -78,6 +78,7 @@ func (m *Model) pressPart(k tea.KeyMsg) {
 		m.concordance, _ = m.concordance.Update(k)
 		if m.concordance.Cursor() != before {
 			m.showPassage()
+			m.sayResult()
 		}
 	case onRelated:
 		before := slices.Clone(m.related.Rows())

@@ -6,6 +6,7 @@ import (
 	tea "github.com/charmbracelet/bubbletea"
 
 	"emendary/internal/docket"
+	"emendary/internal/ledger"
 	"emendary/internal/manuscript"
 	"emendary/ui/alignment"
 	"emendary/ui/concordance"
@@ -222,6 +223,9 @@ func (m *Model) layRows(at int) {
 	if len(rows) > 0 {
 		m.alignment.Lay(form, rows)
 		m.alignment.Move(at)
+		if m.screen != onCorrection && m.stands(e) {
+			m.alignment.Stet()
+		}
 		return
 	}
 	lay(e.Form)
@@ -233,6 +237,12 @@ func (m *Model) layRows(at int) {
 		note = "no word is near this form: correct it yourself, let it stand, or add it"
 	}
 	m.alignment.Note(form, note)
+}
+
+// stands reports whether the latest ruling on e let its form stand.
+func (m *Model) stands(e *docket.Entry) bool {
+	rulings := e.Rulings()
+	return len(rulings) > 0 && rulings[len(rulings)-1].Act == ledger.Reject
 }
 
 // showRelated shows the forms built on this one, with what they become once the

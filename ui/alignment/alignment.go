@@ -55,6 +55,7 @@ type Model struct {
 	rows          []Row
 	grid          align.Grid
 	note          string
+	stet          bool // the form was let stand: spelt out until the cursor moves
 	cursor        int
 	width, height int
 }
@@ -67,7 +68,7 @@ func (m *Model) SetSize(width, height int) { m.width, m.height = width, height }
 
 // Lay shows rows under the letters of form, the cursor on the first of them.
 func (m *Model) Lay(form []string, rows []Row) {
-	m.form, m.rows, m.note, m.cursor = form, rows, "", 0
+	m.form, m.rows, m.note, m.stet, m.cursor = form, rows, "", false, 0
 	alignments := make([]align.Alignment, len(rows))
 	for i, r := range rows {
 		alignments[i] = r.Alignment
@@ -80,6 +81,9 @@ func (m *Model) Note(form []string, note string) {
 	m.Lay(form, nil)
 	m.note = note
 }
+
+// Stet spells the form out as let stand, until the cursor moves.
+func (m *Model) Stet() { m.stet = true }
 
 // Move puts the cursor on row i, or the nearest there is.
 func (m *Model) Move(i int) { m.cursor = max(0, min(i, len(m.rows)-1)) }
@@ -101,6 +105,7 @@ func (m Model) Rows() int { return len(m.rows) }
 // Update moves the cursor.
 func (m Model) Update(msg tea.Msg) (Model, tea.Cmd) {
 	if msg, ok := msg.(tea.KeyMsg); ok {
+		m.stet = false
 		switch {
 		case key.Matches(msg, m.Keys.Down):
 			m.Move(m.cursor + 1)

@@ -4,6 +4,7 @@ import (
 	"strings"
 	"testing"
 
+	tea "github.com/charmbracelet/bubbletea"
 	"github.com/muesli/termenv"
 	"github.com/stretchr/testify/assert"
 
@@ -107,6 +108,20 @@ func TestAWordInTwoIsMarkedBySpace(t *testing.T) {
 	view := laid(plain, "alot", "a lot").View()
 	assert.Contains(t, view, "#")
 	assert.Contains(t, view, "insert a space after a")
+}
+
+func TestStetHasADotUnderEveryLetter(t *testing.T) {
+	m := laid(plain, "harber", "harbour")
+	m.Stet()
+	assert.Equal(t, `
+                 h  a  r  b  e  ‸  r    cost  share
+ ▸ harbour       ·  ·  ·  ·  o  u  ·     8.1   61 %
+                 h  a  r  b  e     r
+                 .  .  .  .  .     .
+   stet: the form stands
+`, trimmed(m.View()))
+	m, _ = m.Update(tea.KeyMsg{Type: tea.KeyDown})
+	assert.Contains(t, m.View(), "substitute o for e")
 }
 
 func TestSentence(t *testing.T) {

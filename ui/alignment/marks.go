@@ -14,6 +14,9 @@ import (
 func (m Model) speltOut(p plan) []string {
 	var letters, marks strings.Builder
 	margin := strings.Repeat(" ", lead+p.word)
+	if m.stet {
+		return m.speltStet(p, margin)
+	}
 	letters.WriteString(margin)
 	marks.WriteString(margin)
 	written := m.written(m.cursor)
@@ -54,6 +57,20 @@ func (m Model) speltOut(p plan) []string {
 	}
 	sentence := "   " + text.Cut(Sentence(m.form, m.rows[m.cursor]), m.width-4, m.sheet.Signs.Ellipsis)
 	return []string{letters.String(), marks.String(), sentence}
+}
+
+// speltStet marks the form as let stand: a dot under every letter.
+func (m Model) speltStet(p plan, margin string) []string {
+	letters, dots := margin, margin
+	for i := p.first; i < p.last; i++ {
+		letter, dot := "", ""
+		if m.grid.Columns[i].Form >= 0 {
+			letter, dot = m.head(i, m.sheet.Text), m.sheet.Settled.Render(m.sheet.Signs.Stet)
+		}
+		letters += text.Pad(letter, p.widths[i])
+		dots += text.Pad(dot, p.widths[i])
+	}
+	return []string{letters, dots, "   " + text.Cut("stet: the form stands", m.width-4, m.sheet.Signs.Ellipsis)}
 }
 
 // inText returns what stands in the line of letters at column i: the letter,

@@ -15,6 +15,7 @@ type Signs struct {
 	Agrees                     string // a candidate's letter is the form's
 	Caret, Slash, Dele         string
 	Transpose, Space, CloseUp  string
+	Stet                       string // under each letter of a form that stands
 	Capital, Lower             string
 	Rule, Dot, Ellipsis, Arrow string
 	Paragraph, Times           string
@@ -31,7 +32,7 @@ type Signs struct {
 func Unicode() Signs {
 	return Signs{
 		Cursor: "▸", Checked: "✓", Unchecked: " ", Agrees: "·",
-		Caret: "‸", Slash: "/", Dele: "₰", Transpose: "∽", Space: "#", CloseUp: "⁐",
+		Caret: "‸", Slash: "/", Dele: "₰", Transpose: "∽", Space: "#", CloseUp: "⁐", Stet: ".",
 		Capital: "cap", Lower: "lc",
 		Rule: "─", Dot: "·", Ellipsis: "…", Arrow: "→", Paragraph: "¶", Times: "×",
 		Up: "↑", Down: "↓", Left: "←", Right: "→", More: "›", Less: "‹",
@@ -44,7 +45,7 @@ func Unicode() Signs {
 func ASCII() Signs {
 	return Signs{
 		Cursor: ">", Checked: "x", Unchecked: " ", Agrees: ".",
-		Caret: "^", Slash: "/", Dele: "_", Transpose: "~", Space: "#", CloseUp: "=",
+		Caret: "^", Slash: "/", Dele: "_", Transpose: "~", Space: "#", CloseUp: "=", Stet: ".",
 		Capital: "cap", Lower: "lc",
 		Rule: "-", Dot: "-", Ellipsis: "~", Arrow: "->", Paragraph: "p", Times: "x",
 		Up: "up", Down: "down", Left: "left", Right: "right", More: ">", Less: "<",
