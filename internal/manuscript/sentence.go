@@ -71,9 +71,8 @@ func (s *sentence) word(last int, w *Word) bool {
 	if w.Traits&Initial != 0 && strings.HasSuffix(w.Text, ".") && unicode.IsLower(r) && !isAbbreviation(strings.ReplaceAll(w.Text, ".", ""), "") {
 		s.starts, s.strict = true, true
 	}
-	if last+1 < len(s.tokens) && s.tokens[last+1].kind == end && isAbbreviation(w.Text, s.text[s.tokens[last].end:]) {
-		// Its point ends no sentence: pretend that a word goes on.
-		s.tokens[last+1].kind = other
+	if after := s.text[w.End:]; strings.HasPrefix(after, ".") && isAbbreviation(w.Text, after) {
+		s.tokens[last+1].kind = other // its point ends no sentence
 	}
 	return starts
 }

@@ -13,38 +13,47 @@ import (
 // capital – others quote a word or phrase. “ „ open and ” closes; " and the
 // guillemets open after a space, an opening bracket, a dash or another opening
 // quote, and close else, but " after a digit with nothing open is a mark of
-// inches. Quotes nest: speech ends with the outermost.
+// inches. Quotes nest: speech ends with the outermost. A quote that closes also
+// closes those opened after its own.
 //
 // Speech that never closes runs to the end of the paragraph, as it does where
 // the next paragraph opens with a quote again; that one is speech by its own
 // quote, so nothing is carried over.
 func (s *splitter) markSpeech(text string) {
-	var open []bool // for each open quotation: it is speech
-	speech := 0
+	s.open = s.open[:0]
 	for i := range s.tokens {
 		t := &s.tokens[i]
 		switch t.kind {
 		case double:
-			t.role = s.doubleRole(text, i, len(open) > 0)
+			t.role = s.doubleRole(text, i, len(s.open) > 0)
 		case single:
 		default:
-			t.speech = speech > 0
+			t.speech = len(s.open) > 0 && s.open[len(s.open)-1].speech
 			continue
 		}
 		switch t.role {
 		case opening:
-			spoken := t.kind == double || s.opensSpeech(text, i)
-			open = append(open, spoken)
-			if spoken {
-				speech++
-			}
+			inSpeech := len(s.open) > 0 && s.open[len(s.open)-1].speech
+			s.open = append(s.open, quotation{t.kind, inSpeech || t.kind == double || s.opensSpeech(text, i)})
 		case closing:
-			if n := len(open); n > 0 {
-				if open[n-1] {
-					speech--
-				}
-				open = open[:n-1]
-			}
+			s.close(t.kind)
+		}
+	}
+}
+
+// quotation is one that is open.
+type quotation struct {
+	kind   kind // of its quotes
+	speech bool // what stands in it is speech
+}
+
+// close closes the innermost quotation in quotes of a kind, and with it those
+// inside that never closed.
+func (s *splitter) close(k kind) {
+	for i := len(s.open) - 1; i >= 0; i-- {
+		if s.open[i].kind == k {
+			s.open = s.open[:i]
+			return
 		}
 	}
 }

@@ -49,6 +49,7 @@ const (
 type splitter struct {
 	tokens []token
 	ahead  []following
+	open   []quotation // while speech is marked
 	words  []Word
 	store  []Word // where the next paragraphs' words go
 }

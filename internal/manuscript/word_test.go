@@ -109,6 +109,7 @@ func TestSentenceStarts(t *testing.T) {
 		{"The gun spoke. The town woke! Who slept? None … But she did.", "The The Who None But"},
 		{"Mr. Pell met Dr. Sallow at St. Anne in ch. 3 of No. 5.", "Mr"},
 		{"No. He did not.", "No He"},
+		{"Is he the Gov? He is the Capt! Yes.", "Is He Yes"},
 		{"He met J. R. Pell there.", "He"},
 		{"He said, “Come here.” Then he left.", "He Come Then"},
 		{"“Where?” he said. “Here.”", "Where Here"},
@@ -143,6 +144,8 @@ func TestSettings(t *testing.T) {
 		{"«Venez,» dit-il", "SN"},
 		{"a 6\" plank was cut", "NNNNN"},
 		{"the word—“harbour”—stood", "NNSN"},
+		{"“the ‘great mole” was shut", "SSS NN"},
+		{"“one” ‘Two “three” four’ five", "SSSSN"},
 		{"don’t “it’s the pilots’ house” now", "NSSSSN"},
 	} {
 		var got strings.Builder
