@@ -56,16 +56,19 @@ type weighed struct {
 }
 
 func (s search) candidates(ctx context.Context, form string, kind Kind, instead []string, n int) ([]Candidate, error) {
+	// Of words that differ in capitals or apostrophes alone, the likeliest is enough.
 	found := map[string]weighed{}
 	add := func(w weighed) {
-		if w.Text == form {
-			return
-		}
-		if old, ok := found[w.Text]; !ok || w.bits < old.bits {
-			found[w.Text] = w
+		k := key(w.Text)
+		if old, ok := found[k]; w.Text != form && (!ok || w.bits < old.bits) {
+			found[k] = w
 		}
 	}
-	for _, step := range []func(string, Kind, func(weighed)){s.words, s.compounds, s.splits} {
+	steps := []func(string, Kind, func(weighed)){s.words, s.compounds, s.splits}
+	if kind == UnknownForm && len(instead) > 0 {
+		steps = nil // a rule has said it all
+	}
+	for _, step := range steps {
 		step(form, kind, add)
 		if err := ctx.Err(); err != nil {
 			return nil, err
@@ -92,15 +95,12 @@ func (s search) candidates(ctx context.Context, form string, kind Kind, instead 
 	return out, nil
 }
 
-// enough is how many words a search must find before it stops reaching further.
-const enough = 3
-
 // within returns the words near form: two edits away at most, further only where
-// hardly any word is so near and the form is long enough to bear more slips.
+// no word is so near and the form is long enough to bear more slips.
 func (s search) within(form string) []lexicon.Near {
 	near := s.lex.Within(form, 2)
 	letters := len(s.lex.Alphabet().Letters(form))
-	for k := 3; k <= 4 && len(near) < enough && letters >= 2*k; k++ {
+	for k := 3; k <= 4 && len(near) == 0 && letters >= 2*k; k++ {
 		near = s.lex.Within(form, k)
 	}
 	return near
@@ -138,7 +138,7 @@ func (s search) weigh(form string, word lexicon.Word, distance int, kind Kind, t
 
 // varietyOf names the varieties of a word that some varieties lack.
 func varietyOf(w lexicon.Word) string {
-	if len(w.Sources) == 0 || len(w.Varieties()) == len(lexicon.Varieties())-1 {
+	if len(w.Sources) == 0 || len(w.Varieties()) == len(lexicon.Varieties()) {
 		return ""
 	}
 	return varieties([]lexicon.Word{w})
@@ -213,7 +213,7 @@ func (s search) named(form string, instead []string, found map[string]weighed) {
 		if f := s.lex.Find(text); len(f.Words) > 0 {
 			c.Word = f.Words[0]
 		}
-		found[c.Text] = weighed{c, best - lead}
+		found[key(c.Text)] = weighed{c, best - lead}
 	}
 }
 

@@ -34,11 +34,11 @@ type Model struct {
 }
 
 // Default returns the figures in use while edits cost one unit each. They are
-// set by hand: an edit is a little dearer than the whole span of the size levels
-// (8 bits), so that candidates come by distance first, then by commonness, and
-// only what the manuscript itself uses often overtakes a nearer word.
+// set by hand: an edit is as dear as the whole span of the size levels (8 bits),
+// so that candidates come by distance first, then by commonness, and only what
+// the manuscript itself uses often overtakes a nearer word.
 func Default() Model {
-	return Model{Edit: 9, Smoothing: 50_000, Capital: 4, Abbreviation: 8, SameWord: 9}
+	return Model{Edit: 8, Smoothing: 10_000, Capital: 4, Abbreviation: 8, SameWord: 8}
 }
 
 // level bits: Zipf's law, p(r) = 1/(r·H(N)), averaged over the ranks that each
