@@ -124,6 +124,17 @@ func TestStetHasADotUnderEveryLetter(t *testing.T) {
 	assert.Contains(t, m.View(), "substitute o for e")
 }
 
+func TestTheHeadSaysWhichRowsAreDrawn(t *testing.T) {
+	m := laid(plain, "harber", "harbour", "harbor", "barber", "harper")
+	m.SetSize(78, 7)
+	assert.Contains(t, m.View(), "   1 to 3 of 4   h  a  r")
+	for range 3 {
+		m, _ = m.Update(tea.KeyMsg{Type: tea.KeyDown})
+	}
+	assert.Contains(t, m.View(), "   2 to 4 of 4   h  a  r")
+	assert.Contains(t, m.View(), "▸ harper")
+}
+
 func TestSentence(t *testing.T) {
 	for _, c := range []struct{ form, word, want string }{
 		{"harber", "harbour", "substitute o for e, insert u after it"},

@@ -27,13 +27,14 @@ type plan struct {
 // or taller than asked.
 func (m Model) View() string {
 	p := m.plan()
-	lines := []string{m.heads(p)}
+	room := max(1, m.height-1-spelt)
+	from := max(0, min(m.cursor-room/2, len(m.rows)-room))
+	to := min(len(m.rows), from+room)
+	lines := []string{m.heads(p, from, to)}
 	if m.note != "" {
 		lines = append(lines, "   "+m.sheet.Quiet.Render(text.Cut(m.note, m.width-3, m.sheet.Signs.Ellipsis)))
 	}
-	room := max(1, m.height-1-spelt)
-	from := max(0, min(m.cursor-room/2, len(m.rows)-room))
-	for r := from; r < min(len(m.rows), from+room); r++ {
+	for r := from; r < to; r++ {
 		lines = append(lines, m.row(r, p))
 	}
 	if len(m.rows) > 0 {
@@ -156,32 +157,28 @@ func (m Model) window(p *plan) {
 	}
 }
 
-// heads returns the line of column heads.
-func (m Model) heads(p plan) string {
+// heads returns the line of column heads. Before them it says which rows are drawn
+// and whether columns go on beyond the screen, where not all are there.
+func (m Model) heads(p plan, from, to int) string {
+	left := ""
+	if to-from < len(m.rows) {
+		left = fmt.Sprintf("%d to %d of %d", from+1, to, len(m.rows))
+	}
+	if p.first > 0 {
+		left += " " + m.sheet.Signs.Less
+	}
+	if p.last < len(p.widths) {
+		left += " " + m.sheet.Signs.More
+	}
 	var b strings.Builder
-	b.WriteString(strings.Repeat(" ", lead+p.word))
+	b.WriteString("   " + text.Pad(m.sheet.Quiet.Render(text.Cut(left, p.word+1, "")), lead-3+p.word))
 	for i := p.first; i < p.last; i++ {
 		b.WriteString(text.Pad(m.head(i, m.sheet.Head), p.widths[i]))
 	}
 	if len(m.rows) > 0 {
 		b.WriteString(m.sheet.Quiet.Render("  cost  share"))
 	}
-	return m.edges(b.String(), p)
-}
-
-// edges marks a line of heads whose columns go on beyond the screen.
-func (m Model) edges(line string, p plan) string {
-	if p.first == 0 && p.last == len(p.widths) {
-		return line
-	}
-	mark := ""
-	if p.first > 0 {
-		mark += m.sheet.Signs.Less
-	}
-	if p.last < len(p.widths) {
-		mark += m.sheet.Signs.More
-	}
-	return "   " + text.Pad(m.sheet.Quiet.Render(mark), 3) + strings.TrimPrefix(line, strings.Repeat(" ", 6))
+	return b.String()
 }
 
 func (m Model) head(i int, s lipgloss.Style) string {
