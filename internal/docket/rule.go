@@ -1,6 +1,7 @@
 package docket
 
 import (
+	"cmp"
 	"fmt"
 	"slices"
 
@@ -154,6 +155,8 @@ func (m *matching) rulings() []ledger.Ruling {
 				lines = append(lines, l)
 			}
 		}
+		// A ruling on places overrides one on every place, so it has to come later.
+		slices.SortStableFunc(lines, func(a, b *Line) int { return cmp.Compare(b.Scope, a.Scope) })
 		for _, l := range lines {
 			if r, ok := m.ruling(e, l, claims); ok {
 				out = append(out, r)
@@ -172,13 +175,15 @@ func (m *matching) ruling(e *Entry, l *Line, claims []*Line) (ledger.Ruling, boo
 	checked := make([]bool, len(claims))
 	any := false
 	for i, claim := range claims {
-		if claim != l {
+		overridden := l.Scope == ledger.Every && claim != nil && claim.Scope == ledger.Checked
+		if claim != l && !overridden {
 			continue
 		}
 		old := e.Occurrences[i].Ruling
 		switch {
 		case old == nil:
-			checked[i], any = true, true
+			checked[i], any = true, any || claim == l
+		case overridden:
 		case old.Act != l.Act || old.Word != word:
 			m.dispute(l, "ruled %s by %s on %s", saying(old), old.Who, old.When.Format("2006-01-02"))
 			return ledger.Ruling{}, false
