@@ -30,7 +30,7 @@ type work struct {
 	kin     map[*docket.Entry]bool // checks of related forms that the editor has changed
 }
 
-// facts are what is computed about an entry beside the screen.
+// facts are what is computed about an entry, the searches beside the screen.
 type facts struct {
 	candidates []docket.Candidate
 	parts      []int
@@ -111,7 +111,6 @@ func (m *Model) computeFacts(e *docket.Entry) tea.Cmd {
 	return func() tea.Msg {
 		var f facts
 		f.candidates, f.err = d.Candidates(ctx, e, candidates)
-		f.parts = d.Parts(e)
 		f.near = d.Near(e)
 		return computed{id, e, f}
 	}
@@ -124,6 +123,7 @@ func (m *Model) take(c computed) {
 	if c.id != m.lexicon {
 		return
 	}
+	c.facts.parts = m.docket.Parts(c.entry) // a count, and not safe beside Record
 	m.work(c.entry).facts = &c.facts
 	if c.entry == m.entry {
 		m.layRows(0)
