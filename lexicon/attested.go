@@ -41,7 +41,7 @@ func (x *Lexicon) Attested(counts iter.Seq2[string, int]) (Variety, map[Variety]
 // baseVarieties returns the varieties that have a base word covering form.
 func (x *Lexicon) baseVarieties(form string) varietySet {
 	var set varietySet
-	for _, s := range x.spell(form).withoutStops(x.alphabet) {
+	for _, s := range x.spell(form).withoutStops() {
 		for _, w := range x.cover(nil, x.layers[Base], Base, s) {
 			set |= sourceVarieties(w.Sources)
 		}

@@ -83,7 +83,11 @@ func parse(data string, inPlace bool) (*List, error) {
 	}
 	var header [6]int
 	for i := range header {
-		header[i] = int(littleEndianAt(data, len(magic)+4*i))
+		n := littleEndianAt(data, len(magic)+4*i)
+		if uint64(n) > uint64(len(data)) { // no sum of such numbers can overflow
+			return nil, errors.New("its header promises more than there is")
+		}
+		header[i] = int(n)
 	}
 	arcs, words, written, root, records, tail := header[0], header[1], header[2], header[3], header[4], header[5]
 	if want := headerSize + 4*(3*arcs+words) + records + tail; len(data) != want {

@@ -156,7 +156,7 @@ type Finding struct {
 // capitals decides whether the form is barred; else it is if no entry lists it.
 // It is known where an entry that covers it is of the variety in use.
 //
-// It takes O(letters × alphabet) time, about a microsecond.
+// It takes O(letters × alphabet) time, a few microseconds.
 func (x *Lexicon) Find(form string) Finding {
 	if x == nil || x.alphabet == nil {
 		return Finding{}
@@ -164,7 +164,7 @@ func (x *Lexicon) Find(form string) Finding {
 	var f Finding
 	decided := false
 	written := x.spell(form)
-	spellings := written.withoutStops(x.alphabet)
+	spellings := written.withoutStops()
 	for which := layers - 1; which >= 0; which-- {
 		y := x.layers[which]
 		if y == nil {

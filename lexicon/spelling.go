@@ -25,7 +25,7 @@ func (x *Lexicon) spell(text string) spelling {
 // withoutStops returns all spellings that entries which cover s may have: s, s
 // with a final full stop more or less, and, where one follows every letter, s
 // without any.
-func (s spelling) withoutStops(a *align.Alphabet) []spelling {
+func (s spelling) withoutStops() []spelling {
 	n := len(s.letters)
 	if n == 0 {
 		return nil

@@ -27,8 +27,8 @@ const maxForm = 10 * MaxLetters
 // forms of up to 1,000 letters; no word is near a longer one.
 //
 // The search walks the tries and leaves every branch on which no word can come
-// within k; it takes time in the order of the branches entered, about 0.1 ms for
-// k = 2 on 130,000 words.
+// within k: for k = 2 some 0.2 ms on 130,000 words (BenchmarkWithin), against
+// 40 ms and more for a scan.
 func (x *Lexicon) Within(form string, k int) []Near {
 	if x == nil || x.alphabet == nil || k < 0 {
 		return nil
@@ -71,14 +71,21 @@ func (x *Lexicon) gather(near []Near, hits hits, y *layer, which Layer) []Near {
 	return near
 }
 
-// above reports whether a layer above which has entries with these letters.
+// above reports whether a layer above which has entries that may cover a word
+// with these folded letters.
 func (x *Lexicon) above(which Layer, letters []align.Letter) bool {
+	var spellings []spelling
 	for _, y := range x.layers[which+1:] {
 		if y == nil {
 			continue
 		}
-		if _, ok := y.lookup(letters); ok {
-			return true
+		if spellings == nil {
+			spellings = spelling{letters: letters, folded: letters}.withoutStops()
+		}
+		for _, s := range spellings {
+			if _, ok := y.lookup(s.folded); ok {
+				return true
+			}
 		}
 	}
 	return false
