@@ -220,6 +220,20 @@ func TestABurstOfKeysOnATerminal(t *testing.T) {
 	assert.Equal(t, "pilot", h.rulings("pilott")[0].Word)
 }
 
+// Under the race detector the program ends with another exit code if candidates
+// are computed from what a ruling or an undo is changing.
+func TestRulingsAndUndosBesideComputations(t *testing.T) {
+	var manuscript strings.Builder
+	for a := 'a'; a <= 'z'; a++ {
+		fmt.Fprintf(&manuscript, "The qu%[1]cck came to the st%[1]cppm of the harb%[1]cq.\n\n", a)
+	}
+	term := onTerminal(t, manuscript.String(), 80, 24)
+	term.until("share")
+	term.typeKeys(strings.Repeat("d", 15) + strings.Repeat("u", 8) + strings.Repeat("r", 4) + strings.Repeat("ss", 5) + strings.Repeat("lu", 5) + "q")
+	assert.Equal(t, 0, term.ends())
+	term.leftClean()
+}
+
 func TestSignalsLeaveTheTerminalClean(t *testing.T) {
 	for _, sig := range []syscall.Signal{syscall.SIGTERM, syscall.SIGHUP, syscall.SIGINT} {
 		t.Run(sig.String(), func(t *testing.T) {
