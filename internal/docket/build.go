@@ -19,6 +19,7 @@ type census struct {
 // count reads all words of doc into a census. O(words); it stops when ctx ends.
 func count(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon, progress func(done, total int)) (*census, error) {
 	c := &census{forms: map[string]*form{}}
+	seen := map[string]*form{} // by the word as it stands, to look each up once
 	for i := range doc.Paragraphs {
 		if i%512 == 0 {
 			if err := ctx.Err(); err != nil {
@@ -29,20 +30,32 @@ func count(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon, 
 		p := &doc.Paragraphs[i]
 		for j, w := range p.Words {
 			c.size++
-			text := plainApostrophe(part(p, w, lex).text)
-			f := c.forms[text]
-			if f == nil {
-				f = &form{text: text}
-				c.forms[text] = f
+			alike := w.Traits&(manuscript.Broken|manuscript.Elision) == 0 && w.Fault == manuscript.NoFault
+			f := seen[w.Text]
+			if f == nil || !alike {
+				f = c.form(plainApostrophe(part(p, w, lex).text))
+				if w.Fault != manuscript.NoFault {
+					f.fault, f.instead = w.Fault, w.Instead
+				}
 			}
-			if w.Fault != manuscript.NoFault {
-				f.fault, f.instead = w.Fault, w.Instead
+			if alike {
+				seen[w.Text] = f
 			}
 			f.places = append(f.places, place{int32(i), int32(j)})
 		}
 	}
 	progress(len(doc.Paragraphs), len(doc.Paragraphs))
 	return c, nil
+}
+
+// form returns the form with that text, a new one where there is none.
+func (c *census) form(text string) *form {
+	f := c.forms[text]
+	if f == nil {
+		f = &form{text: text}
+		c.forms[text] = f
+	}
+	return f
 }
 
 // counts yields every form with its count.
