@@ -1,0 +1,120 @@
+package main
+
+import (
+	"fmt"
+	"math"
+	"os"
+	"strings"
+
+	"github.com/muesli/termenv"
+	"github.com/spf13/cobra"
+	"golang.org/x/term"
+
+	"emendary/align"
+	"emendary/ui/alignment"
+	"emendary/ui/style"
+)
+
+// newAlign returns the command that aligns two words.
+func newAlign(p *program) *cobra.Command {
+	var all, ascii bool
+	cmd := &cobra.Command{
+		Use:   "align FORM WORD",
+		Short: "lay a form against a word, letter by letter",
+		Long: `Lay a form against a word, letter by letter: the letters of the form as column
+heads, under them a dot where the word agrees and the letter where it differs;
+then the edits as proof-correction marks and in words, and their cost. Every
+edit costs 1: an insertion, deletion or substitution of a letter, or a
+transposition of two neighbours. Capitals cost nothing.
+
+Often several alignments cost the same; --all shows them, at most 100, and says
+how many there are.`,
+		Example: `  emendary align harber harbour
+  emendary align nieghbour neighbour --ascii
+  emendary align goverment government --all`,
+		Args: takes(2, 2, "form"),
+		RunE: func(_ *cobra.Command, args []string) error {
+			p.align(args[0], args[1], all, ascii)
+			return nil
+		},
+	}
+	cmd.Flags().BoolVar(&all, "all", false, "all alignments of the same cost, at most 100")
+	cmd.Flags().BoolVar(&ascii, "ascii", false, "marks in ASCII")
+	return cmd
+}
+
+// mostAlignments is how many alignments --all shows.
+const mostAlignments = 100
+
+func (p *program) align(form, word string, all, ascii bool) {
+	var alphabet align.Alphabet
+	formLetters, wordLetters := alphabet.Letters(form), alphabet.Letters(word)
+	from, to := alphabet.Fold(formLetters), alphabet.Fold(wordLetters)
+	found := []align.Alignment{align.Align(from, to, align.Unit{})}
+	if all {
+		found = align.All(from, to, align.Unit{}, mostAlignments)
+	}
+	letters := spelt(&alphabet, formLetters)
+	rows := make([]alignment.Row, len(found))
+	for i, a := range found {
+		rows[i] = alignment.Row{Text: word, Letters: spelt(&alphabet, wordLetters), Alignment: a}
+	}
+	ability := style.FromEnvironment(os.Getenv)
+	ability.ASCII = ability.ASCII || ascii
+	if !p.outIsTerminal {
+		ability.Plain, ability.Profile = true, termenv.Ascii
+	}
+	grid := alignment.New(style.Make(ability))
+	grid.SetSize(p.columns(), len(rows)+5)
+	grid.Lay(letters, rows)
+	for line := range strings.Lines(grid.View()) {
+		p.sayf("%s", strings.TrimRight(line, " \n"))
+	}
+	p.sayf("   cost %s", number(found[0].Cost))
+	if all {
+		p.sayAll(letters, rows, align.Count(from, to, align.Unit{}))
+	}
+}
+
+// sayAll says what each alignment does, and how many there are.
+func (p *program) sayAll(letters []string, rows []alignment.Row, count uint64) {
+	p.sayf("")
+	for i, r := range rows {
+		p.sayf("%4d  %s", i+1, alignment.Sentence(letters, r))
+	}
+	total := fmt.Sprint(count)
+	switch {
+	case count == math.MaxUint64:
+		total = fmt.Sprintf("%d or more", count)
+	case count == 1:
+		p.sayf("   1 alignment of this cost")
+		return
+	}
+	more := ""
+	if count > uint64(len(rows)) {
+		more = fmt.Sprintf("; the first %d are shown", len(rows))
+	}
+	p.sayf("   %s alignments of this cost%s", total, more)
+}
+
+// spelt returns letters as they are written.
+func spelt(alphabet *align.Alphabet, letters []align.Letter) []string {
+	out := make([]string, len(letters))
+	for i, l := range letters {
+		out[i] = alphabet.Text(l)
+	}
+	return out
+}
+
+// unbounded is the width of what is no terminal: nothing is cut for it.
+const unbounded = 1 << 12
+
+// columns returns how wide standard output is.
+func (p *program) columns() int {
+	if p.outIsTerminal {
+		if width, _, err := term.GetSize(int(os.Stdout.Fd())); err == nil && width > 0 {
+			return width
+		}
+	}
+	return unbounded
+}

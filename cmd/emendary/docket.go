@@ -1,0 +1,85 @@
+package main
+
+import (
+	"context"
+
+	"github.com/spf13/cobra"
+
+	"emendary/internal/docket"
+)
+
+// newDocket returns the command that lists the open entries.
+func newDocket(p *program) *cobra.Command {
+	var (
+		d      desk
+		format = choice{"table", formats}
+		most   int
+	)
+	cmd := &cobra.Command{
+		Use:   "docket MANUSCRIPT",
+		Short: "list the entries still to be ruled on",
+		Long: `List the entries of a manuscript still to be ruled on, in the order of review,
+each with its candidates, best first. What stands is only read.
+
+Formats: a table to read; tsv with the columns form, kind, count, candidates and
+places (line:column); jsonl with one JSON object a line, costs, shares and the
+bytes of the file included.`,
+		Example: `  emendary docket manuscript.md
+  emendary docket manuscript.md --format jsonl -n 1`,
+		Args: oneManuscript,
+		RunE: func(cmd *cobra.Command, args []string) error {
+			return p.docket(cmd.Context(), &d, args[0], format.value, most)
+		},
+	}
+	d.flags(cmd)
+	listingFlags(cmd, &format, &most)
+	return cmd
+}
+
+// listingFlags are the flags of the commands that list candidates.
+func listingFlags(cmd *cobra.Command, format *choice, most *int) {
+	cmd.Flags().Var(format, "format", "`FORMAT`: table, tsv or jsonl")
+	cmd.Flags().IntVarP(most, "number", "n", 5, "at most `N` candidates each")
+	_ = cmd.RegisterFlagCompletionFunc("format", cobra.FixedCompletions(formats, cobra.ShellCompDirectiveNoFileComp))
+}
+
+func (p *program) docket(ctx context.Context, d *desk, manuscript, format string, most int) error {
+	if err := notNegative("-n", most); err != nil {
+		return err
+	}
+	m := newMeter(p.notes, p.notesIsTerminal)
+	defer m.clear()
+	s, err := d.open(ctx, manuscript, true, func(done, total int) { m.step("reading", done, total) })
+	if err != nil {
+		return err
+	}
+	defer s.Close()
+	var open []*docket.Entry
+	for _, e := range s.Docket.Entries {
+		if e.Open() && e.Kind != docket.WordInContext {
+			open = append(open, e)
+		}
+	}
+	lister := newEntryLister(p.out, format, open)
+	done := 0
+	err = inOrder(ctx, withoutError(open), func(ctx context.Context, e *docket.Entry) (listed, error) {
+		found, err := s.Docket.Candidates(ctx, e, most)
+		return listed{Form: e.Form, Kind: e.Kind, Candidates: listCandidates(found), Places: listPlaces(s.Docket, e)}, err
+	}, func(l listed) error {
+		if !p.outIsTerminal { // there, the list itself shows how far it has come
+			done++
+			m.step("looking for candidates", done, len(open))
+		} else {
+			m.clear()
+		}
+		if err := lister.write(l); err != nil {
+			return err
+		}
+		return p.flush()
+	})
+	if err == nil && len(open) == 0 {
+		m.clear()
+		p.notef("%s: nothing is open", manuscript)
+	}
+	return err
+}

@@ -1,0 +1,118 @@
+package main
+
+import (
+	"context"
+	"fmt"
+	"os"
+	"os/user"
+
+	"github.com/spf13/cobra"
+
+	"emendary/internal/docket"
+	"emendary/internal/shelf"
+	"emendary/lexicon"
+	"emendary/lexicon/english"
+)
+
+// words are the flags that say which words are known.
+type words struct {
+	lexicon, house, series string
+	variety                choice
+}
+
+func (w *words) flags(cmd *cobra.Command) {
+	w.variety.allowed = []string{lexicon.AnyVariety.Flag()}
+	for _, v := range lexicon.Varieties() {
+		w.variety.allowed = append(w.variety.allowed, v.Flag())
+	}
+	f := cmd.Flags()
+	f.StringVar(&w.lexicon, "lexicon", "", "word list, one word a line, in place of the English base lexicon (`FILE`)")
+	f.Var(&w.variety, "variety", "`VARIETY` of English: any, american, british-ise, british-ize, canadian, australian")
+	f.StringVar(&w.house, "house", "", "house list, by name or file (`LIST`)")
+	f.StringVar(&w.series, "series", "", "series list, by name or file (`LIST`)")
+	_ = cmd.RegisterFlagCompletionFunc("variety", cobra.FixedCompletions(w.variety.allowed, cobra.ShellCompDirectiveNoFileComp))
+}
+
+// load returns the lexicon that the flags ask for, where there is no manuscript
+// that could attest its variety: any, unless one is chosen.
+func (w *words) load() (*lexicon.Lexicon, error) {
+	base := english.Base()
+	if w.lexicon != "" {
+		list, err := loadList(w.lexicon)
+		if err != nil {
+			return nil, err
+		}
+		base = list
+	}
+	variety := lexicon.AnyVariety
+	if w.variety.value != "" {
+		chosen, err := lexicon.ParseVariety(w.variety.value)
+		if err != nil {
+			return nil, err
+		}
+		variety = chosen
+	}
+	lex := lexicon.New(base, variety)
+	for layer, list := range map[lexicon.Layer]string{lexicon.House: w.house, lexicon.Series: w.series} {
+		if list == "" {
+			continue
+		}
+		path, err := shelf.Find(list)
+		if err != nil {
+			return nil, err
+		}
+		loaded, err := loadList(path)
+		if err != nil {
+			return nil, err
+		}
+		lex = lex.With(layer, loaded)
+	}
+	return lex, nil
+}
+
+func loadList(path string) (*lexicon.List, error) {
+	f, err := os.Open(path)
+	if err != nil {
+		return nil, fileError(path, err)
+	}
+	defer f.Close()
+	return lexicon.Load(f, path)
+}
+
+// desk is the flags of the commands that open a manuscript.
+type desk struct {
+	words
+	ledger, encoding, as string
+}
+
+func (d *desk) flags(cmd *cobra.Command) {
+	f := cmd.Flags()
+	f.StringVar(&d.ledger, "ledger", "", "the ledger, if not beside the manuscript (`FILE`)")
+	f.StringVar(&d.encoding, "encoding", "", "`ENCODING` of the manuscript, if neither UTF-8 nor UTF-16: windows-1252, macintosh, …")
+	f.StringVar(&d.as, "as", "", "`NAME` under which rulings are made, if not yours on this system")
+	d.words.flags(cmd)
+}
+
+// open opens a manuscript on the desk; toRead leaves its ledger to others.
+func (d *desk) open(ctx context.Context, manuscript string, toRead bool, progress func(done, total int)) (*docket.Session, error) {
+	return docket.Start(ctx, docket.Options{
+		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: progress,
+		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series,
+	})
+}
+
+// who is the name that rulings are made under.
+func (d *desk) who() string {
+	if d.as != "" {
+		return d.as
+	}
+	if u, err := user.Current(); err == nil && u.Username != "" {
+		return u.Username
+	}
+	return "unknown"
+}
+
+// fileError returns an error of the system under the path as it was given.
+func fileError(path string, err error) error {
+	return fmt.Errorf("%s: %w", path, cause(err))
+}

@@ -1,0 +1,58 @@
+package main
+
+import (
+	"context"
+	"strings"
+
+	"github.com/spf13/cobra"
+
+	"emendary/internal/report"
+)
+
+// newReport returns the command that writes reports.
+func newReport(p *program) *cobra.Command {
+	var (
+		d      desk
+		format string
+	)
+	cmd := &cobra.Command{
+		Use:   "report NAME MANUSCRIPT",
+		Short: "write the style sheet, the emendations, the queries, …",
+		Long: `Write a report on a manuscript and its rulings. NAME is one of:
+
+  ` + strings.Join(report.Names(), "\n  ") + `
+
+Reports are in Markdown, the rulings in the tab-separated lines that "rule"
+reads; --format asks for another form.`,
+		Example: `  emendary report style-sheet manuscript.md
+  emendary report rulings manuscript.md > rulings.tsv
+  emendary report figures manuscript.md`,
+		ValidArgsFunction: func(_ *cobra.Command, args []string, _ string) ([]string, cobra.ShellCompDirective) {
+			if len(args) == 0 {
+				return report.Names(), cobra.ShellCompDirectiveNoFileComp
+			}
+			return nil, cobra.ShellCompDirectiveDefault
+		},
+		Args: func(cmd *cobra.Command, args []string) error {
+			if err := takes(2, 2, "report")(cmd, args); err != nil {
+				return err
+			}
+			return oneOf("report", report.Names())(cmd, args[:1])
+		},
+		RunE: func(cmd *cobra.Command, args []string) error {
+			return p.report(cmd.Context(), &d, args[0], args[1], format)
+		},
+	}
+	d.flags(cmd)
+	cmd.Flags().StringVar(&format, "format", "", "another `FORMAT`")
+	return cmd
+}
+
+func (p *program) report(ctx context.Context, d *desk, which, manuscript, format string) error {
+	s, err := d.open(ctx, manuscript, true, nil)
+	if err != nil {
+		return err
+	}
+	defer s.Close()
+	return report.Write(p.out, s, which, format)
+}
