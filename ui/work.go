@@ -123,7 +123,7 @@ func (m *Model) take(c computed) {
 	if c.id != m.lexicon {
 		return
 	}
-	c.facts.parts = m.docket.Parts(c.entry) // a count, and not safe beside Record
+	c.facts.parts = m.docket.Parts(c.entry)
 	m.work(c.entry).facts = &c.facts
 	if c.entry == m.entry {
 		m.layRows(0)

@@ -15,8 +15,8 @@ import (
 
 // Docket is the entries of one manuscript, in the order of review (by first
 // place). Its state changes by Record alone, and Find may add an entry; both
-// belong to one goroutine. Candidates, Lexicon, Near, Parts and Citation may run
-// beside it in others.
+// belong to one goroutine. Candidates, Near, Parts and Lexicon may run beside it
+// in others: they read only what never changes.
 type Docket struct {
 	Document *manuscript.Document
 	Entries  []*Entry
@@ -28,6 +28,7 @@ type Docket struct {
 	model  rank.Model
 	lex    atomic.Pointer[lexicon.Lexicon] // base and what this book's rulings added
 
+	laid   []*Entry            // the entries as they were laid out; never changes
 	byForm map[string]*Entry   // by exact form
 	byKey  map[string][]*Entry // by key
 	log    []ledger.Ruling     // all rulings recorded, undos included
@@ -55,6 +56,7 @@ func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, ours map[str
 	for _, e := range d.entries(ours) {
 		d.list(e)
 	}
+	d.laid = slices.Clone(d.Entries)
 	return d
 }
 
@@ -74,10 +76,8 @@ func (d *Docket) Size() int { return d.census.size }
 // Parts returns how often the form of e stands in each part of the manuscript.
 func (d *Docket) Parts(e *Entry) []int {
 	parts := make([]int, len(d.Document.Parts))
-	for _, o := range e.Occurrences {
-		if part := d.Document.Paragraphs[o.Paragraph].Part; part < len(parts) {
-			parts[part]++
-		}
+	for i := range e.Occurrences {
+		parts[d.Document.Paragraphs[e.Occurrences[i].Paragraph].Part]++
 	}
 	return parts
 }

@@ -87,7 +87,7 @@ func (d *Docket) Near(e *Entry) []NearForm {
 		return nil
 	}
 	var out []NearForm
-	for _, other := range d.Entries {
+	for _, other := range d.laid {
 		if other == e || abs(len(other.Form)-len(e.Form)) > 4*farthest {
 			continue
 		}
