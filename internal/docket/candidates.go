@@ -5,6 +5,7 @@ import (
 	"context"
 	"slices"
 	"strings"
+	"unicode/utf8"
 
 	"emendary/align"
 	"emendary/internal/rank"
@@ -116,6 +117,7 @@ func (s search) words(form string, kind Kind, add func(weighed)) {
 func (s search) weigh(form string, word lexicon.Word, distance int, kind Kind, text string) weighed {
 	v := s.lex.Variety()
 	bits := s.model.Edit*float64(distance) + s.model.Prior(word, v, s.use[key(word.Text)], s.size)
+	bits += s.model.Letter*float64(unshared(form, word.Text)) + s.first(form, word.Text)
 	if capitalsOf(form) == lower && capitalsOf(word.Text) != lower {
 		bits += s.model.Capital
 	}
@@ -134,6 +136,32 @@ func (s search) weigh(form string, word lexicon.Word, distance int, kind Kind, t
 	}
 	c := Candidate{Text: text, Word: word, Distance: distance, Cost: float64(distance), Remark: remark}
 	return weighed{c, bits}
+}
+
+// first is what a first letter that differs costs.
+func (s search) first(form, word string) float64 {
+	a, _ := utf8.DecodeRuneInString(key(form))
+	b, _ := utf8.DecodeRuneInString(key(word))
+	if a == b {
+		return 0
+	}
+	return s.model.First
+}
+
+// unshared counts the letters that one of two words has and the other lacks.
+func unshared(a, b string) int {
+	left := map[rune]int{}
+	for _, r := range key(a) {
+		left[r]++
+	}
+	for _, r := range key(b) {
+		left[r]--
+	}
+	n := 0
+	for _, c := range left {
+		n += abs(c)
+	}
+	return n
 }
 
 // varietyOf names the varieties of a word that some varieties lack.

@@ -19,6 +19,13 @@ import (
 type Model struct {
 	// Edit is what one unit edit costs, in bits.
 	Edit float64
+	// Letter is added for each letter that the form or the word has and the other
+	// lacks: none for a transposition, one for an insertion or a deletion, two
+	// for a substitution.
+	Letter float64
+	// First is added where the first letters differ, which writers seldom get wrong
+	// (Yannakoudakis & Fawthrop 1983, from memory).
+	First float64
 	// Smoothing is how many running words the lexicon's own frequencies count
 	// for, against the manuscript's (a Dirichlet prior's weight).
 	Smoothing float64
@@ -34,11 +41,12 @@ type Model struct {
 }
 
 // Default returns the figures in use while edits cost one unit each. They are
-// set by hand: an edit is as dear as the whole span of the size levels (8 bits),
-// so that candidates come by distance first, then by commonness, and only what
-// the manuscript itself uses often overtakes a nearer word.
+// set by hand: a transposition costs 6 bits, an insertion or a deletion 8, a
+// substitution 10, about the span of the size levels (8 bits). So candidates
+// come by distance first, then by commonness, and only what the manuscript itself
+// uses often, or a much commoner word, overtakes a nearer one.
 func Default() Model {
-	return Model{Edit: 8, Smoothing: 10_000, Capital: 4, Abbreviation: 8, SameWord: 8}
+	return Model{Edit: 6, Letter: 2, First: 4, Smoothing: 10_000, Capital: 4, Abbreviation: 8, SameWord: 8}
 }
 
 // level bits: Zipf's law, p(r) = 1/(r·H(N)), averaged over the ranks that each

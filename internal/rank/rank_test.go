@@ -75,7 +75,9 @@ func TestPriorPrefersWhatIsCommonAndWhatTheManuscriptUses(t *testing.T) {
 	assert.Less(t, m.Prior(listed, lexicon.BritishIse, 0, 100_000), bits("abbey", 0), "a listed word counts as a common one")
 }
 
-func TestAnEditIsWorthTheWholeSpanOfLevels(t *testing.T) {
+func TestAnEditIsWorthAboutTheSpanOfLevels(t *testing.T) {
+	m := Default()
 	span := levelBits[len(levelBits)-1].bits - levelBits[0].bits
-	assert.InDelta(t, Default().Edit, span, 0.2)
+	assert.Less(t, m.Edit, span, "a transposition")
+	assert.Less(t, span, m.Edit+2*m.Letter, "a substitution")
 }
