@@ -161,8 +161,10 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 	if rulings := e.Rulings(); len(rulings) > 0 {
 		say = append(say, m.summary(rulings[len(rulings)-1]))
 	}
+	stands := count(len(e.Occurrences), "time")
 	f := m.work(e).facts
 	if f == nil {
+		say = append(say, stands)
 		return strings.Join(say, dot), ""
 	}
 	if chapters := f.parts[min(m.firstChapter(), len(f.parts)):]; len(chapters) > 1 {
@@ -172,9 +174,10 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 				in++
 			}
 		}
-		say = append(say, fmt.Sprintf("in %d of %s", in, count(len(chapters), "chapter")))
+		stands += fmt.Sprintf(" in %d of %s", in, count(len(chapters), "chapter"))
 		strip = m.strip(chapters, max(8, m.frame().left/4))
 	}
+	say = append(say, stands)
 	if len(f.near) > 0 {
 		var near []string
 		for _, n := range f.near[:min(len(f.near), 6)] {
