@@ -70,7 +70,7 @@ func (e *emendations) tsv(t *table) {
 		"form", "ruling", "word", "scope", "kind", "query", "who", "time", "seen")
 	for _, c := range e.changes {
 		r := c.ruling
-		left, right := context(c.place)
+		left, right := beside(c.place)
 		t.row(c.part, c.title, c.line, c.column, c.form, c.result, left, right, c.setting,
 			r.Form, r.Act, r.Word, r.Scope, r.EntryKind, r.Query, r.Who, stamp(r.When), yesNo(c.seen))
 	}
@@ -79,7 +79,7 @@ func (e *emendations) tsv(t *table) {
 func (e *emendations) jsonl(l *lines) {
 	for _, c := range e.changes {
 		r := c.ruling
-		left, right := context(c.place)
+		left, right := beside(c.place)
 		l.add(struct {
 			Part    int    `json:"part"`
 			Title   string `json:"title"`
@@ -104,8 +104,8 @@ func (e *emendations) jsonl(l *lines) {
 	}
 }
 
-// context is up to forty code points on either side of a place.
-func context(p place) (left, right string) {
+// beside is up to forty code points on either side of a place.
+func beside(p place) (left, right string) {
 	before, after := []rune(p.before), []rune(p.after)
 	return string(before[max(0, len(before)-40):]), string(after[:min(40, len(after))])
 }

@@ -103,7 +103,7 @@ func (q *queries) tsv(t *table) {
 	t.row("to", "part", "title", "line", "column", "form", "left", "text", "right", "query", "ruling", "word", "who", "time")
 	q.each(func(a query, at place) {
 		r := a.ruling
-		left, right := context(at)
+		left, right := beside(at)
 		t.row(addressee(r.To), at.part, at.title, at.line, at.column, r.Form, left, at.form, right,
 			r.Query, r.Act, r.Word, r.Who, stamp(r.When))
 	})
@@ -134,7 +134,7 @@ func (q *queries) jsonl(l *lines) {
 	for _, a := range q.asked {
 		spots := []spot{}
 		for _, at := range a.places {
-			left, right := context(at)
+			left, right := beside(at)
 			spots = append(spots, spot{at.part, at.title, at.line, at.column, left, at.form, right})
 		}
 		r := a.ruling

@@ -37,6 +37,7 @@ type item struct {
 	notes []string
 	not   []string        // forms not used
 	bars  map[string]bool // those of them that a list for the next book bars
+	curly bool            // the manuscript sets its apostrophes curly
 	count int             // occurrences that stand as word once emended
 	first place
 }
@@ -95,6 +96,7 @@ func (it *item) stands(p place) {
 	if it.count == 0 || byPlace(p, it.first) < 0 {
 		it.first = p
 	}
+	it.curly = it.curly || strings.Contains(p.form, "’")
 	it.count++
 }
 

@@ -26,9 +26,14 @@ func (s *styleSheet) markdown(p *page) {
 	}
 }
 
-// line is the item in Markdown: Thessaly (not Thessally), name; note · 4 times, first 7:12
+// line is the item in Markdown, its apostrophes as the manuscript sets them:
+// Thessaly (not Thessally) · the clerk · 4 times, first in part 2, 7:12.
 func (it *item) line() string {
-	word := strong(it.word)
+	word := it.word
+	if it.curly {
+		word = strings.ReplaceAll(word, "'", "’")
+	}
+	word = strong(word)
 	if len(it.not) > 0 {
 		word += " (not " + escape(strings.Join(it.not, ", ")) + ")"
 	}
