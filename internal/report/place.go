@@ -116,7 +116,7 @@ func recorded(r ledger.Ruling) []place {
 
 // seen reports whether the citation at p was on screen when r was made. Where the
 // manuscript has changed since, it counts as seen only if what was beside it then
-// is beside it still.
+// is beside it still, as far as its paragraph goes.
 func seen(s *docket.Session, r *ledger.Ruling, p place) bool {
 	start := s.Docket.Span(p.entry, p.occurrence).Start
 	for _, o := range r.Occurrences {
@@ -129,9 +129,17 @@ func seen(s *docket.Session, r *ledger.Ruling, p place) bool {
 			}
 			continue
 		}
-		if strings.HasSuffix(oneLine(p.before), oneLine(o.Before)) && strings.HasPrefix(oneLine(p.after), oneLine(o.After)) {
+		before, wasBefore := oneLine(p.before), oneLine(o.Before)
+		after, wasAfter := oneLine(p.after), oneLine(o.After)
+		alike := (strings.HasSuffix(before, wasBefore) || strings.HasSuffix(wasBefore, before)) &&
+			(strings.HasPrefix(after, wasAfter) || strings.HasPrefix(wasAfter, after))
+		if alike && min(len(before), len(wasBefore))+min(len(after), len(wasAfter)) >= leastContext {
 			return true
 		}
 	}
 	return false
 }
+
+// leastContext is how many bytes must stand beside a citation for it to be
+// recognised in a manuscript that changed: a line of one word is like any other.
+const leastContext = 16

@@ -259,6 +259,6 @@ func TestQuestionsAndFlagsOutliveAChangeOfTheManuscript(t *testing.T) {
 	require.NoError(t, err)
 	defer s.Close()
 	assert.Contains(t, written(t, s, "emendations", ""), "2 emendations; 1 citation never on screen.")
-	assert.Contains(t, written(t, s, "queries", ""), "3:8, not in the manuscript as it is now: A gurt **brackle** rose.")
+	assert.Contains(t, written(t, s, "queries", ""), "not in the manuscript as it is now: The old harber lay still. A gurt **brackle** rose.")
 	assert.Contains(t, written(t, s, "style-sheet", ""), "**gurt** · not in the manuscript as it is now")
 }
