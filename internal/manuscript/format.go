@@ -79,9 +79,10 @@ type piece struct {
 	atom             bool
 }
 
-// prose collects a paragraph's text. Its zero value is ready for use.
+// prose collects a paragraph's text. Its zero value is ready for use, and it may be
+// copied, which is why it holds no strings.Builder.
 type prose struct {
-	text    strings.Builder
+	text    []byte
 	whole   string // the text, where it is one stretch of the source
 	pieces  []piece
 	italics []extent // in order, none overlapping another
@@ -92,7 +93,7 @@ func (p *prose) len() int {
 	if p.whole != "" {
 		return len(p.whole)
 	}
-	return p.text.Len()
+	return len(p.text)
 }
 
 // string shares the source's memory where the text is one stretch of it.
@@ -100,13 +101,13 @@ func (p *prose) string() string {
 	if p.whole != "" {
 		return p.whole
 	}
-	return p.text.String()
+	return string(p.text)
 }
 
 // spill moves the text to the builder, before more is added.
 func (p *prose) spill() {
 	if p.whole != "" {
-		p.text.WriteString(p.whole)
+		p.text = append(p.text, p.whole...)
 		p.whole = ""
 	}
 }
@@ -131,14 +132,14 @@ func (p *prose) copy(source string, start, end int) {
 		return
 	}
 	p.spill()
-	p.text.WriteString(source[start:end])
+	p.text = append(p.text, source[start:end]...)
 }
 
 // put adds text that stands for bytes [start,end) of the source.
 func (p *prose) put(text string, start, end int) {
 	p.pieces = append(p.pieces, piece{int32(p.len()), int32(start), int32(end), true})
 	p.spill()
-	p.text.WriteString(text)
+	p.text = append(p.text, text...)
 }
 
 // line adds a line break that stands for bytes [start,end) of the source. A
