@@ -133,15 +133,18 @@ type begin struct{}
 // candidates.
 func (m Model) Init() tea.Cmd { return func() tea.Msg { return begin{} } }
 
-// start goes to the first open entry after the last ruling's place, and says
-// what was done before.
+// start goes to the first open entry after the place of the last ruling that was
+// made on a bench, and says what was done before.
 func (m *Model) start() tea.Cmd {
 	m.begun = true
 	last, _ := m.docket.Last()
 	from := -1
-	if last != nil {
-		if e := m.entryOf(*last); e != nil {
-			from = slices.Index(m.docket.Entries, e)
+	rulings := m.docket.Rulings()
+	for i := len(rulings) - 1; i >= 0; i-- {
+		// Rulings taken from a file come in the order of the file, on no screen.
+		if r := rulings[i]; slices.ContainsFunc(r.Occurrences, func(o ledger.Occurrence) bool { return o.Seen }) {
+			from = slices.Index(m.docket.Entries, m.entryOf(r))
+			break
 		}
 	}
 	m.goTo(m.openAfter(from))
