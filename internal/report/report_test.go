@@ -262,3 +262,16 @@ func TestQuestionsAndFlagsOutliveAChangeOfTheManuscript(t *testing.T) {
 	assert.Contains(t, written(t, s, "queries", ""), "not in the manuscript as it is now: The old harber lay still. A gurt **brackle** rose.")
 	assert.Contains(t, written(t, s, "style-sheet", ""), "**gurt** · not in the manuscript as it is now")
 }
+
+func TestStyleSheetKeepsWhatAQueryIsLaidOver(t *testing.T) {
+	s := desk(t, "A gurt brackle rose at Wrackhaven, not at Wreckhaven.\n")
+	rule(t, s, "gurt", ledger.Add, nil)
+	rule(t, s, "gurt", ledger.Query, func(r *ledger.Ruling) { r.Query = "Right?" })
+	rule(t, s, "brackle", ledger.Add, nil)
+	rule(t, s, "brackle", ledger.Accept, to("bracken"))
+	rule(t, s, "Wreckhaven", ledger.Accept, to("Wrackhaven"))
+	got := written(t, s, "style-sheet", "")
+	assert.Contains(t, got, "**gurt**")
+	assert.NotContains(t, got, "brack")
+	assert.Contains(t, got, "**Wrackhaven** (not Wreckhaven) · 2 times, first in part 1, 1:24")
+}

@@ -18,9 +18,9 @@ import (
 //
 // On it are the words of all adds, the forms let stand, and the words of those
 // accepts that chose between forms a lexicon or an author may well use: another
-// variety's, a barred word, a word in context, and unknown forms of a name or of a
-// word that only a house, series or book list has (Thessaly, not Thessally). Mere
-// slips are not.
+// variety's, a barred word, a word in context, and unknown forms of a name, of a
+// word that only a house, series or book list has, or of one that is on the docket
+// itself (Thessaly, not Thessally). Mere slips are not.
 type styleSheet struct {
 	manuscript string
 	general    [][2]string
@@ -57,8 +57,8 @@ func gatherStyleSheet(s *docket.Session) (content, error) {
 	}
 	for _, r := range s.Docket.Rulings() {
 		places := on[r.ID]
-		if len(places) == 0 && s.Docket.Find(r.Form) != nil {
-			continue // a later ruling took all its places
+		if len(places) == 0 && overruled(s.Docket.Find(r.Form)) {
+			continue
 		}
 		var it *item
 		switch {
@@ -90,6 +90,20 @@ func gatherStyleSheet(s *docket.Session) (content, error) {
 			cmp.Compare(sortKey(a.word), sortKey(b.word)), cmp.Compare(a.word, b.word))
 	})
 	return out, nil
+}
+
+// overruled reports whether later rulings decided all places of an entry anew; a
+// query alone decides nothing.
+func overruled(e *docket.Entry) bool {
+	if e == nil {
+		return false
+	}
+	for _, o := range e.Occurrences {
+		if o.Ruling == nil || o.Ruling.Act == ledger.Query {
+			return false
+		}
+	}
+	return true
 }
 
 func (it *item) stands(p place) {
@@ -139,7 +153,9 @@ func chosen(s *docket.Session, r ledger.Ruling) bool {
 	}
 	finding := s.Docket.Lexicon().Find(r.Word)
 	if finding.Status != lexicon.Known {
-		return false
+		return slices.ContainsFunc(s.Docket.Entries, func(e *docket.Entry) bool {
+			return e.Form == r.Word && e.Kind == docket.UnknownForm
+		})
 	}
 	w := finding.Words[0]
 	if w.Layer != lexicon.Base {
