@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+	"unicode/utf8"
 
 	"emendary/internal/docket"
 	"emendary/internal/ledger"
@@ -75,8 +76,30 @@ func placeOf(s *docket.Session, e *docket.Entry, i int) place {
 	c := s.Docket.Citation(e, i)
 	return place{
 		part: c.Part + 1, title: s.Docket.Document.Parts[c.Part].Title, line: c.Line, column: c.Column,
-		before: c.Before, form: c.Form, after: c.After, setting: string(c.Setting), entry: e, occurrence: i,
+		before: near(c.Before, true), form: c.Form, after: near(c.After, false), setting: string(c.Setting), entry: e, occurrence: i,
 	}
+}
+
+// nearby is how many bytes beside a place are kept: more than any report shows.
+const nearby = 1 << 10
+
+// near is a copy of the end or the start of text: a paragraph may be the whole
+// manuscript, and a place must not hold on to it.
+func near(text string, end bool) string {
+	if len(text) <= nearby {
+		return text
+	}
+	cut := nearby
+	if end {
+		cut = len(text) - nearby
+	}
+	for cut < len(text) && !utf8.RuneStart(text[cut]) {
+		cut++
+	}
+	if end {
+		return strings.Clone(text[cut:])
+	}
+	return strings.Clone(text[:cut])
 }
 
 // byPlace orders places as they stand in the manuscript.

@@ -89,3 +89,17 @@ func TestCitationsAreCutBetweenWords(t *testing.T) {
 	assert.True(t, strings.HasSuffix(q, "and …"), q)
 	assert.Contains(t, q, `“**\*harber\***,” he said`)
 }
+
+func TestPlacesKeepLittleOfALongParagraph(t *testing.T) {
+	for _, unit := range []string{"a", "é", "字"} {
+		text := strings.Repeat(unit, 3000)
+		for _, end := range []bool{true, false} {
+			got := near(text, end)
+			assert.InDelta(t, nearby, len(got), 3, unit)
+			assert.True(t, strings.HasPrefix(text, got) || strings.HasSuffix(text, got), unit)
+		}
+		assert.Equal(t, unit, near(unit, true))
+	}
+	assert.Len(t, near(strings.Repeat("é", 3000), true), nearby)
+	assert.Len(t, near("a"+strings.Repeat("é", 3000), false), nearby+1)
+}
