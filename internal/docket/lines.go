@@ -168,12 +168,12 @@ func (d *Docket) WriteLines(w io.Writer) error {
 			if len(places) == 0 && (r.Act != ledger.Later || !e.PutOff()) {
 				continue
 			}
-			scope, at := string(r.Scope), ""
+			at := ""
 			if r.Scope == ledger.Checked {
 				at = strings.Join(places, " ")
 			}
 			fmt.Fprintln(b, strings.Join([]string{
-				cell(r.Form), string(r.Act), cell(r.Word), r.List, scope, at,
+				cell(r.Form), string(r.Act), cell(r.Word), r.List, string(r.Scope), at,
 				cell(r.Kind), cell(r.Note), cell(r.Query), cell(r.To), cell(r.Who), r.When.UTC().Format(time.RFC3339Nano),
 			}, "\t"))
 		}
@@ -181,8 +181,15 @@ func (d *Docket) WriteLines(w io.Writer) error {
 	return b.Flush()
 }
 
-// ruledBy returns the places of e where r is in force, as line:column.
+// ruledBy returns the places of e where r is in force, as line:column: for a
+// query alone all that it asks about, whatever else was ruled there.
 func (d *Docket) ruledBy(e *Entry, r *ledger.Ruling) (places []string) {
+	if r.Act == ledger.Query {
+		for _, i := range d.placed(e, r) {
+			places = append(places, d.at(e, i))
+		}
+		return places
+	}
 	for i := range e.Occurrences {
 		if now := e.Occurrences[i].Ruling; now != nil && now.ID == r.ID {
 			places = append(places, d.at(e, i))

@@ -97,7 +97,9 @@ func TestRulingsRoundTrip(t *testing.T) {
 	add.List, add.Kind, add.Note = "book", "place", "the\tmoor"
 	q := s.Docket.Ruling(s.Docket.Find("pilto"), ledger.Query, []bool{true}, nil)
 	q.Query, q.To = "a name?", "author"
-	write(t, s, add, q)
+	late := s.Docket.Ruling(s.Docket.Find("lantrn"), ledger.Query, []bool{false, true}, nil)
+	late.Query, late.To = "lantern, or lanthorn?", "author"
+	write(t, s, add, q, late)
 	var first strings.Builder
 	require.NoError(t, s.Docket.WriteLines(&first))
 
@@ -108,6 +110,16 @@ func TestRulingsRoundTrip(t *testing.T) {
 	assert.Equal(t, first.String(), second.String())
 	assert.Equal(t, emended(t, s), emended(t, other))
 	assert.Equal(t, s.Docket.Tally(), other.Docket.Tally())
+}
+
+func TestAQueryTakesNothingBack(t *testing.T) {
+	s := desk(t, "A harber.")
+	rule(t, s, "harber", ledger.Accept, "harbour")
+	assert.Empty(t, take(t, s, "form\truling\tword\tquery\tto\nharber\tquery\t\tthe American spelling?\tauthor\n"))
+	assert.Equal(t, "A harbour.", emended(t, s))
+	assert.Equal(t, Tally{Ruled: 1, Queries: 1}, s.Docket.Tally())
+	assert.Empty(t, take(t, s, "form\truling\tword\tquery\tto\nharber\tquery\t\tthe American spelling?\tauthor\n"))
+	assert.Equal(t, 1, s.Docket.Tally().Queries, "the same question is not asked twice")
 }
 
 func FuzzReadLines(f *testing.F) {

@@ -12,12 +12,27 @@ import (
 // Places of the manuscript as it is are found by their byte; those of an earlier
 // state by form and context. What cannot be found goes to Unplaced.
 func (d *Docket) covered(e *Entry, r *ledger.Ruling) []int {
+	found, lost := d.place(e, r)
+	for _, o := range lost {
+		d.Unplaced = append(d.Unplaced, Unplaced{*r, o})
+	}
+	return found
+}
+
+// placed is covered for a ruling that has been recorded: it lists nothing.
+func (d *Docket) placed(e *Entry, r *ledger.Ruling) []int {
+	found, _ := d.place(e, r)
+	return found
+}
+
+// place finds the occurrences of e that r is on, and tells those it cannot find.
+func (d *Docket) place(e *Entry, r *ledger.Ruling) (found []int, lost []ledger.Occurrence) {
 	if r.Scope == ledger.Every {
 		out := make([]int, len(e.Occurrences))
 		for i := range out {
 			out[i] = i
 		}
-		return out
+		return out, nil
 	}
 	if r.Manuscript != d.Document.SHA256 {
 		return d.again(e, r)
@@ -26,15 +41,14 @@ func (d *Docket) covered(e *Entry, r *ledger.Ruling) []int {
 	for i := range e.Occurrences {
 		at[d.span(e.Occurrences[i]).Start] = i
 	}
-	var out []int
 	for _, o := range r.Occurrences {
 		if i, ok := at[o.Start]; ok {
-			out = append(out, i)
+			found = append(found, i)
 		} else {
-			d.Unplaced = append(d.Unplaced, Unplaced{*r, o})
+			lost = append(lost, o)
 		}
 	}
-	return out
+	return found, lost
 }
 
 // leastContext is how many letters of its context must still stand beside an
@@ -47,7 +61,7 @@ type match struct{ old, now, letters int }
 // again finds the places of r in a manuscript that changed: the pairs of old and
 // present occurrence that share most context are taken first. A place that two
 // present ones suit equally well is left, so that no ruling lands by chance.
-func (d *Docket) again(e *Entry, r *ledger.Ruling) []int {
+func (d *Docket) again(e *Entry, r *ledger.Ruling) (found []int, lost []ledger.Occurrence) {
 	var matches []match
 	for now, o := range e.Occurrences {
 		start, end := d.extent(o)
@@ -64,26 +78,25 @@ func (d *Docket) again(e *Entry, r *ledger.Ruling) []int {
 		}
 	}
 	slices.SortStableFunc(matches, func(a, b match) int { return cmp.Compare(b.letters, a.letters) })
-	found := make([]int, len(r.Occurrences))
-	for i := range found {
-		found[i] = -1
+	nowOf := make([]int, len(r.Occurrences))
+	for i := range nowOf {
+		nowOf[i] = -1
 	}
 	taken := map[int]bool{}
 	for i, m := range matches {
-		if found[m.old] >= 0 || taken[m.now] || rivalled(matches, i, taken) {
+		if nowOf[m.old] >= 0 || taken[m.now] || rivalled(matches, i, taken) {
 			continue
 		}
-		found[m.old], taken[m.now] = m.now, true
+		nowOf[m.old], taken[m.now] = m.now, true
 	}
-	var out []int
-	for old, now := range found {
+	for old, now := range nowOf {
 		if now < 0 {
-			d.Unplaced = append(d.Unplaced, Unplaced{*r, r.Occurrences[old]})
+			lost = append(lost, r.Occurrences[old])
 			continue
 		}
-		out = append(out, now)
+		found = append(found, now)
 	}
-	return out
+	return found, lost
 }
 
 // rivalled reports whether another free present place suits the same old one as

@@ -99,10 +99,14 @@ func (d *Docket) take(r *ledger.Ruling) {
 		return
 	}
 	for _, i := range d.covered(e, r) {
-		if e.Occurrences[i].Ruling == nil {
+		old := e.Occurrences[i].Ruling
+		if old == nil {
 			e.open--
 		}
-		e.Occurrences[i].Ruling = r
+		// A query asks about whatever was ruled; it takes nothing back.
+		if old == nil || r.Act != ledger.Query {
+			e.Occurrences[i].Ruling = r
+		}
 	}
 }
 

@@ -29,7 +29,11 @@ func (d *Docket) RulingsFrom(lines []Line) ([]ledger.Ruling, []Dispute) {
 	for _, l := range m.order {
 		m.claimForm(l)
 	}
-	return m.rulings(), m.disputes
+	out := m.rulings()
+	for _, l := range m.queries {
+		out = append(out, m.ask(l)...)
+	}
+	return out, m.disputes
 }
 
 // matching finds for each occurrence the line that rules it.
@@ -37,6 +41,7 @@ type matching struct {
 	d        *Docket
 	placed   []*Line            // scope checked
 	order    []*Line            // scope every, in order
+	queries  []*Line            // queries alone: they contradict nothing
 	exact    map[string]*Line   // by form
 	folded   map[string][]*Line // by key
 	claims   map[*Entry][]*Line // the line for each occurrence, nil for none
@@ -49,6 +54,10 @@ func (m *matching) dispute(l *Line, format string, args ...any) {
 }
 
 func (m *matching) sort(l *Line) {
+	if l.Act == ledger.Query {
+		m.queries = append(m.queries, l)
+		return
+	}
 	if l.Scope == ledger.Checked {
 		m.placed = append(m.placed, l)
 		return
@@ -192,8 +201,46 @@ func (m *matching) ruling(e *Entry, l *Line, claims []*Line) (ledger.Ruling, boo
 	if !any || l.Act == ledger.Later && e.PutOff() {
 		return ledger.Ruling{}, false
 	}
-	r := m.d.Ruling(e, l.Act, checked, nil)
-	r.Word, r.List, r.Kind, r.Note, r.Query, r.To = word, l.List, l.Kind, l.Note, l.Query, l.To
+	r := m.d.fill(l, m.d.Ruling(e, l.Act, checked, nil))
+	r.Word = word
+	return r, true
+}
+
+// ask makes the rulings of a query alone: on the entries with its very form, else
+// on all whose form differs in capitals only.
+func (m *matching) ask(l *Line) []ledger.Ruling {
+	entries := m.entriesOf(l)
+	if len(entries) == 0 {
+		m.dispute(l, "not in the manuscript")
+	}
+	if e := m.d.byForm[l.Form]; e != nil {
+		entries = []*Entry{e}
+	}
+	var out []ledger.Ruling
+	wanted := slices.Clone(l.Places)
+	for _, e := range entries {
+		checked := make([]bool, len(e.Occurrences))
+		for i := range checked {
+			at := slices.Index(wanted, m.d.at(e, i))
+			checked[i] = l.Scope == ledger.Every || at >= 0
+			if at >= 0 {
+				wanted = slices.Delete(wanted, at, at+1)
+			}
+		}
+		asked := slices.ContainsFunc(e.rulings, func(r *ledger.Ruling) bool { return r.Query == l.Query && r.To == l.To })
+		if !asked && slices.Contains(checked, true) {
+			out = append(out, m.d.fill(l, m.d.Ruling(e, l.Act, checked, nil)))
+		}
+	}
+	for _, place := range wanted {
+		m.dispute(l, "no %s at %s", l.Form, place)
+	}
+	return out
+}
+
+// fill gives a ruling what its line says of it.
+func (d *Docket) fill(l *Line, r ledger.Ruling) ledger.Ruling {
+	r.List, r.Kind, r.Note, r.Query, r.To = l.List, l.Kind, l.Note, l.Query, l.To
 	if r.Act == ledger.Add && r.List == "" {
 		r.List = "book"
 	}
@@ -203,7 +250,7 @@ func (m *matching) ruling(e *Entry, l *Line, claims []*Line) (ledger.Ruling, boo
 	if !l.When.IsZero() {
 		r.When = l.When
 	}
-	return r, true
+	return r
 }
 
 // saying is a ruling in a word or two.
