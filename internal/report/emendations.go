@@ -110,7 +110,12 @@ func beside(p place) (left, right string) {
 	return string(before[max(0, len(before)-40):]), string(after[:min(40, len(after))])
 }
 
-func partName(n int, title string) string { return join(" · ", fmt.Sprintf("part %d", n), title) }
+func partName(n int, title string) string {
+	if title != "" {
+		return title
+	}
+	return fmt.Sprintf("part %d", n)
+}
 
 func scope(r *ledger.Ruling) string {
 	if r.Scope == ledger.Every {

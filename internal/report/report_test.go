@@ -273,5 +273,5 @@ func TestStyleSheetKeepsWhatAQueryIsLaidOver(t *testing.T) {
 	got := written(t, s, "style-sheet", "")
 	assert.Contains(t, got, "**gurt**")
 	assert.NotContains(t, got, "brack")
-	assert.Contains(t, got, "**Wrackhaven** (not Wreckhaven) · 2 times, first in part 1, 1:24")
+	assert.Contains(t, got, "**Wrackhaven** (not Wreckhaven) · 2 times, first at 1:24 in part 1")
 }

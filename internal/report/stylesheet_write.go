@@ -52,7 +52,7 @@ func (it *item) standing() string {
 	if it.count == 0 {
 		return "not in the manuscript as it is now"
 	}
-	return fmt.Sprintf("%s, first in part %d, %s", number(it.count, "time"), it.first.part, it.first)
+	return fmt.Sprintf("%s, first at %s in %s", number(it.count, "time"), it.first, escape(partName(it.first.part, it.first.title)))
 }
 
 // tsv writes the style sheet as a list that lexicon.Load reads as a series list.
