@@ -1,6 +1,7 @@
 package main
 
 import (
+	"errors"
 	"fmt"
 	"math"
 	"os"
@@ -34,8 +35,7 @@ how many there are.`,
   emendary align goverment government --all`,
 		Args: takes(2, 2, "form"),
 		RunE: func(_ *cobra.Command, args []string) error {
-			p.align(args[0], args[1], all, ascii)
-			return nil
+			return p.align(args[0], args[1], all, ascii)
 		},
 	}
 	cmd.Flags().BoolVar(&all, "all", false, "all alignments of the same cost, at most 100")
@@ -43,12 +43,21 @@ how many there are.`,
 	return cmd
 }
 
+// mostLetters bounds what is aligned: the work grows with the square.
+const mostLetters = 500
+
 // mostAlignments is how many alignments --all shows.
 const mostAlignments = 100
 
-func (p *program) align(form, word string, all, ascii bool) {
+func (p *program) align(form, word string, all, ascii bool) error {
 	var alphabet align.Alphabet
 	formLetters, wordLetters := alphabet.Letters(form), alphabet.Letters(word)
+	if len(formLetters) == 0 || len(wordLetters) == 0 {
+		return errors.New("align: an empty word; give a form and a word")
+	}
+	if longest := max(len(formLetters), len(wordLetters)); longest > mostLetters {
+		return fmt.Errorf("align: a word of %d letters; %d are the most", longest, mostLetters)
+	}
 	from, to := alphabet.Fold(formLetters), alphabet.Fold(wordLetters)
 	found := []align.Alignment{align.Align(from, to, align.Unit{})}
 	if all {
@@ -64,37 +73,41 @@ func (p *program) align(form, word string, all, ascii bool) {
 	if !p.outIsTerminal {
 		ability.Plain, ability.Profile = true, termenv.Ascii
 	}
-	grid := alignment.New(style.Make(ability))
-	grid.SetSize(p.columns(), len(rows)+5)
+	sheet := style.Make(ability)
+	grid := alignment.New(sheet)
+	grid.SetSize(p.columns(), len(rows)+4)
 	grid.Lay(letters, rows)
-	for line := range strings.Lines(grid.View()) {
-		p.sayf("%s", strings.TrimRight(line, " \n"))
+	for i, line := range strings.Split(grid.View(), "\n") {
+		if i == 0 { // the bench weighs candidates; here there is one word
+			line = strings.TrimSuffix(line, sheet.Quiet.Render("  cost  share"))
+		}
+		p.sayf("%s", strings.TrimRight(line, " "))
 	}
 	p.sayf("   cost %s", number(found[0].Cost))
 	if all {
 		p.sayAll(letters, rows, align.Count(from, to, align.Unit{}))
 	}
+	return nil
 }
 
 // sayAll says what each alignment does, and how many there are.
 func (p *program) sayAll(letters []string, rows []alignment.Row, count uint64) {
-	p.sayf("")
-	for i, r := range rows {
-		p.sayf("%4d  %s", i+1, alignment.Sentence(letters, r))
-	}
-	total := fmt.Sprint(count)
-	switch {
-	case count == math.MaxUint64:
-		total = fmt.Sprintf("%d or more", count)
-	case count == 1:
-		p.sayf("   1 alignment of this cost")
+	if count == 1 {
+		p.sayf("   no other alignment costs the same")
 		return
 	}
-	more := ""
-	if count > uint64(len(rows)) {
-		more = fmt.Sprintf("; the first %d are shown", len(rows))
+	total := fmt.Sprint(count)
+	if count == math.MaxUint64 {
+		total += " or more"
 	}
-	p.sayf("   %s alignments of this cost%s", total, more)
+	first := ""
+	if count > uint64(len(rows)) {
+		first = fmt.Sprintf("; the first %d", len(rows))
+	}
+	p.sayf("\n   %s alignments cost the same%s:", total, first)
+	for i, r := range rows {
+		p.sayf("%6d  %s", i+1, alignment.Sentence(letters, r))
+	}
 }
 
 // spelt returns letters as they are written.

@@ -34,7 +34,7 @@ is. The manuscript is never written over, whatever -o names.`,
 		},
 	}
 	d.flags(cmd)
-	cmd.Flags().StringVarP(&out, "output", "o", "", "the copy (`OUT`), if not beside the manuscript")
+	cmd.Flags().StringVarP(&out, "output", "o", "", "write the copy to `OUT`, not beside the manuscript")
 	cmd.Flags().BoolVar(&force, "force", false, "replace a copy that is there")
 	return cmd
 }

@@ -91,10 +91,16 @@ func (p *program) candidates(ctx context.Context, w *words, args []string, forma
 	}
 	forms := withoutError(args)
 	if len(args) == 0 {
+		if p.inIsTerminal {
+			p.notef("reading forms from the terminal, one a line; ctrl-d at the end")
+		}
 		forms = lines(p.in, "standard input")
 	}
 	lister := &wordLister{w: p.out, format: format}
 	return inOrder(ctx, forms, func(ctx context.Context, form string) (listed, error) {
+		if len(form) > longestForm {
+			return listed{}, fmt.Errorf("a form of %d bytes; give one word at a time", len(form))
+		}
 		found, err := find(ctx, lex, form)
 		return listed{Form: form, Status: lex.Find(form).Status.String(), Candidates: found}, err
 	}, func(l listed) error {
@@ -105,8 +111,8 @@ func (p *program) candidates(ctx context.Context, w *words, args []string, forma
 	})
 }
 
-// longestForm bounds a line of forms, in bytes.
-const longestForm = 64 << 10
+// longestForm bounds a form, in bytes: the work grows with its square.
+const longestForm = 1 << 10
 
 // lines yields the lines of r that are not blank, without white space around
 // them. Errors name the line.

@@ -17,7 +17,7 @@ func newCompletion(p *program) *cobra.Command {
 		Use:   "completion SHELL",
 		Short: "write completions for a shell",
 		Long: `Write a script that completes commands and flags, for bash, fish, powershell or
-zsh. In bash, for instance, it goes into a file that the shell reads at its start.`,
+zsh. It goes into a file that the shell reads at its start.`,
 		Example: `  emendary completion bash > emendary.bash
   emendary completion zsh > _emendary`,
 		ValidArgs: names,

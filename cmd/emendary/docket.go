@@ -19,7 +19,7 @@ func newDocket(p *program) *cobra.Command {
 		Use:   "docket MANUSCRIPT",
 		Short: "list the entries still to be ruled on",
 		Long: `List the entries of a manuscript still to be ruled on, in the order of review,
-each with its candidates, best first. What stands is only read.
+each with its candidates, best first. Nothing is changed.
 
 Formats: a table to read; tsv with the columns form, kind, count, candidates and
 places (line:column); jsonl with one JSON object a line, costs, shares and the

@@ -149,7 +149,7 @@ func (c listedCandidate) share(format string) string {
 	switch {
 	case c.Share == nil:
 		return ""
-	case *c.Share > 0 && *c.Share < 0.005:
+	case *c.Share < 0.005:
 		return fmt.Sprintf(format, "<1 %")
 	}
 	return fmt.Sprintf(format, fmt.Sprintf("%.0f %%", 100**c.Share))

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"os"
 	"os/user"
+	"strings"
 
 	"github.com/spf13/cobra"
 
@@ -26,10 +27,10 @@ func (w *words) flags(cmd *cobra.Command) {
 		w.variety.allowed = append(w.variety.allowed, v.Flag())
 	}
 	f := cmd.Flags()
-	f.StringVar(&w.lexicon, "lexicon", "", "word list, one word a line, in place of the English base lexicon (`FILE`)")
-	f.Var(&w.variety, "variety", "`VARIETY` of English: any, american, british-ise, british-ize, canadian, australian")
-	f.StringVar(&w.house, "house", "", "house list, by name or file (`LIST`)")
-	f.StringVar(&w.series, "series", "", "series list, by name or file (`LIST`)")
+	f.StringVar(&w.lexicon, "lexicon", "", "take the words of `FILE`, one a line, in place of the English base lexicon")
+	f.Var(&w.variety, "variety", "`VARIETY` of English: "+strings.Join(w.variety.allowed, ", "))
+	f.StringVar(&w.house, "house", "", "the house's `LIST` of words, by name or file")
+	f.StringVar(&w.series, "series", "", "the series' `LIST` of words, by name or file")
 	_ = cmd.RegisterFlagCompletionFunc("variety", cobra.FixedCompletions(w.variety.allowed, cobra.ShellCompDirectiveNoFileComp))
 }
 
@@ -87,10 +88,14 @@ type desk struct {
 
 func (d *desk) flags(cmd *cobra.Command) {
 	f := cmd.Flags()
-	f.StringVar(&d.ledger, "ledger", "", "the ledger, if not beside the manuscript (`FILE`)")
-	f.StringVar(&d.encoding, "encoding", "", "`ENCODING` of the manuscript, if neither UTF-8 nor UTF-16: windows-1252, macintosh, …")
-	f.StringVar(&d.as, "as", "", "`NAME` under which rulings are made, if not yours on this system")
+	f.StringVar(&d.ledger, "ledger", "", "keep the rulings in `FILE`, not beside the manuscript")
+	f.StringVar(&d.encoding, "encoding", "", "`ENCODING` of a manuscript in neither UTF-8 nor UTF-16, such as windows-1252")
 	d.words.flags(cmd)
+}
+
+// signed adds the flag of the commands that make rulings.
+func (d *desk) signed(cmd *cobra.Command) {
+	cmd.Flags().StringVar(&d.as, "as", "", "make rulings as `NAME` rather than under your name on this system")
 }
 
 // open opens a manuscript on the desk; toRead leaves its ledger to others.

@@ -13,7 +13,7 @@ import (
 func newReport(p *program) *cobra.Command {
 	var (
 		d      desk
-		format string
+		format = choice{"", report.Formats()}
 	)
 	cmd := &cobra.Command{
 		Use:   "report NAME MANUSCRIPT",
@@ -23,7 +23,8 @@ func newReport(p *program) *cobra.Command {
   ` + strings.Join(report.Names(), "\n  ") + `
 
 Reports are in Markdown, the rulings in the tab-separated lines that "rule"
-reads; --format asks for another form.`,
+reads; --format asks for another form. The style sheet as tsv is a word list:
+give it to the next book with --series.`,
 		Example: `  emendary report style-sheet manuscript.md
   emendary report rulings manuscript.md > rulings.tsv
   emendary report figures manuscript.md`,
@@ -40,11 +41,12 @@ reads; --format asks for another form.`,
 			return oneOf("report", report.Names())(cmd, args[:1])
 		},
 		RunE: func(cmd *cobra.Command, args []string) error {
-			return p.report(cmd.Context(), &d, args[0], args[1], format)
+			return p.report(cmd.Context(), &d, args[0], args[1], format.value)
 		},
 	}
 	d.flags(cmd)
-	cmd.Flags().StringVar(&format, "format", "", "another `FORMAT`")
+	cmd.Flags().Var(&format, "format", "`FORMAT`: "+strings.Join(format.allowed, ", ")+"; that of the report where none is named")
+	_ = cmd.RegisterFlagCompletionFunc("format", cobra.FixedCompletions(format.allowed, cobra.ShellCompDirectiveNoFileComp))
 	return cmd
 }
 

@@ -38,8 +38,9 @@ NO_COLOR in the environment turns colours off.`,
 		},
 	}
 	d.flags(cmd)
+	d.signed(cmd)
 	cmd.Flags().BoolVar(&ascii, "ascii", false, "signs and marks in ASCII")
-	cmd.Flags().Var(&background, "background", "the terminal's background, dark or light (`GROUND`), where COLORFGBG does not say")
+	cmd.Flags().Var(&background, "background", "`GROUND` of the terminal, dark or light, where COLORFGBG does not say")
 	_ = cmd.RegisterFlagCompletionFunc("background", cobra.FixedCompletions(background.allowed, cobra.ShellCompDirectiveNoFileComp))
 	return cmd
 }

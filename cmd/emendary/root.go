@@ -24,9 +24,9 @@ that no question is asked twice. The manuscript itself is never changed.
 
 Begin here:
 
-  emendary review novel.md               rule on its forms, stop and resume at will
+  emendary review novel.md               rule on its forms; stop at will
   emendary apply novel.md                write novel.emended.md beside it
-  emendary report style-sheet novel.md   the word list, for this book and the next`,
+  emendary report style-sheet novel.md   its word list, for the next book too`,
 		Example: "  emendary\n  emendary --version\n  emendary --help",
 		Version: version(),
 		Args:    known,
@@ -34,11 +34,13 @@ Begin here:
 			p.sayf("%s\n\nAll commands: %s --help. One of them: %s COMMAND --help.", cmd.Long, name, name)
 			return nil
 		},
+		DisableFlagsInUseLine: true,
+
 		SilenceErrors: true, // status prints them
 		SilenceUsage:  true,
 	}
 	root.SetOut(p.out)
-	root.SetErr(p.out) // of cobra's own: nothing but help comes that way
+	root.SetErr(p.notes)
 	root.SetHelpTemplate(helpTemplate)
 	root.SetUsageTemplate(usageTemplate)
 	root.SetVersionTemplate("{{.Version}}\n")
@@ -47,7 +49,10 @@ Begin here:
 	root.AddCommand(newReview(p), newDocket(p), newCandidates(p), newAlign(p), newRule(p),
 		newApply(p), newReport(p), newVersion(p), newCompletion(p))
 	root.SetHelpCommand(newHelp(p))
-	cobra.EnableCommandSorting = false // in the order of the work
+	cobra.EnableCommandSorting = false // they stand in the order of the work
+	for _, c := range root.Commands() {
+		c.DisableFlagsInUseLine = true
+	}
 	return root
 }
 

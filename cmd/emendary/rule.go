@@ -34,10 +34,14 @@ cannot be read, nothing is taken at all, and the exit status is 2.`,
 		},
 	}
 	d.flags(cmd)
+	d.signed(cmd)
 	return cmd
 }
 
 func (p *program) rule(ctx context.Context, d *desk, manuscript string) (err error) {
+	if p.inIsTerminal {
+		p.notef("reading rulings from the terminal; a header line first, ctrl-d at the end")
+	}
 	lines, err := docket.ReadLines(p.in, "standard input")
 	if err != nil {
 		return err
