@@ -49,7 +49,7 @@ func emendedName(manuscript string) string {
 }
 
 func (p *program) apply(ctx context.Context, d *desk, manuscript, out string, force bool) error {
-	s, err := d.open(ctx, manuscript, true, nil)
+	s, err := p.open(ctx, d, manuscript, true)
 	if err != nil {
 		return err
 	}

@@ -38,15 +38,18 @@ substitutes a letter, or transposes two neighbours.`,
   echo lantrn | emendary candidates --format jsonl
   emendary candidates quay --within 1 --format tsv`,
 		RunE: func(cmd *cobra.Command, args []string) error {
-			if !cmd.Flags().Changed("within") {
-				return p.candidates(cmd.Context(), &w, args, format.value, ranked(most), notNegative("-n", most))
+			if err := cmp.Or(notNegative("-n", most), notNegative("--within", within)); err != nil {
+				return err
 			}
-			limit := -1
-			if cmd.Flags().Changed("number") {
-				limit = most
+			find := ranked(most)
+			if cmd.Flags().Changed("within") {
+				limit := -1
+				if cmd.Flags().Changed("number") {
+					limit = most
+				}
+				find = nearby(within, limit)
 			}
-			return p.candidates(cmd.Context(), &w, args, format.value, nearby(within, limit),
-				cmp.Or(notNegative("--within", within), notNegative("-n", most)))
+			return p.candidates(cmd.Context(), &w, args, format.value, find)
 		},
 	}
 	w.flags(cmd)
@@ -81,10 +84,7 @@ func nearby(k, limit int) finder {
 	}
 }
 
-func (p *program) candidates(ctx context.Context, w *words, args []string, format string, find finder, err error) error {
-	if err != nil {
-		return err
-	}
+func (p *program) candidates(ctx context.Context, w *words, args []string, format string, find finder) error {
 	lex, err := w.load()
 	if err != nil {
 		return err
@@ -98,8 +98,8 @@ func (p *program) candidates(ctx context.Context, w *words, args []string, forma
 	}
 	lister := &wordLister{w: p.out, format: format}
 	return inOrder(ctx, forms, func(ctx context.Context, form string) (listed, error) {
-		if len(form) > longestForm {
-			return listed{}, fmt.Errorf("a form of %d bytes; give one word at a time", len(form))
+		if len(form) > longestForm || !utf8.ValidString(form) {
+			return listed{}, fmt.Errorf("candidates: %.40q is no word; give words in UTF-8, of %d bytes at most", form, longestForm)
 		}
 		found, err := find(ctx, lex, form)
 		return listed{Form: form, Status: lex.Find(form).Status.String(), Candidates: found}, err

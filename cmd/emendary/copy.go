@@ -23,7 +23,7 @@ func placeForCopy(out string, force bool, keep ...string) (string, error) {
 		return out, nil
 	}
 	if err != nil {
-		return "", fileError(out, err)
+		return "", fmt.Errorf("%s: %w; name another place with -o OUT", out, cause(err))
 	}
 	there, err := os.Stat(target)
 	if err != nil {

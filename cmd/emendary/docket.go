@@ -22,8 +22,13 @@ func newDocket(p *program) *cobra.Command {
 each with its candidates, best first. Nothing is changed.
 
 Formats: a table to read; tsv with the columns form, kind, count, candidates and
-places (line:column); jsonl with one JSON object a line, costs, shares and the
-bytes of the file included.`,
+places (line:column); jsonl with one JSON object a line,
+
+  {"form","kind","count","candidates":[{"word","cost","share"}…],
+   "places":[{"part","line","column","span":[start,end]}…]}
+
+where part, line and column count from 1, the column in letters, and span is
+bytes of the file.`,
 		Example: `  emendary docket manuscript.md
   emendary docket manuscript.md --format jsonl -n 1`,
 		Args: oneManuscript,
@@ -47,9 +52,7 @@ func (p *program) docket(ctx context.Context, d *desk, manuscript, format string
 	if err := notNegative("-n", most); err != nil {
 		return err
 	}
-	m := newMeter(p.notes, p.notesIsTerminal)
-	defer m.clear()
-	s, err := d.open(ctx, manuscript, true, func(done, total int) { m.step("reading", done, total) })
+	s, err := p.open(ctx, d, manuscript, true)
 	if err != nil {
 		return err
 	}
@@ -60,26 +63,30 @@ func (p *program) docket(ctx context.Context, d *desk, manuscript, format string
 			open = append(open, e)
 		}
 	}
+	if len(open) == 0 {
+		p.notef("%s: nothing is open", manuscript)
+	}
+	m := &meter{} // none on a terminal that shows the list itself
+	if !p.outIsTerminal {
+		m = p.meter("looking for candidates")
+	}
+	defer m.clear()
 	lister := newEntryLister(p.out, format, open)
 	done := 0
-	err = inOrder(ctx, withoutError(open), func(ctx context.Context, e *docket.Entry) (listed, error) {
-		found, err := s.Docket.Candidates(ctx, e, most)
-		return listed{Form: e.Form, Kind: e.Kind, Candidates: listCandidates(found), Places: listPlaces(s.Docket, e)}, err
-	}, func(l listed) error {
-		if !p.outIsTerminal { // there, the list itself shows how far it has come
-			done++
-			m.step("looking for candidates", done, len(open))
-		} else {
-			m.clear()
+	return inOrder(ctx, withoutError(open), func(ctx context.Context, e *docket.Entry) (listed, error) {
+		l := listed{Form: e.Form, Kind: e.Kind, Candidates: []listedCandidate{}, Places: listPlaces(s.Docket, e)}
+		if most == 0 {
+			return l, nil
 		}
+		found, err := s.Docket.Candidates(ctx, e, most)
+		l.Candidates = listCandidates(found)
+		return l, err
+	}, func(l listed) error {
+		done++
+		m.step(done, len(open))
 		if err := lister.write(l); err != nil {
 			return err
 		}
 		return p.flush()
 	})
-	if err == nil && len(open) == 0 {
-		m.clear()
-		p.notef("%s: nothing is open", manuscript)
-	}
-	return err
 }

@@ -29,6 +29,7 @@ func commands() []*cobra.Command {
 func TestExamplesRun(t *testing.T) {
 	for _, c := range commands() {
 		t.Run(c.CommandPath(), func(t *testing.T) {
+			t.Parallel()
 			require.NotEmpty(t, c.Example)
 			for _, line := range strings.Split(c.Example, "\n") {
 				require.Contains(t, line, c.CommandPath())

@@ -22,7 +22,9 @@ func main() { os.Exit(run(os.Args[1:], os.Stdin, os.Stdout, os.Stderr)) }
 
 // run carries out one command line and returns the exit status.
 func run(args []string, in io.Reader, out, notes io.Writer) int {
-	ctx, release := heedSignals(context.Background())
+	all, end := context.WithCancel(context.Background())
+	defer end()
+	ctx, release := heedSignals(all)
 	defer release()
 	p := &program{in: &interruptible{ctx, in}, printer: newPrinter(in, out, notes), release: release}
 	root := newRoot(p)

@@ -54,11 +54,14 @@ func (w *words) load() (*lexicon.Lexicon, error) {
 		variety = chosen
 	}
 	lex := lexicon.New(base, variety)
-	for layer, list := range map[lexicon.Layer]string{lexicon.House: w.house, lexicon.Series: w.series} {
-		if list == "" {
+	for _, l := range []struct {
+		layer lexicon.Layer
+		list  string
+	}{{lexicon.House, w.house}, {lexicon.Series, w.series}} {
+		if l.list == "" {
 			continue
 		}
-		path, err := shelf.Find(list)
+		path, err := shelf.Find(l.list)
 		if err != nil {
 			return nil, err
 		}
@@ -66,7 +69,7 @@ func (w *words) load() (*lexicon.Lexicon, error) {
 		if err != nil {
 			return nil, err
 		}
-		lex = lex.With(layer, loaded)
+		lex = lex.With(l.layer, loaded)
 	}
 	return lex, nil
 }
@@ -99,9 +102,11 @@ func (d *desk) signed(cmd *cobra.Command) {
 }
 
 // open opens a manuscript on the desk; toRead leaves its ledger to others.
-func (d *desk) open(ctx context.Context, manuscript string, toRead bool, progress func(done, total int)) (*docket.Session, error) {
+func (p *program) open(ctx context.Context, d *desk, manuscript string, toRead bool) (*docket.Session, error) {
+	m := p.meter("reading")
+	defer m.clear()
 	return docket.Start(ctx, docket.Options{
-		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: progress,
+		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: m.step,
 		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series,
 	})
 }

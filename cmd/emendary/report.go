@@ -51,7 +51,7 @@ give it to the next book with --series.`,
 }
 
 func (p *program) report(ctx context.Context, d *desk, which, manuscript, format string) error {
-	s, err := d.open(ctx, manuscript, true, nil)
+	s, err := p.open(ctx, d, manuscript, true)
 	if err != nil {
 		return err
 	}

@@ -49,7 +49,7 @@ func (p *program) review(ctx context.Context, d *desk, manuscript string, opt ui
 	if !p.outIsTerminal || !p.inIsTerminal {
 		return fmt.Errorf("review needs a terminal; without one, %s docket lists the entries and %s rule takes rulings", name, name)
 	}
-	s, err := d.open(ctx, manuscript, false, nil)
+	s, err := p.open(ctx, d, manuscript, false)
 	if err != nil {
 		return err
 	}

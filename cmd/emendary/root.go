@@ -12,6 +12,9 @@ import (
 	"emendary/align"
 )
 
+// Help lists the commands in the order of the work.
+func init() { cobra.EnableCommandSorting = false }
+
 // newRoot returns the whole command line. It is made anew for each run: commands
 // hold the values of their flags.
 func newRoot(p *program) *cobra.Command {
@@ -49,7 +52,6 @@ Begin here:
 	root.AddCommand(newReview(p), newDocket(p), newCandidates(p), newAlign(p), newRule(p),
 		newApply(p), newReport(p), newVersion(p), newCompletion(p))
 	root.SetHelpCommand(newHelp(p))
-	cobra.EnableCommandSorting = false // they stand in the order of the work
 	for _, c := range root.Commands() {
 		c.DisableFlagsInUseLine = true
 	}

@@ -46,7 +46,7 @@ func (p *program) rule(ctx context.Context, d *desk, manuscript string) (err err
 	if err != nil {
 		return err
 	}
-	s, err := d.open(ctx, manuscript, false, nil)
+	s, err := p.open(ctx, d, manuscript, false)
 	if err != nil {
 		return err
 	}

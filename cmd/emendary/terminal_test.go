@@ -1,8 +1,11 @@
 package main
 
 import (
+	"bufio"
 	"bytes"
 	"context"
+	"io"
+	"math/rand/v2"
 	"os"
 	"os/exec"
 	"path/filepath"
@@ -186,4 +189,28 @@ func TestAnInterruptEndsWaiting(t *testing.T) {
 			assert.NoFileExists(t, filepath.Join(folder, "m.md.ledger"))
 		})
 	}
+}
+
+// An interrupt in the middle of a long listing ends it; what is out stays.
+func TestAnInterruptEndsALongListing(t *testing.T) {
+	folder := t.TempDir()
+	manuscript := writeFile(t, folder, "novel.md", writeNovel(rand.New(rand.NewPCG(3, 3)), 15_000).slips)
+	cmd := exec.Command("emendary", "docket", manuscript, "--format", "jsonl", "-n", "9")
+	cmd.Env = append(os.Environ(), environment(folder)...)
+	var notes bytes.Buffer
+	cmd.Stderr = &notes
+	out, err := cmd.StdoutPipe()
+	require.NoError(t, err)
+	require.NoError(t, cmd.Start())
+	listing := bufio.NewReader(out)
+	_, err = listing.ReadString('\n')
+	require.NoError(t, err)
+	// It cannot be through: the listing is longer than a pipe holds.
+	require.NoError(t, cmd.Process.Signal(syscall.SIGINT))
+	rest, err := io.ReadAll(listing)
+	require.NoError(t, err)
+	assert.True(t, bytes.HasSuffix(rest, []byte("}\n")), "a line is cut short")
+	_ = cmd.Wait()
+	assert.Equal(t, 130, cmd.ProcessState.ExitCode())
+	assert.Empty(t, notes.String())
 }

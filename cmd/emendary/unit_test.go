@@ -192,24 +192,23 @@ func TestAReaderGivesUpWaiting(t *testing.T) {
 func TestTheMeterShowsLongWorkAlone(t *testing.T) {
 	var screen bytes.Buffer
 	now := time.Unix(0, 0)
-	m := &meter{w: &screen, now: func() time.Time { return now }, began: now}
-	m.step("reading", 1, 10)
+	m := &meter{w: &screen, what: "reading", now: func() time.Time { return now }, began: now}
+	m.step(1, 10)
 	now = now.Add(patience - 1)
-	m.step("reading", 2, 10)
+	m.step(2, 10)
 	assert.Empty(t, screen.String())
 	now = now.Add(1)
-	m.step("reading", 3, 10)
-	assert.Contains(t, screen.String(), "reading")
-	m.step("looking for candidates", 1, 2)
-	assert.Contains(t, screen.String(), "looking for candidates")
+	m.step(3, 10)
+	assert.Contains(t, screen.String(), "reading  30%")
 	m.clear()
 	assert.True(t, strings.HasSuffix(screen.String(), "\r"), "%q", screen.String())
 
-	quiet := newMeter(&screen, false)
-	before := screen.Len()
-	quiet.step("reading", 1, 1)
+	screen.Reset()
+	p := &program{printer: newPrinter(nil, io.Discard, &screen)} // no terminal
+	quiet := p.meter("reading")
+	quiet.step(1, 1)
 	quiet.clear()
-	assert.Equal(t, before, screen.Len())
+	assert.Empty(t, screen.String())
 }
 
 func TestACopyIsWrittenWholeAndKeepsTheMode(t *testing.T) {
