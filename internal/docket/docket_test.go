@@ -30,6 +30,7 @@ func TestWhatGoesOnTheDocket(t *testing.T) {
 		{"a wrong ordinal does", "On the 2th of May.", []string{"2th"}, UnknownForm},
 		{"a letter for a digit does", "In l894 it froze.", []string{"l894"}, UnknownForm},
 		{"a turned apostrophe does", "And ‘tis cold.", []string{"‘tis"}, UnknownForm},
+		{"an elision curled shut does", "Tell ’en so, o’ course.", []string{"'en", "o'"}, UnknownForm},
 		{"numbers, numerals and initials do not", "In 1894 the 2nd lamp of J. R. Smith, no. XIV, cost £1,200 at B12.", []string{}, ""},
 		{"a compound of known members does not", "The harbour-master and the non-pilot.", []string{}, ""},
 		{"a compound with an unknown member does", "The harber-master slept.", []string{"harber-master"}, UnknownForm},

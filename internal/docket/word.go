@@ -36,11 +36,12 @@ func part(p *manuscript.Paragraph, w manuscript.Word, lex *lexicon.Lexicon) part
 		base, tail = clitic(base, tail)
 	}
 	if w.Traits&manuscript.Elision != 0 && !known(lex, base) {
-		// An apostrophe that the splitter could not tell from a quotation mark.
-		if trimmed := strings.TrimRight(base, straight+curly); trimmed != base && known(lex, trimmed) {
+		// An apostrophe that the splitter could not tell from a quotation mark; one
+		// that is curled shut opens no quotation, and a letter alone is cut short.
+		if trimmed := strings.TrimRight(base, straight+curly); trimmed != base && len(trimmed) > 1 && known(lex, trimmed) {
 			base, tail = trimmed, base[len(trimmed):]+tail
 		}
-		if trimmed := strings.TrimLeft(base, straight+curly); trimmed != base && known(lex, trimmed) {
+		if trimmed := strings.TrimLeft(base, straight); trimmed != base && known(lex, trimmed) {
 			lead, base = lead+base[:len(base)-len(trimmed)], trimmed
 		}
 	}
