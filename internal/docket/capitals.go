@@ -54,16 +54,6 @@ func capitalise(s string) string {
 	return s
 }
 
-// uncapitalise takes the capital of the first letter away.
-func uncapitalise(s string) string {
-	for i, r := range s {
-		if unicode.IsLetter(r) {
-			return s[:i] + string(unicode.ToLower(r)) + s[i+utf8.RuneLen(r):]
-		}
-	}
-	return s
-}
-
 // carry returns word, which was chosen for form, with the capitals that it needs
 // where the form stands as occurrence: HARBER for harber makes HARBOUR of harbour.
 // A capital that word has of its own is kept unless plain says that the word is
