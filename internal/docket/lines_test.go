@@ -57,6 +57,12 @@ func TestOneLineServesAllCapitals(t *testing.T) {
 	assert.Equal(t, "Although it froze, and although it thawed, old Although.", emended(t, s))
 }
 
+func TestALineMayGiveTheFormWithItsEnding(t *testing.T) {
+	s := desk(t, "The harber’s edge, the lantrns' light.")
+	assert.Empty(t, take(t, s, "form\truling\tword\nharber's\taccept\tharbour’s\nlantrns'\taccept\tlanterns'\n"))
+	assert.Equal(t, "The harbour’s edge, the lanterns' light.", emended(t, s))
+}
+
 func TestContradictionsAreReportedAndNothingIsOverridden(t *testing.T) {
 	s := desk(t, "A harber, a lantrn.")
 	rule(t, s, "harber", ledger.Reject, "")

@@ -4,8 +4,10 @@ import (
 	"cmp"
 	"fmt"
 	"slices"
+	"strings"
 
 	"emendary/internal/ledger"
+	"emendary/internal/manuscript"
 )
 
 // Dispute is a line that was not taken, and why.
@@ -21,7 +23,8 @@ type Dispute struct {
 func (d *Docket) RulingsFrom(lines []Line) ([]ledger.Ruling, []Dispute) {
 	m := &matching{d: d, exact: map[string]*Line{}, folded: map[string][]*Line{}, claims: map[*Entry][]*Line{}}
 	for i := range lines {
-		m.sort(&lines[i])
+		l := d.withoutEnding(lines[i])
+		m.sort(&l)
 	}
 	for _, l := range m.placed {
 		m.claimPlaces(l)
@@ -47,6 +50,17 @@ type matching struct {
 	claims   map[*Entry][]*Line // the line for each occurrence, nil for none
 	entries  []*Entry           // those with claims, in order
 	disputes []Dispute
+}
+
+// withoutEnding takes a possessive off the form and the word of a line, where the
+// manuscript has the form only without: entries fold over endings.
+func (d *Docket) withoutEnding(l Line) Line {
+	base, ending := manuscript.Base(l.Form)
+	if ending == "" || d.use[key(l.Form)] > 0 || d.use[key(base)] == 0 {
+		return l
+	}
+	l.Form, l.Word = base, strings.TrimSuffix(plainApostrophe(l.Word), ending)
+	return l
 }
 
 func (m *matching) dispute(l *Line, format string, args ...any) {
