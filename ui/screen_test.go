@@ -93,7 +93,7 @@ func TestTheEndAndFailuresFitToo(t *testing.T) {
 func TestATerminalTooSmallIsToldSo(t *testing.T) {
 	h := ready(t, storm)
 	h.send(tea.WindowSizeMsg{Width: 59, Height: 18})
-	assert.Contains(t, h.screen(), "the bench needs 60 columns and 18 lines")
+	assert.Contains(t, h.screen(), "the bench needs 60×18")
 	h.press("q")
 	assert.True(t, h.quit)
 }

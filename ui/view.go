@@ -37,8 +37,9 @@ func (m Model) View() string {
 	case m.width == 0:
 		return ""
 	case m.tooSmall():
-		return text.Cut(fmt.Sprintf("the bench needs %d columns and %d lines; there are %d and %d",
-			leastWidth, leastHeight, m.width, m.height), m.width, "")
+		times := m.sheet.Signs.Times
+		return text.Cut(fmt.Sprintf("the bench needs %d%s%d; this screen is %d%s%d",
+			leastWidth, times, leastHeight, m.width, times, m.height), m.width, "")
 	}
 	lines := []string{m.head(), m.sheet.Quiet.Render(" " + strings.Repeat(m.sheet.Signs.Rule, m.width-2))}
 	keys := m.footer()

@@ -108,8 +108,11 @@ func (s search) within(form string) []lexicon.Near {
 }
 
 func (s search) words(form string, kind Kind, add func(weighed)) {
+	letters := len(s.lex.Alphabet().Letters(form))
 	for _, near := range s.within(form) {
-		add(s.weigh(form, near.Word, near.Distance, kind, like(form, near.Word.Text)))
+		if near.Distance < letters { // else no letter of the form is left
+			add(s.weigh(form, near.Word, near.Distance, kind, like(form, near.Word.Text)))
+		}
 	}
 }
 
