@@ -33,7 +33,7 @@ how many there are.`,
 		Example: `  emendary align harber harbour
   emendary align nieghbour neighbour --ascii
   emendary align goverment government --all`,
-		Args: takes(2, 2, "form"),
+		Args: takes(2, "form"),
 		RunE: func(_ *cobra.Command, args []string) error {
 			return p.align(args[0], args[1], all, ascii)
 		},

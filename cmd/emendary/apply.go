@@ -25,7 +25,7 @@ for novel.md, or what -o names. Every byte that no emendation is on stays as it
 is. The manuscript is never written over, whatever -o names.`,
 		Example: `  emendary apply manuscript.md
   emendary apply manuscript.md -o copy.md --force`,
-		Args: takes(1, 1, "manuscript"),
+		Args: takes(1, "manuscript"),
 		RunE: func(cmd *cobra.Command, args []string) error {
 			if out == "" {
 				out = emendedName(args[0])

@@ -35,7 +35,7 @@ give it to the next book with --series.`,
 			return nil, cobra.ShellCompDirectiveDefault
 		},
 		Args: func(cmd *cobra.Command, args []string) error {
-			if err := takes(2, 2, "report")(cmd, args); err != nil {
+			if err := takes(2, "report")(cmd, args); err != nil {
 				return err
 			}
 			return oneOf("report", report.Names())(cmd, args[:1])

@@ -51,7 +51,7 @@ Begin here:
 	root.CompletionOptions.DisableDefaultCmd = true
 	root.AddCommand(newReview(p), newDocket(p), newCandidates(p), newAlign(p), newRule(p),
 		newApply(p), newReport(p), newVersion(p), newCompletion(p))
-	root.SetHelpCommand(newHelp(p))
+	root.SetHelpCommand(newHelp())
 	for _, c := range root.Commands() {
 		c.DisableFlagsInUseLine = true
 	}
@@ -76,8 +76,8 @@ flags:
 {{.LocalFlags.FlagUsages | trimTrailingWhitespaces}}
 {{end}}`
 
-// newHelp returns the command "help", which names no command that is not there.
-func newHelp(*program) *cobra.Command {
+// newHelp returns the command that shows how another is used.
+func newHelp() *cobra.Command {
 	return &cobra.Command{
 		Use:     "help [COMMAND]",
 		Short:   "show how a command is used",
@@ -177,17 +177,16 @@ func nearest(given string, names []string) string {
 	return best
 }
 
-// takes returns a check that there are between least and most arguments (no
-// upper limit below 0); what names them.
-func takes(least, most int, what string) cobra.PositionalArgs {
+// takes returns a check that there are n arguments; what names the first.
+func takes(n int, what string) cobra.PositionalArgs {
 	return func(cmd *cobra.Command, args []string) error {
 		switch {
-		case len(args) < least && len(args) == 0:
+		case len(args) == 0 && n > 0:
 			return fmt.Errorf("%s: no %s given; type %s", cmd.Name(), what, cmd.UseLine())
-		case len(args) < least:
+		case len(args) < n:
 			return fmt.Errorf("%s: something is missing after %s; type %s", cmd.Name(), args[len(args)-1], cmd.UseLine())
-		case most >= 0 && len(args) > most:
-			return fmt.Errorf("%s: %q is too much; type %s", cmd.Name(), args[most], cmd.UseLine())
+		case len(args) > n:
+			return fmt.Errorf("%s: %q is too much; type %s", cmd.Name(), args[n], cmd.UseLine())
 		}
 		return nil
 	}
@@ -198,14 +197,14 @@ func oneManuscript(cmd *cobra.Command, args []string) error {
 	if len(args) > 1 {
 		return fmt.Errorf("%s: %d manuscripts given; name one, a book of several files cannot be read yet", cmd.Name(), len(args))
 	}
-	return takes(1, 1, "manuscript")(cmd, args)
+	return takes(1, "manuscript")(cmd, args)
 }
 
 // oneOf returns a check that there is one argument, out of a few; what says of
 // what kind they are.
 func oneOf(what string, names []string) cobra.PositionalArgs {
 	return func(cmd *cobra.Command, args []string) error {
-		if err := takes(1, 1, what)(cmd, args); err != nil || slices.Contains(names, args[0]) {
+		if err := takes(1, what)(cmd, args); err != nil || slices.Contains(names, args[0]) {
 			return err
 		}
 		if near := nearest(args[0], names); near != "" {

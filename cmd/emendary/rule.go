@@ -28,7 +28,7 @@ named on standard error and not ruled on, and the exit status is 1. Where lines
 cannot be read, nothing is taken at all, and the exit status is 2.`,
 		Example: `  printf 'form\truling\tword\nharber\taccept\tharbour\n' | emendary rule manuscript.md
   emendary report rulings manuscript.md | emendary rule manuscript.md`,
-		Args: takes(1, 1, "manuscript"),
+		Args: takes(1, "manuscript"),
 		RunE: func(cmd *cobra.Command, args []string) error {
 			return p.rule(cmd.Context(), &d, args[0])
 		},

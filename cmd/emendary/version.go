@@ -15,7 +15,7 @@ func newVersion(p *program) *cobra.Command {
 		Use:     "version",
 		Short:   "show the version and what the base lexicon is made from",
 		Example: "  emendary version",
-		Args:    takes(0, 0, ""),
+		Args:    takes(0, ""),
 		Run: func(*cobra.Command, []string) {
 			p.sayf("%s %s", name, version())
 			p.sayf("%s %s/%s", runtime.Version(), runtime.GOOS, runtime.GOARCH)
