@@ -23,9 +23,9 @@ lines under a header with the columns form, ruling and word, and where needed
 list, scope, place, kind, note, query, to, who and time. A ruling is accept,
 reject, add, query or later. "report rulings" writes the same lines.
 
-A form that is ruled otherwise already, or by two lines, is in dispute: it is
-named on standard error and not ruled on, and the exit status is 1. Where lines
-cannot be read, nothing is taken at all, and the exit status is 2.`,
+A line is in dispute where a ruling in force, or an earlier line, says otherwise
+of its form: it is named on standard error and not taken, and the exit status is
+1. Where a line cannot be read, none is taken, and the exit status is 2.`,
 		Example: `  printf 'form\truling\tword\nharber\taccept\tharbour\n' | emendary rule manuscript.md
   emendary report rulings manuscript.md | emendary rule manuscript.md`,
 		Args: takes(1, "manuscript"),
