@@ -68,7 +68,8 @@ func (o Options) program() string {
 // terminal goes away. A ruling that is being written then is written to its end.
 // The terminal is left as it was, also after a crash, which comes back as an error.
 func Run(ctx context.Context, session *docket.Session, opt Options) error {
-	options := []tea.ProgramOption{tea.WithContext(ctx), tea.WithAltScreen()}
+	// Bubble Tea leaves less tidily on SIGINT than on the others: heed all alike.
+	options := []tea.ProgramOption{tea.WithContext(ctx), tea.WithAltScreen(), tea.WithoutSignalHandler()}
 	if opt.Input != nil {
 		options = append(options, tea.WithInput(opt.Input))
 	}
@@ -79,21 +80,18 @@ func Run(ctx context.Context, session *docket.Session, opt Options) error {
 	defer cancel()
 	program := tea.NewProgram(New(work, session, opt), options...)
 
-	hangup := make(chan os.Signal, 1)
-	signal.Notify(hangup, syscall.SIGHUP)
-	defer signal.Stop(hangup)
+	leave := make(chan os.Signal, 1)
+	signal.Notify(leave, syscall.SIGINT, syscall.SIGTERM, syscall.SIGHUP)
+	defer signal.Stop(leave)
 	go func() {
 		select {
-		case <-hangup:
+		case <-leave:
 			program.Quit()
 		case <-work.Done():
 		}
 	}()
 
 	final, err := program.Run()
-	if errors.Is(err, tea.ErrInterrupted) {
-		err = nil // SIGINT leaves the bench as ctrl+c does
-	}
 	if m, ok := final.(Model); ok && !errors.Is(err, tea.ErrProgramPanic) {
 		err = errors.Join(err, m.finish())
 	}
