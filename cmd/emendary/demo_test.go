@@ -29,8 +29,9 @@ const enough = time.Minute
 // bench is the program's bench on a terminal, read off its screen as an editor does.
 type bench struct {
 	*terminal
-	screen *vt.Emulator
-	ctx    context.Context
+	emulator *vt.Emulator
+	screen   string // what the emulator shows
+	ctx      context.Context
 }
 
 // review opens the bench on a manuscript.
@@ -39,13 +40,13 @@ func review(t *testing.T, manuscript string) *bench {
 	ctx, cancel := context.WithTimeout(context.Background(), enough)
 	t.Cleanup(cancel)
 	cmd := exec.Command("emendary", "review", filepath.Base(manuscript), "--as", "Anna")
-	b := &bench{startOn(t, cmd, filepath.Dir(manuscript)), nil, ctx}
+	b := &bench{terminal: startOn(t, cmd, filepath.Dir(manuscript)), ctx: ctx}
 	rows, columns, err := pty.Getsize(b.pty)
 	require.NoError(t, err)
-	b.screen = vt.NewEmulator(columns, rows)
+	b.emulator = vt.NewEmulator(columns, rows)
 	// What the screen would answer goes nowhere. It is never closed: its Close races
 	// with its Read.
-	go func() { _, _ = io.Copy(io.Discard, b.screen) }()
+	go func() { _, _ = io.Copy(io.Discard, b.emulator) }()
 	return b
 }
 
@@ -59,7 +60,8 @@ func (b *bench) wait(what string, wanted func() bool) {
 				b.t.Fatalf("the program ended before the screen showed %s:\n%s", what, b.screen)
 			}
 			b.raw.Write(chunk)
-			_, _ = b.screen.Write(chunk)
+			_, _ = b.emulator.Write(chunk)
+			b.screen = b.emulator.String()
 		case <-b.ctx.Done():
 			b.t.Fatalf("the screen never showed %s:\n%s", what, b.screen)
 		}
@@ -70,30 +72,31 @@ func (b *bench) wait(what string, wanted func() bool) {
 func (b *bench) until(texts ...string) {
 	b.t.Helper()
 	b.wait(fmt.Sprintf("%q", texts), func() bool {
-		s := b.screen.String()
-		return !slices.ContainsFunc(texts, func(text string) bool { return !strings.Contains(s, text) })
+		return !slices.ContainsFunc(texts, func(text string) bool { return !strings.Contains(b.screen, text) })
 	})
 }
 
 // What is where on the screen.
 var (
-	heads       = regexp.MustCompile(`(?m)^(?: +\d+ to \d+ of \d+)? +(\S.*?) +cost  share`)
-	loneHeads   = regexp.MustCompile(`(?m)^ +(\S.*?) *\n.*no word is near this form`)
-	candidate   = regexp.MustCompile(`(?m)^ [▸ ] \S.* (?:<1|\d+) %`)
-	candidates  = regexp.MustCompile(`(?m)^ +\d+ to \d+ of (\d+) .*cost  share`)
-	rowInFocus  = regexp.MustCompile(`(?m)^ ▸ (\S.*?)  `)
-	tally       = regexp.MustCompile(`(\d+ open.* quer(?:y|ies))`)
-	ruledCount  = regexp.MustCompile(`(\d+) ruled`)
-	checked     = regexp.MustCompile(`concordance · (\d+) of \d+ checked`)
-	citations   = regexp.MustCompile(`concordance · \d+ of (\d+) checked`)
-	firstInLine = regexp.MustCompile(`▸concordance · \d+ of \d+ checked *(?:1 to \d+ *)?\n(▸)`)
-	citation    = regexp.MustCompile(`(?m)^(▸[✓ ] .*)$`)
-	kindOfWord  = regexp.MustCompile(`(?m)^ ▸kind .*\[(.*)\]`)
+	heads        = regexp.MustCompile(`(?m)^(?: +\d+ to \d+ of \d+)? +(\S.*?) +cost  share`)
+	loneHeads    = regexp.MustCompile(`(?m)^ +(\S.*?) *\n.*no word is near this form`)
+	candidate    = regexp.MustCompile(`(?m)^ [▸ ] (\S.*?)  .* (?:<1|\d+) %`)
+	candidates   = regexp.MustCompile(`(?m)^ +\d+ to \d+ of (\d+) .*cost  share`)
+	lastOnScreen = regexp.MustCompile(`(?m)^ +\d+ to (\d+) of \d+ .*cost  share`)
+	rowInFocus   = regexp.MustCompile(`(?m)^ ▸ (\S.*?)  `)
+	tally        = regexp.MustCompile(`(\d+ open.* quer(?:y|ies))`)
+	ruledCount   = regexp.MustCompile(`(\d+) ruled`)
+	checked      = regexp.MustCompile(`concordance · (\d+) of \d+ checked`)
+	citations    = regexp.MustCompile(`concordance · \d+ of (\d+) checked`)
+	firstInLine  = regexp.MustCompile(`▸concordance · \d+ of \d+ checked *(?:1 to \d+ *)?\n(▸)`)
+	citation     = regexp.MustCompile(`(?m)^(▸[✓ ] .*)$`)
+	kinds        = regexp.MustCompile(`(?m)^ ▸kind +(.*)$`)
+	kindOfWord   = regexp.MustCompile(`(?m)^ ▸kind .*\[(.*)\]`)
 )
 
 // find returns what the group of an expression matches on screen; "" for nothing.
 func (b *bench) find(expression *regexp.Regexp) string {
-	if m := expression.FindStringSubmatch(b.screen.String()); m != nil {
+	if m := expression.FindStringSubmatch(b.screen); m != nil {
 		return m[1]
 	}
 	return ""
@@ -132,26 +135,37 @@ func (b *bench) ruled(keys, message string) {
 	before := b.find(tally)
 	b.typeKeys(keys)
 	b.wait(message, func() bool {
-		return b.find(tally) != before && strings.Contains(bare(b.screen.String()), bare(message))
+		return b.find(tally) != before && strings.Contains(bare(b.screen), bare(message))
 	})
 }
 
 // chooses moves to the candidate that is word, and reports whether there is one.
 func (b *bench) chooses(word string) bool {
 	b.t.Helper()
-	rows := b.number(candidates)
-	if rows == 0 { // all are on screen
-		rows = len(candidate.FindAllString(b.screen.String(), -1))
+	rows := b.rows()
+	if !slices.Contains(rows, word) && b.number(candidates) > len(rows) { // the rest is further down
+		b.typeKeys(strings.Repeat("j", b.number(candidates)))
+		b.wait("the last candidate under the cursor", func() bool {
+			rows = b.rows()
+			return len(rows) > 0 && b.number(lastOnScreen) == b.number(candidates) && b.find(rowInFocus) == rows[len(rows)-1]
+		})
 	}
-	for row := 1; b.find(rowInFocus) != word; row++ {
-		if row >= rows {
-			return false
-		}
-		above := b.find(rowInFocus)
-		b.typeKeys("j")
-		b.wait("the row below "+above, func() bool { return b.find(rowInFocus) != above })
+	at, to := slices.Index(rows, b.find(rowInFocus)), slices.Index(rows, word)
+	if to < 0 {
+		return false
 	}
+	b.typeKeys(strings.Repeat("k", max(0, at-to)) + strings.Repeat("j", max(0, to-at)))
+	b.wait(word+" under the cursor", func() bool { return b.find(rowInFocus) == word })
 	return true
+}
+
+// rows returns the candidates on screen, from the top.
+func (b *bench) rows() []string {
+	var out []string
+	for _, m := range candidate.FindAllStringSubmatch(b.screen, -1) {
+		out = append(out, m[1])
+	}
+	return out
 }
 
 // checksAll checks every citation.
@@ -200,12 +214,11 @@ func (b *bench) rules(form string, right docket.Line) {
 	case ledger.Add:
 		b.checksAll()
 		b.press("s", "list        [book]", "▸kind")
-		for b.find(kindOfWord) != right.Kind {
-			before := b.find(kindOfWord)
-			b.typeKeys("l")
-			b.wait("the kind after "+before, func() bool { return b.find(kindOfWord) != before })
-		}
-		b.ruled("\r", "added "+form+" to the book list as "+right.Kind)
+		kinds := strings.Fields(strings.NewReplacer("[", " ", "]", " ").Replace(b.find(kinds)))
+		from, to := slices.Index(kinds, b.find(kindOfWord)), slices.Index(kinds, right.Kind)
+		require.True(b.t, from >= 0 && to >= 0, b.screen)
+		b.ruled(strings.Repeat("h", max(0, from-to))+strings.Repeat("l", max(0, to-from))+"\r",
+			"added "+form+" to the book list as "+right.Kind)
 	case ledger.Query:
 		b.checksAll()
 		b.press("a"+right.Query, "[alone]", "[author]")
@@ -239,7 +252,7 @@ func TestReviewOfTheWholeDemo(t *testing.T) {
 	asked := map[string]int{}
 	for {
 		b.wait("an entry, or that none is open", func() bool {
-			return b.form() != "" || strings.Contains(b.screen.String(), "Nothing is open")
+			return b.form() != "" || strings.Contains(b.screen, "Nothing is open")
 		})
 		form := b.form()
 		if form == "" {
@@ -355,12 +368,12 @@ func TestATerminalOfAnotherSizeShowsTheSameEntry(t *testing.T) {
 	b.press("jjj", "▸ harbour")
 	foot := regexp.MustCompile("f accept|jk row")
 	for _, size := range []struct{ columns, rows int }{{160, 50}, {60, 18}, {80, 24}} {
-		b.screen.Resize(size.columns, size.rows)
+		b.emulator.Resize(size.columns, size.rows)
 		require.NoError(t, pty.Setsize(b.pty, &pty.Winsize{Cols: uint16(size.columns), Rows: uint16(size.rows)}))
 		// The head and the foot are drawn for this size, the entry between them.
 		rule := regexp.MustCompile(fmt.Sprintf(`(?m)^ (─{%d}) ?$`, size.columns-2))
 		b.wait(fmt.Sprintf("a bench of %d × %d", size.columns, size.rows), func() bool {
-			lines := strings.Split(b.screen.String(), "\n")
+			lines := strings.Split(b.screen, "\n")
 			return b.find(rule) != "" && foot.MatchString(lines[len(lines)-1])
 		})
 		assert.Equal(t, "harber", b.form(), "%d × %d:\n%s", size.columns, size.rows, b.screen)
