@@ -82,6 +82,8 @@ type Model struct {
 	entry         *docket.Entry           // the one on screen; nil on onFinished
 	works         map[*docket.Entry]*work // what is known and checked, entry by entry
 	running       int                     // computations under way
+	searching     context.Context         // of the computations under way
+	stop          context.CancelFunc      // ends them
 	lexicon       int                     // how often the lexicon has grown: older answers are stale
 	lastKind      map[string]string       // the kind last added, by list and capital
 	lastList      string
@@ -123,6 +125,7 @@ func New(ctx context.Context, session *docket.Session, opt Options) Model {
 		passage: passage.New(sheet), alignment: alignment.New(sheet), concordance: concordance.New(sheet),
 		related: related.New(sheet), page: page.New(sheet),
 	}
+	m.searching, m.stop = context.WithCancel(ctx)
 	return m
 }
 

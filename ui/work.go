@@ -1,6 +1,7 @@
 package ui
 
 import (
+	"context"
 	"runtime"
 
 	tea "github.com/charmbracelet/bubbletea"
@@ -107,7 +108,7 @@ func (m *Model) compute() tea.Cmd {
 }
 
 func (m *Model) computeFacts(e *docket.Entry) tea.Cmd {
-	ctx, d, id := m.ctx, m.docket, m.lexicon
+	ctx, d, id := m.searching, m.docket, m.lexicon
 	return func() tea.Msg {
 		var f facts
 		f.candidates, f.err = d.Candidates(ctx, e, candidates)
@@ -132,9 +133,12 @@ func (m *Model) take(c computed) {
 }
 
 // grown drops all facts: a word was added, so that other words are candidates now.
-// Those of the entry on screen stay, lest rows change under the cursor.
+// Those of the entry on screen stay, lest rows change under the cursor. Searches
+// under way end, so that they keep no processor from those that count.
 func (m *Model) grown() {
 	m.lexicon++
+	m.stop()
+	m.searching, m.stop = context.WithCancel(m.ctx)
 	for e, w := range m.works {
 		if e != m.entry {
 			w.facts = nil

@@ -3,16 +3,13 @@ package main
 import (
 	"context"
 	"fmt"
-	"os"
 	"os/user"
 	"strings"
 
 	"github.com/spf13/cobra"
 
 	"emendary/internal/docket"
-	"emendary/internal/shelf"
 	"emendary/lexicon"
-	"emendary/lexicon/english"
 )
 
 // words are the flags that say which words are known.
@@ -37,50 +34,15 @@ func (w *words) flags(cmd *cobra.Command) {
 // load returns the lexicon that the flags ask for, where there is no manuscript
 // that could attest its variety: any, unless one is chosen.
 func (w *words) load() (*lexicon.Lexicon, error) {
-	base := english.Base()
-	if w.lexicon != "" {
-		list, err := loadList(w.lexicon)
-		if err != nil {
-			return nil, err
-		}
-		base = list
+	lex, _, _, err := docket.Words(w.lexicon, w.house, w.series)
+	if err != nil || w.variety.value == "" {
+		return lex, err
 	}
-	variety := lexicon.AnyVariety
-	if w.variety.value != "" {
-		chosen, err := lexicon.ParseVariety(w.variety.value)
-		if err != nil {
-			return nil, err
-		}
-		variety = chosen
-	}
-	lex := lexicon.New(base, variety)
-	for _, l := range []struct {
-		layer lexicon.Layer
-		list  string
-	}{{lexicon.House, w.house}, {lexicon.Series, w.series}} {
-		if l.list == "" {
-			continue
-		}
-		path, err := shelf.Find(l.list)
-		if err != nil {
-			return nil, err
-		}
-		loaded, err := loadList(path)
-		if err != nil {
-			return nil, err
-		}
-		lex = lex.With(l.layer, loaded)
-	}
-	return lex, nil
-}
-
-func loadList(path string) (*lexicon.List, error) {
-	f, err := os.Open(path)
+	chosen, err := lexicon.ParseVariety(w.variety.value)
 	if err != nil {
-		return nil, fileError(path, err)
+		return nil, err
 	}
-	defer f.Close()
-	return lexicon.Load(f, path)
+	return lex.WithVariety(chosen), nil
 }
 
 // desk is the flags of the commands that open a manuscript.

@@ -3,6 +3,7 @@ package docket
 import (
 	"context"
 	"os"
+	"path/filepath"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
@@ -135,6 +136,23 @@ func TestCheckedRulingLeavesTheRestOpen(t *testing.T) {
 	assert.Equal(t, "The harbour froze.\n\n“A harber,” she said.\n\n> The harber of old.\n", emended(t, s))
 }
 
+func TestLetStandAndAddReachWhatStartsUnchecked(t *testing.T) {
+	text := "The harber froze.\n\n“A harber,” she said.\n\n> The harber of old.\n"
+	for _, act := range []ledger.Act{ledger.Reject, ledger.Add} {
+		s := desk(t, text)
+		e := s.Docket.Find("harber")
+		r := s.Docket.Ruling(e, act, s.Docket.Checked(e), nil)
+		assert.Equal(t, ledger.Every, r.Scope, "%s: as it is everywhere", act)
+		r = s.Docket.Ruling(e, act, []bool{true, true, false}, nil)
+		assert.Len(t, r.Occurrences, 2, "%s: the editor has chosen", act)
+	}
+	s := desk(t, text)
+	e := s.Docket.Find("harber")
+	assert.Len(t, s.Docket.Ruling(e, ledger.Accept, s.Docket.Checked(e), nil).Occurrences, 1)
+	assert.Empty(t, take(t, s, "form\truling\tword\tscope\tplace\nharber\treject\t\tchecked\t1:5\n"))
+	assert.True(t, e.Open(), "a line for places is for those places")
+}
+
 func TestLaterComesBack(t *testing.T) {
 	s := desk(t, "The harber froze.")
 	rule(t, s, "harber", ledger.Later, "")
@@ -218,4 +236,16 @@ func TestCandidatesPutTheIntendedWordFirst(t *testing.T) {
 			assert.LessOrEqual(t, sum, 1+1e-9)
 		})
 	}
+}
+
+func TestStartLeavesNoLedgerWhereAListIsWrong(t *testing.T) {
+	path := filepath.Join(t.TempDir(), "novel.md")
+	require.NoError(t, os.WriteFile(path, []byte("A harber.\n"), 0o600))
+	_, err := Start(context.Background(), Options{Manuscript: path, Series: "./missing.txt"})
+	require.Error(t, err)
+	_, err = Start(context.Background(), Options{Manuscript: path, Lexicon: path})
+	require.Error(t, err, "the manuscript is no word list")
+	entries, err := os.ReadDir(filepath.Dir(path))
+	require.NoError(t, err)
+	assert.Len(t, entries, 1, "nothing but the manuscript is there")
 }

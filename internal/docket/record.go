@@ -1,31 +1,36 @@
 package docket
 
 import (
+	"slices"
+
 	"emendary/internal/ledger"
 	"emendary/lexicon"
 )
 
 // Ruling starts a ruling on e for the checked occurrences: scope Every when
-// those are all there are. Where none is checked, every act but accept is for all
-// open ones. seen says which citations have been on screen (nil: none). The
+// those are all there are. Two exceptions: where none is checked, every act but
+// accept is for all open ones; and while the checks are those that Checked gave,
+// let stand and add are for all open ones too, since what starts unchecked does so
+// to stay as it is. seen says which citations have been on screen (nil: none). The
 // caller fills in Word, List, Kind, Note, Query and To.
 func (d *Docket) Ruling(e *Entry, act ledger.Act, checked, seen []bool) ledger.Ruling {
+	stays := act == ledger.Reject || act == ledger.Add
+	allOpen := act != ledger.Accept && !slices.Contains(checked, true) || stays && slices.Equal(checked, d.Checked(e))
+	on := make([]bool, len(e.Occurrences))
+	for i, o := range e.Occurrences {
+		on[i] = i < len(checked) && checked[i] || allOpen && o.Ruling == nil
+	}
+	return d.ruling(e, act, on, seen)
+}
+
+// ruling starts a ruling on just those occurrences of e.
+func (d *Docket) ruling(e *Entry, act ledger.Act, on, seen []bool) ledger.Ruling {
 	r := ledger.Ruling{
 		ID: ledger.NewID(), EntryKind: string(e.Kind), Form: e.Form, Act: act,
 		Who: d.who, When: d.now(), Manuscript: d.Document.SHA256,
 	}
-	chosen := 0
 	for i := range e.Occurrences {
-		if i < len(checked) && checked[i] {
-			chosen++
-		}
-	}
-	for i, o := range e.Occurrences {
-		in := i < len(checked) && checked[i]
-		if chosen == 0 && act != ledger.Accept {
-			in = o.Ruling == nil
-		}
-		if in {
+		if on[i] {
 			r.Occurrences = append(r.Occurrences, d.witness(e, i, i < len(seen) && seen[i]))
 		}
 	}

@@ -215,7 +215,7 @@ func (m *matching) ruling(e *Entry, l *Line, claims []*Line) (ledger.Ruling, boo
 	if !any || l.Act == ledger.Later && e.PutOff() {
 		return ledger.Ruling{}, false
 	}
-	r := m.d.fill(l, m.d.Ruling(e, l.Act, checked, nil))
+	r := m.d.fill(l, m.d.ruling(e, l.Act, checked, nil))
 	r.Word = word
 	return r, true
 }
@@ -243,7 +243,7 @@ func (m *matching) ask(l *Line) []ledger.Ruling {
 		}
 		asked := slices.ContainsFunc(e.rulings, func(r *ledger.Ruling) bool { return r.Query == l.Query && r.To == l.To })
 		if !asked && slices.Contains(checked, true) {
-			out = append(out, m.d.fill(l, m.d.Ruling(e, l.Act, checked, nil)))
+			out = append(out, m.d.fill(l, m.d.ruling(e, l.Act, checked, nil)))
 		}
 	}
 	for _, place := range wanted {

@@ -4,9 +4,6 @@ import (
 	"context"
 	"errors"
 	"fmt"
-	"io/fs"
-	"os"
-	"strings"
 	"sync"
 	"time"
 
@@ -14,7 +11,6 @@ import (
 	"emendary/internal/manuscript"
 	"emendary/internal/shelf"
 	"emendary/lexicon"
-	"emendary/lexicon/english"
 )
 
 // Options of a session.
@@ -69,13 +65,23 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 		opt.Ledger = ledger.PathFor(opt.Manuscript)
 	}
 	s := &Session{
-		Options: opt, paths: map[string]string{},
-		adds: map[ledger.ID]ledger.Ruling{}, undos: map[ledger.ID]ledger.Ruling{},
+		Options: opt,
+		adds:    map[ledger.ID]ledger.Ruling{}, undos: map[ledger.ID]ledger.Ruling{},
 	}
 	doc, err := manuscript.Open(opt.Manuscript, manuscript.Options{Encoding: opt.Encoding})
 	if err != nil {
 		return nil, err
 	}
+	// What is wrong with the lists has to show before there is a ledger to write.
+	kept, err := s.recall(ctx)
+	if err != nil {
+		return nil, err
+	}
+	lex, base, paths, err := Words(s.Options.Lexicon, s.Options.House, s.Options.Series)
+	if err != nil {
+		return nil, err
+	}
+	s.Base, s.paths = base, paths
 	if opt.ToRead {
 		s.Ledger, err = ledger.OpenToRead(opt.Ledger)
 	} else {
@@ -89,11 +95,7 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 			s.Ledger.Close()
 		}
 	}()
-	if err := s.remember(ctx); err != nil {
-		return nil, err
-	}
-	lex, err := s.lexicon()
-	if err != nil {
+	if err := s.remember(ctx, kept); err != nil {
 		return nil, err
 	}
 	rulings, err := s.Ledger.Rulings(ctx)
@@ -126,81 +128,55 @@ func (s *Session) Lists() []string {
 	return lists
 }
 
-// remember settles the options that the ledger keeps: those given are written to
-// it, those not given are read from it.
-func (s *Session) remember(ctx context.Context) error {
+// settings returns the options that the ledger keeps, by the name it keeps them under.
+func (s *Session) settings() map[string]*string {
+	return map[string]*string{
+		settingVariety: &s.Options.Variety, settingHouse: &s.Options.House, settingSeries: &s.Options.Series,
+	}
+}
+
+// recall fills in the options not given from the ledger, and returns all that it
+// keeps.
+func (s *Session) recall(ctx context.Context) (kept map[string]string, err error) {
 	if s.Options.Variety != "" {
 		if _, err := lexicon.ParseVariety(s.Options.Variety); err != nil {
-			return err
-		}
-	}
-	for name, value := range map[string]*string{
-		settingVariety: &s.Options.Variety, settingHouse: &s.Options.House, settingSeries: &s.Options.Series,
-	} {
-		kept, err := s.Ledger.Setting(ctx, name)
-		if err != nil {
-			return err
-		}
-		switch {
-		case *value == "":
-			*value = kept
-		case *value != kept && !s.Options.ToRead:
-			if err := s.Ledger.SetSetting(ctx, name, *value); err != nil {
-				return err
-			}
-		}
-	}
-	return nil
-}
-
-// lexicon puts the base lexicon and the lists together.
-func (s *Session) lexicon() (*lexicon.Lexicon, error) {
-	base := english.Base()
-	if s.Options.Lexicon != "" {
-		list, err := load(s.Options.Lexicon)
-		if err != nil {
 			return nil, err
 		}
-		base = list
 	}
-	s.Base = base.Name()
-	lex := lexicon.New(base, lexicon.AnyVariety)
-	for _, l := range []struct {
-		setting, value string
-		layer          lexicon.Layer
-	}{{settingHouse, s.Options.House, lexicon.House}, {settingSeries, s.Options.Series, lexicon.Series}} {
-		if l.value == "" {
-			continue
-		}
-		path, err := shelf.Find(l.value)
-		if err != nil {
-			return nil, err
-		}
-		list, err := load(path)
-		byName := !strings.ContainsAny(l.value, `/\`)
-		if errors.Is(err, fs.ErrNotExist) && byName {
-			// A list by a new name comes into being with its first word.
-			list, err = lexicon.NewList(l.value, nil)
-		}
-		if err != nil {
-			return nil, err
-		}
-		s.paths[l.setting] = path
-		lex = lex.With(l.layer, list)
-	}
-	return lex, nil
-}
-
-func load(path string) (*lexicon.List, error) {
-	f, err := os.Open(path)
-	if errors.Is(err, fs.ErrNotExist) {
-		return nil, fmt.Errorf("%s: %w; name a word list that is there, one word a line", path, fs.ErrNotExist)
+	l, err := ledger.OpenToRead(s.Options.Ledger)
+	if err != nil && !s.Options.ToRead {
+		l, err = ledger.Open(s.Options.Ledger, s.Options.Who) // says what is wrong for one who writes
 	}
 	if err != nil {
 		return nil, err
 	}
-	defer f.Close()
-	return lexicon.Load(f, path)
+	defer func() { err = errors.Join(err, l.Close()) }()
+	kept = map[string]string{}
+	for name, value := range s.settings() {
+		if kept[name], err = l.Setting(ctx, name); err != nil {
+			return nil, err
+		}
+		if *value == "" {
+			*value = kept[name]
+		}
+	}
+	return kept, nil
+}
+
+// remember writes to the ledger the options that differ from what it keeps.
+func (s *Session) remember(ctx context.Context, kept map[string]string) error {
+	if s.Options.ToRead {
+		return nil
+	}
+	for name, value := range s.settings() {
+		if *value == kept[name] {
+			continue
+		}
+		if err := s.Ledger.SetSetting(ctx, name, *value); err != nil {
+			return err
+		}
+	}
+	return nil
 }
 
 // choose settles the variety: as asked for, else as the manuscript attests.

@@ -1,0 +1,62 @@
+package docket
+
+import (
+	"errors"
+	"fmt"
+	"io/fs"
+	"os"
+	"strings"
+
+	"emendary/internal/shelf"
+	"emendary/lexicon"
+	"emendary/lexicon/english"
+)
+
+// Words puts a base lexicon and lists together, in any variety: the words of a
+// file in place of the English base, a house and a series list by name or file;
+// "" leaves each out. A list by a name that is new is empty. base is the name of
+// the base lexicon, paths the files of the lists by "house" and "series".
+func Words(file, house, series string) (lex *lexicon.Lexicon, base string, paths map[string]string, err error) {
+	list := english.Base()
+	if file != "" {
+		if list, err = load(file); err != nil {
+			return nil, "", nil, err
+		}
+	}
+	lex, base, paths = lexicon.New(list, lexicon.AnyVariety), list.Name(), map[string]string{}
+	for _, l := range []struct {
+		setting, value string
+		layer          lexicon.Layer
+	}{{settingHouse, house, lexicon.House}, {settingSeries, series, lexicon.Series}} {
+		if l.value == "" {
+			continue
+		}
+		path, err := shelf.Find(l.value)
+		if err != nil {
+			return nil, "", nil, err
+		}
+		list, err := load(path)
+		if errors.Is(err, fs.ErrNotExist) && !strings.ContainsAny(l.value, `/\`) {
+			list, err = lexicon.NewList(l.value, nil) // it comes into being with its first word
+		}
+		if err != nil {
+			return nil, "", nil, err
+		}
+		paths[l.setting] = path
+		lex = lex.With(l.layer, list)
+	}
+	return lex, base, paths, nil
+}
+
+func load(path string) (*lexicon.List, error) {
+	f, err := os.Open(path)
+	var named *fs.PathError
+	if errors.As(err, &named) {
+		err = named.Err
+	}
+	if err != nil {
+		return nil, fmt.Errorf("%s: %w; name a word list, one word a line", path, err)
+	}
+	defer f.Close()
+	return lexicon.Load(f, path)
+}
