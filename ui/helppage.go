@@ -41,13 +41,28 @@ func (m Model) helpSections() []helpSection {
 	}
 }
 
+// explained is what an editor has to know before the keys.
+var explained = []string{
+	"A ruling applies to the checked citations. It is on disk before the screen moves on, and any ruling " +
+		"can be undone: nothing is unsaved when you leave, and the manuscript itself is never changed.",
+	"Accept emends to the candidate under the cursor. Let stand leaves the form as it is. Add puts it on a " +
+		"list of known words. Query asks the author, the publisher or yourself. Later puts the entry off.",
+	"Quotations start unchecked, and so does speech where the form also stands in narration: accept leaves " +
+		"them alone; let stand and add take them in, unless you have changed a check.",
+}
+
 // helpLines is the help page: the keys of every part, what is typed in a line,
 // and the marks.
 func (m Model) helpLines() []string {
 	s := m.sheet.Signs
-	lines := []string{
-		" A ruling applies to the checked citations; it is on disk before the screen moves",
-		" on, and any ruling can be undone. Nothing is unsaved when you leave.",
+	var lines []string
+	for i, paragraph := range explained {
+		if i > 0 {
+			lines = append(lines, "")
+		}
+		for _, l := range text.Wrap(paragraph, min(m.width-2, 80), [2]int{}) {
+			lines = append(lines, " "+paragraph[l.Start:l.End])
+		}
 	}
 	head := func(name string) { lines = append(lines, "", " "+m.sheet.Title.Render(name)) }
 	row := func(name, desc string) {
