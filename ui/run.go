@@ -65,9 +65,11 @@ func (o Options) program() string {
 }
 
 // Run shows the bench on a terminal until the editor leaves it, ctx ends or the
-// terminal goes away. A ruling that is being written then is written to its end.
+// terminal goes away. await returns the session of the manuscript called name once
+// it is laid out, or what is wrong with it, which Run returns; until then there is
+// a screen that says so, and keys are kept. The session stays the caller's. A ruling that is being written then is written to its end.
 // The terminal is left as it was, also after a crash, which comes back as an error.
-func Run(ctx context.Context, session *docket.Session, opt Options) error {
+func Run(ctx context.Context, name string, await func() (*docket.Session, error), opt Options) error {
 	// Bubble Tea leaves less tidily on SIGINT than on the others: heed all alike.
 	options := []tea.ProgramOption{tea.WithContext(ctx), tea.WithAltScreen(), tea.WithoutSignalHandler()}
 	if opt.Input != nil {
@@ -78,7 +80,7 @@ func Run(ctx context.Context, session *docket.Session, opt Options) error {
 	}
 	work, cancel := context.WithCancel(ctx) // ends the computations with the bench
 	defer cancel()
-	program := tea.NewProgram(New(work, session, opt), options...)
+	program := tea.NewProgram(newOpening(work, name, await, opt), options...)
 
 	leave := make(chan os.Signal, 1)
 	signal.Notify(leave, syscall.SIGINT, syscall.SIGTERM, syscall.SIGHUP)
@@ -92,8 +94,13 @@ func Run(ctx context.Context, session *docket.Session, opt Options) error {
 	}()
 
 	final, err := program.Run()
-	if m, ok := final.(Model); ok && !errors.Is(err, tea.ErrProgramPanic) {
-		err = errors.Join(err, m.finish())
+	o, ok := final.(opening)
+	switch {
+	case !ok || errors.Is(err, tea.ErrProgramPanic):
+	case o.err != nil:
+		err = o.err
+	case o.bench != nil:
+		err = errors.Join(err, o.bench.finish())
 	}
 	return err
 }

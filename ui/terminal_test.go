@@ -52,7 +52,7 @@ func runBench(path string) error {
 	if os.Getenv(crashVariable) != "" {
 		opt.Write = func(context.Context, ...ledger.Ruling) error { panic("a crash of the test's making") }
 	}
-	return Run(ctx, s, opt)
+	return Run(ctx, "novel.md", func() (*docket.Session, error) { return s, nil }, opt)
 }
 
 // terminal is a pseudo-terminal that answers no question, with a program on it.

@@ -67,10 +67,15 @@ func (d *desk) signed(cmd *cobra.Command) {
 func (p *program) open(ctx context.Context, d *desk, manuscript string, toRead bool) (*docket.Session, error) {
 	m := p.meter("reading")
 	defer m.clear()
-	return docket.Start(ctx, docket.Options{
-		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: m.step,
+	return docket.Start(ctx, d.options(manuscript, toRead, m.step))
+}
+
+// options returns what the flags ask of a session.
+func (d *desk) options(manuscript string, toRead bool, progress func(done, total int)) docket.Options {
+	return docket.Options{
+		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: progress,
 		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series,
-	})
+	}
 }
 
 // who is the name that rulings are made under.

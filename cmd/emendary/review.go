@@ -4,9 +4,12 @@ import (
 	"context"
 	"errors"
 	"fmt"
+	"path/filepath"
+	"time"
 
 	"github.com/spf13/cobra"
 
+	"emendary/internal/docket"
 	"emendary/ui"
 	"emendary/ui/ground"
 )
@@ -45,20 +48,47 @@ NO_COLOR in the environment turns colours off.`,
 	return cmd
 }
 
-func (p *program) review(ctx context.Context, d *desk, manuscript string, opt ui.Options) (err error) {
+// atOnce is how long a docket may take to lay out before the bench is shown
+// without it. What is wrong with a manuscript mostly shows sooner, and is then
+// said without a screen.
+const atOnce = 100 * time.Millisecond
+
+func (p *program) review(ctx context.Context, d *desk, manuscript string, opt ui.Options) error {
 	if !p.outIsTerminal || !p.inIsTerminal {
 		return fmt.Errorf("review needs a terminal; without one, %s docket lists the entries and %s rule takes rulings", name, name)
 	}
-	s, err := p.open(ctx, d, manuscript, false)
-	if err != nil {
-		return err
+	ctx, cancel := context.WithCancel(ctx)
+	defer cancel()
+	var (
+		s      *docket.Session
+		failed error
+		laid   = make(chan struct{})
+	)
+	go func() {
+		defer close(laid)
+		s, failed = docket.Start(ctx, d.options(manuscript, false, nil))
+	}()
+	await := func() (*docket.Session, error) {
+		<-laid
+		return s, failed
 	}
-	defer func() { err = errors.Join(err, s.Close()) }()
+	select {
+	case <-laid:
+		if failed != nil {
+			return failed
+		}
+	case <-time.After(atOnce):
+	}
 	p.release() // the bench heeds the signals itself
-	if err := ui.Run(ctx, s, opt); err != nil {
-		return err
+	err := ui.Run(ctx, filepath.Base(manuscript), await, opt)
+	cancel()
+	if _, none := await(); none != nil {
+		return err // left before there was a docket; err is why there is none
 	}
 	t := s.Docket.Tally()
+	if err := errors.Join(err, s.Close()); err != nil {
+		return err
+	}
 	p.sayf("%s: %d open, %d ruled, %s", shown(manuscript), t.Open, t.Ruled, counted(t.Queries, "query", "queries"))
 	return nil
 }
