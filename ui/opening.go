@@ -95,7 +95,7 @@ func (o opening) pass(msg tea.Msg) (opening, tea.Cmd) {
 
 // View is the bench's, or a screen that says what is awaited.
 func (o opening) View() string {
-	if o.bench != nil {
+	if o.bench != nil && o.bench.begun {
 		return o.bench.View()
 	}
 	width, height := o.size.Width, o.size.Height

@@ -48,6 +48,9 @@ func TestKeysTypedWhileOpeningCount(t *testing.T) {
 	require.NotNil(t, o.bench)
 	assert.Len(t, o.bench.held, 2, "they wait for the first screen")
 	assert.Equal(t, 80, o.bench.width)
+	assert.Contains(t, o.View(), "laying out the docket", "until the bench has its first entry")
+	o, _ = step(t, o, begin{})
+	assert.Contains(t, o.View(), "concordance")
 }
 
 func TestOpeningEndsWithWhatIsWrong(t *testing.T) {
