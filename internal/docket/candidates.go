@@ -205,6 +205,9 @@ func (s search) splits(form string, kind Kind, add func(weighed)) {
 		return
 	}
 	letters := s.lex.Alphabet().Letters(form)
+	if len(letters) > 2*lexicon.MaxLetters {
+		return // no two words are as long
+	}
 	for i := 1; i < len(letters); i++ {
 		left, right := s.lex.Alphabet().Text(letters[:i]...), s.lex.Alphabet().Text(letters[i:]...)
 		if !stands(left) || !stands(right) {
@@ -257,12 +260,4 @@ func like(form, word string) string {
 		return capitalise(word)
 	}
 	return word
-}
-
-// Align aligns form with text, case folded, under unit costs. The letters
-// returned are as written.
-func (d *Docket) Align(form, text string) (formLetters, textLetters []align.Letter, a align.Alignment) {
-	alphabet := d.base.Alphabet()
-	formLetters, textLetters = alphabet.Letters(form), alphabet.Letters(text)
-	return formLetters, textLetters, align.Align(alphabet.Fold(formLetters), alphabet.Fold(textLetters), align.Unit{})
 }

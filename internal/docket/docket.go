@@ -200,7 +200,7 @@ func (d *Docket) Tally() Tally {
 	return t
 }
 
-// counted is count without progress, for callers that show none.
+// noProgress is the progress of callers that show none.
 func noProgress(int, int) {}
 
 // Build reads doc against lex without a ledger: the docket of a manuscript

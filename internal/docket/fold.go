@@ -19,8 +19,8 @@ type pending struct {
 // each spelling that mixes capitals (McKay). A capital at the start of a sentence
 // or in a heading, and capitals throughout, say nothing: those occurrences join
 // the entry that is there, the lower-case one or the capitalised one, the more
-// frequent if both are; where they are alone they make one entry, under the
-// spelling that is commonest among them.
+// frequent if both are; where they are alone they make one entry, under the first
+// spelling among them that is not in capitals throughout.
 func fold(group []*pending) []*Entry {
 	slices.SortFunc(group, func(a, b *pending) int { return byPlace(a.Occurrence, b.Occurrence) })
 	var plain, capital, silent []*pending
