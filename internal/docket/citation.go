@@ -22,12 +22,19 @@ func (d *Docket) Citation(e *Entry, i int) Citation {
 	p := &d.Document.Paragraphs[o.Paragraph]
 	start, end := d.extent(o)
 	line, column := d.Document.Position(d.span(o).Start)
-	flat := strings.NewReplacer("\r\n", " ", "\n", " ", "\t", " ")
 	return Citation{
-		Before: flat.Replace(p.Text[:start]), Form: flat.Replace(p.Text[start:end]), After: flat.Replace(p.Text[end:]),
+		Before: flat(p.Text[:start]), Form: flat(p.Text[start:end]), After: flat(p.Text[end:]),
 		Part: p.Part, Paragraph: o.Paragraph - d.Document.Parts[p.Part].First + 1,
 		Line: line, Column: column, Setting: p.Words[o.Word].Setting,
 	}
+}
+
+// flat is text in one line; text that is so already is not copied.
+func flat(text string) string {
+	if !strings.ContainsAny(text, "\r\n\t") {
+		return text
+	}
+	return strings.NewReplacer("\r\n", " ", "\n", " ", "\t", " ").Replace(text)
 }
 
 // extent returns the bytes of its paragraph's text that o covers, lead and tail

@@ -35,6 +35,7 @@ type Document struct {
 	source *decoding
 	format format
 	lines  []int32 // where each line of source.text starts
+	posts  []post  // within long lines, in order
 }
 
 // Part is a chapter: it runs from its heading to the next. Text before the
@@ -168,6 +169,7 @@ func readAs(path string, data []byte, source *decoding, chosen format) (*Documen
 		format:   chosen,
 		lines:    lineStarts(source.text),
 	}
+	d.posts = d.setPosts()
 	if d.Title == "" {
 		base := filepath.Base(path)
 		d.Title = strings.TrimSuffix(base, filepath.Ext(base))

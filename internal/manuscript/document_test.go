@@ -9,6 +9,7 @@ import (
 	"strings"
 	"testing"
 
+	"github.com/rivo/uniseg"
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
 	"golang.org/x/text/encoding"
@@ -153,6 +154,24 @@ func TestLetters(t *testing.T) {
 	assert.Empty(t, d.Letters(1, 0, 1))
 	assert.Empty(t, d.Letters(-1, 0, 1))
 	assert.Len(t, d.Letters(0, -5, math.MaxInt), len(got))
+}
+
+// The column of a letter in a long line is its number among the line's grapheme
+// clusters, as the general library counts them.
+func TestPositionInALongLine(t *testing.T) {
+	line := strings.Repeat("the caf\u00e9 e\u0301 ", 3*betweenPosts/14) + "end"
+	d, err := Read("m.txt", []byte("first\n"+line+"\nlast\n"), Options{})
+	require.NoError(t, err)
+	require.NotEmpty(t, d.posts)
+	offset, column := len("first\n"), 0
+	for letters := uniseg.NewGraphemes(line); letters.Next(); {
+		column++
+		gotLine, gotColumn := d.Position(offset)
+		require.Equal(t, [2]int{2, column}, [2]int{gotLine, gotColumn}, "byte %d", offset)
+		offset += len(letters.Str())
+	}
+	gotLine, gotColumn := d.Position(offset + 1)
+	assert.Equal(t, [2]int{3, 1}, [2]int{gotLine, gotColumn})
 }
 
 func TestPosition(t *testing.T) {

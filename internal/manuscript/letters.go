@@ -145,7 +145,8 @@ func (p *Paragraph) sourceSpan(start, end int) (from, to int) {
 // Position returns the line and column, from 1, of a byte of the file; the
 // column in letters. Lines end at LF, CR LF or CR. A byte inside a letter has
 // the letter's column; one past the end, the column after the last letter. It
-// takes time linear in the length of the line.
+// takes time linear in the length of the line, but no longer than some thousands
+// of letters do.
 func (d *Document) Position(offset int) (line, column int) {
 	if d.source == nil {
 		return 1, 1
@@ -157,9 +158,11 @@ func (d *Document) Position(offset int) (line, column int) {
 		at = d.source.textOffset(offset)
 	}
 	i := d.lineOf(at)
-	start := int(d.lines[i])
+	start, column := int(d.lines[i]), 1
+	if k := sort.Search(len(d.posts), func(k int) bool { return int(d.posts[k].at) > at }) - 1; k >= 0 && int(d.posts[k].at) > start {
+		start, column = int(d.posts[k].at), int(d.posts[k].column)
+	}
 	rest := strings.TrimRight(d.source.text[start:d.lineEnd(i)], "\r\n")
-	column = 1
 	for len(rest) > 0 {
 		n := letterLength(rest)
 		if start+n > at {
@@ -169,6 +172,34 @@ func (d *Document) Position(offset int) (line, column int) {
 		column++
 	}
 	return i + 1, column
+}
+
+// post tells the column of a byte of source.text where a letter starts, so that
+// columns of long lines need not be counted from the line's start.
+type post struct{ at, column int32 }
+
+// betweenPosts is how many bytes a line may have without a post.
+const betweenPosts = 4096
+
+// setPosts sets posts in all long lines. O(their length).
+func (d *Document) setPosts() []post {
+	var posts []post
+	for i, start := range d.lines {
+		end := d.lineEnd(i)
+		if end-int(start) <= betweenPosts {
+			continue
+		}
+		at, column, last := int(start), int32(1), int(start)
+		for at < end {
+			if at-last >= betweenPosts {
+				posts = append(posts, post{int32(at), column})
+				last = at
+			}
+			at += letterLength(d.source.text[at:end])
+			column++
+		}
+	}
+	return posts
 }
 
 // lineOf returns the index of the line that holds byte at of the file's text.
