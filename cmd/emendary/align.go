@@ -73,14 +73,10 @@ func (p *program) align(form, word string, all, ascii bool) error {
 	if !p.outIsTerminal {
 		ability.Plain, ability.Profile = true, termenv.Ascii
 	}
-	sheet := style.Make(ability)
-	grid := alignment.New(sheet)
+	grid := alignment.New(style.Make(ability))
 	grid.SetSize(p.columns(), len(rows)+4)
 	grid.Lay(letters, rows)
-	for i, line := range strings.Split(grid.View(), "\n") {
-		if i == 0 { // the bench weighs candidates; here there is one word
-			line = strings.TrimSuffix(line, sheet.Quiet.Render("  cost  share"))
-		}
+	for line := range strings.SplitSeq(grid.View(), "\n") {
 		p.sayf("%s", strings.TrimRight(line, " "))
 	}
 	p.sayf("   cost %s", number(found[0].Cost))

@@ -122,12 +122,12 @@ func (l *entryLister) write(e listed) error {
 	case "tsv":
 		var names, places []string
 		for _, c := range e.Candidates {
-			names = append(names, cell(c.Word))
+			names = append(names, docket.Cell(c.Word))
 		}
 		for _, p := range e.Places {
 			places = append(places, p.String())
 		}
-		_, err := fmt.Fprintf(l.w, "%s\t%s\t%d\t%s\t%s\n", cell(e.Form), e.Kind, len(e.Places), strings.Join(names, ", "), strings.Join(places, " "))
+		_, err := fmt.Fprintf(l.w, "%s\t%s\t%d\t%s\t%s\n", docket.Cell(e.Form), e.Kind, len(e.Places), strings.Join(names, ", "), strings.Join(places, " "))
 		return err
 	}
 	var candidates []string
@@ -181,7 +181,7 @@ func (l *wordLister) write(e listed) error {
 			if c.Share != nil {
 				share = number(*c.Share)
 			}
-			fmt.Fprintf(l.w, "%s\t%s\t%s\t%s\n", cell(e.Form), cell(c.Word), number(c.Cost), share)
+			fmt.Fprintf(l.w, "%s\t%s\t%s\t%s\n", docket.Cell(e.Form), docket.Cell(c.Word), number(c.Cost), share)
 		}
 		return nil
 	}
@@ -213,8 +213,3 @@ func (l *wordLister) block(e listed) {
 }
 
 func number(x float64) string { return strconv.FormatFloat(x, 'f', -1, 64) }
-
-// cell keeps tabs and line ends out of a cell of TSV.
-func cell(s string) string {
-	return strings.NewReplacer("\t", " ", "\r\n", " ", "\n", " ", "\r", " ").Replace(s)
-}

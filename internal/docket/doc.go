@@ -20,7 +20,6 @@ package docket
 import (
 	"emendary/internal/ledger"
 	"emendary/internal/manuscript"
-	"emendary/lexicon"
 )
 
 // Kind is the kind of question an entry asks.
@@ -83,5 +82,4 @@ type form struct {
 	places  []place
 	fault   manuscript.Fault
 	instead string
-	words   []lexicon.Word // what the lexicon said of it, for entries of listed words
 }

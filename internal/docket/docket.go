@@ -2,7 +2,6 @@ package docket
 
 import (
 	"cmp"
-	"context"
 	"slices"
 	"sync/atomic"
 	"time"
@@ -202,13 +201,3 @@ func (d *Docket) Tally() Tally {
 
 // noProgress is the progress of callers that show none.
 func noProgress(int, int) {}
-
-// Build reads doc against lex without a ledger: the docket of a manuscript
-// nobody has ruled on.
-func Build(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon) (*Docket, error) {
-	c, err := count(ctx, doc, lex, noProgress)
-	if err != nil {
-		return nil, err
-	}
-	return lay(doc, c, lex, nil), nil
-}

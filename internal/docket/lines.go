@@ -173,8 +173,8 @@ func (d *Docket) WriteLines(w io.Writer) error {
 				at = strings.Join(places, " ")
 			}
 			fmt.Fprintln(b, strings.Join([]string{
-				cell(r.Form), string(r.Act), cell(r.Word), r.List, string(r.Scope), at,
-				cell(r.Kind), cell(r.Note), cell(r.Query), cell(r.To), cell(r.Who), r.When.UTC().Format(time.RFC3339Nano),
+				Cell(r.Form), string(r.Act), Cell(r.Word), r.List, string(r.Scope), at,
+				Cell(r.Kind), Cell(r.Note), Cell(r.Query), Cell(r.To), Cell(r.Who), r.When.UTC().Format(time.RFC3339Nano),
 			}, "\t"))
 		}
 	}
@@ -204,7 +204,7 @@ func (d *Docket) at(e *Entry, i int) string {
 	return fmt.Sprintf("%d:%d", line, column)
 }
 
-// cell keeps tabs and line ends out of a TSV cell.
-func cell(s string) string {
+// Cell is s as a cell of TSV: tabs and line ends are spaces.
+func Cell(s string) string {
 	return strings.NewReplacer("\t", " ", "\r\n", " ", "\n", " ", "\r", " ").Replace(s)
 }

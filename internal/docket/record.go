@@ -149,7 +149,7 @@ func (d *Docket) Last() (ruling, undo *ledger.Ruling) {
 			break
 		}
 		if !taken[r.ID] {
-			if _, redone := d.undoOf(r.Undoes); !redone {
+			if !d.undid(r.Undoes) {
 				return ruling, r
 			}
 			taken[r.Undoes] = true
@@ -158,12 +158,8 @@ func (d *Docket) Last() (ruling, undo *ledger.Ruling) {
 	return ruling, nil
 }
 
-// undoOf returns the undo with the given ID, if there is one.
-func (d *Docket) undoOf(id ledger.ID) (*ledger.Ruling, bool) {
-	for i := range d.log {
-		if d.log[i].ID == id && d.log[i].Act == ledger.Undo {
-			return &d.log[i], true
-		}
-	}
-	return nil, false
+// undid reports whether the ruling with that ID is an undo: then what undoes it
+// is a redo.
+func (d *Docket) undid(id ledger.ID) bool {
+	return slices.ContainsFunc(d.log, func(r ledger.Ruling) bool { return r.ID == id && r.Act == ledger.Undo })
 }

@@ -22,7 +22,6 @@ func judge(lex *lexicon.Lexicon, f *form, ours map[string]bool) verdict {
 		return verdict{UnknownForm, string(f.fault), []string{f.instead}}
 	}
 	finding := lex.Find(f.text)
-	f.words = finding.Words
 	switch finding.Status {
 	case lexicon.Known:
 		if finding.Words[0].Layer > lexicon.Base && ours[key(f.text)] {

@@ -3,6 +3,7 @@ package alignment
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -175,7 +176,7 @@ func (m Model) heads(p plan, from, to int) string {
 	for i := p.first; i < p.last; i++ {
 		b.WriteString(text.Pad(m.head(i, m.sheet.Head), p.widths[i]))
 	}
-	if len(m.rows) > 0 {
+	if slices.ContainsFunc(m.rows, func(r Row) bool { return r.Priced }) {
 		b.WriteString(m.sheet.Quiet.Render("  cost  share"))
 	}
 	return b.String()
