@@ -3,6 +3,7 @@ package docket
 import (
 	"cmp"
 	"slices"
+	"sync"
 	"sync/atomic"
 	"time"
 
@@ -31,8 +32,11 @@ type Docket struct {
 	byForm map[string]*Entry   // by exact form
 	byKey  map[string][]*Entry // by key
 	log    []ledger.Ruling     // all rulings recorded, undos included
-	who    string
-	now    func() time.Time
+
+	surveying sync.Once
+	survey    map[*Entry]rank.Evidence // of laid; made when first asked for
+	who       string
+	now       func() time.Time
 }
 
 // Unplaced is a place of a ruling that the manuscript as it is now does not have.

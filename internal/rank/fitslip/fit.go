@@ -1,0 +1,291 @@
+package main
+
+import (
+	"cmp"
+	"context"
+	"fmt"
+	"math"
+	"os"
+	"path/filepath"
+	"slices"
+	"strings"
+	"time"
+
+	"emendary/internal/assay"
+	"emendary/internal/docket"
+	"emendary/internal/rank"
+)
+
+// example is an entry as the model sees it.
+type example struct {
+	text        string // which text it is of
+	form        string
+	slip        bool
+	weight      float64
+	provisional []float64
+	exact       []float64
+}
+
+// text is the name under which manuscripts count as one text.
+func text(path string) string {
+	base := filepath.Base(path)
+	if i := strings.IndexAny(base, "-."); i > 0 {
+		return base[:i]
+	}
+	return base
+}
+
+// fit reads manuscripts with their truths in turn, measures with each text left
+// out, fits on all and writes the weights.
+func fit(ctx context.Context, files []string, asideFile string, rate float64, out string) error {
+	aside := map[string]bool{}
+	if asideFile != "" {
+		f, err := os.Open(asideFile)
+		if err != nil {
+			return err
+		}
+		defer f.Close()
+		if aside, err = assay.ReadForms(f, asideFile); err != nil {
+			return err
+		}
+	}
+	var all []example
+	for i := 0; i < len(files); i += 2 {
+		read, err := examples(ctx, files[i], files[i+1], aside)
+		if err != nil {
+			return err
+		}
+		all = append(all, read...)
+	}
+	var texts []string
+	for _, x := range all {
+		if !slices.Contains(texts, x.text) {
+			texts = append(texts, x.text)
+		}
+	}
+	fmt.Println("average precision of the order, each text left out of the fit in turn:")
+	fmt.Println("text\tentries\tslips\tprovisional\texact\tfitted on all, provisional\texact")
+	weights := weigh(all, rate)
+	var head []string
+	for _, name := range texts {
+		var rest, held []example
+		for _, x := range all {
+			if x.text == name {
+				held = append(held, x)
+			} else {
+				rest = append(rest, x)
+			}
+		}
+		slips := 0
+		for _, x := range held {
+			if x.slip {
+				slips++
+			}
+		}
+		w := weigh(rest, rate)
+		line := fmt.Sprintf("%s\t%d\t%d\t%.4f\t%.4f", name, len(held), slips, precision(w, held, false), precision(w, held, true))
+		fmt.Printf("%s\t%.4f\t%.4f\n", line, precision(weights, held, false), precision(weights, held, true))
+		head = append(head, "left out "+strings.ReplaceAll(line, "\t", ", "))
+		if os.Getenv("SHOW") != "" {
+			show(w, held)
+		}
+	}
+	if out == "" {
+		return nil
+	}
+	head = append([]string{
+		fmt.Sprintf("Weights of the slip model, fitted by fitslip on %s, rate %g,", time.Now().Format(time.DateOnly), rate),
+		fmt.Sprintf("from errors planted in %d texts: %s.", len(texts), strings.Join(texts, ", ")),
+		"Average precision with each text left out: entries, slips, provisional, exact.",
+	}, head...)
+	return os.WriteFile(out, []byte(weights.Text(head)), 0o644)
+}
+
+// show lists what stands highest without being a slip, and the slips that stand lowest.
+func show(w rank.Weights, held []example) {
+	sorted := slices.Clone(held)
+	slices.SortStableFunc(sorted, func(a, b example) int { return -cmp.Compare(dot(w.Exact, a.exact), dot(w.Exact, b.exact)) })
+	n := 0
+	for i, x := range sorted {
+		if !x.slip && n < 60 {
+			n++
+			fmt.Printf("   high %d %s %.2f\n", i, x.form, dot(w.Exact, x.exact))
+		}
+	}
+	n = 0
+	for i := len(sorted) - 1; i >= 0 && n < 40; i-- {
+		if x := sorted[i]; x.slip {
+			n++
+			fmt.Printf("   low %d %s %.2f\n", i, x.form, dot(w.Exact, x.exact))
+		}
+	}
+}
+
+// examples reads the entries of a manuscript that the model has a say in.
+func examples(ctx context.Context, path, truthFile string, aside map[string]bool) ([]example, error) {
+	s, err := docket.Start(ctx, docket.Options{Manuscript: path, ToRead: true})
+	if err != nil {
+		return nil, err
+	}
+	defer s.Close()
+	f, err := os.Open(truthFile)
+	if err != nil {
+		return nil, err
+	}
+	defer f.Close()
+	truth, err := assay.ReadTruth(f, truthFile)
+	if err != nil {
+		return nil, err
+	}
+	judged, _, err := assay.Judge(ctx, s.Docket, truth, aside)
+	if err != nil {
+		return nil, err
+	}
+	var out []example
+	for _, j := range judged {
+		if j.Entry.Kind == docket.BarredWord || j.Entry.Kind == docket.UnknownForm && j.Entry.Why != "" {
+			continue
+		}
+		out = append(out, example{
+			text: text(path), form: j.Entry.Form, slip: j.Planted != "",
+			provisional: rank.SlipValues(s.Docket.Evidence(j.Entry)),
+			exact:       rank.SlipValues(s.Docket.EvidenceGiven(j.Entry, j.Candidates)),
+		})
+	}
+	return out, nil
+}
+
+// weigh fits both sets of weights on examples. Each text counts the same, and in
+// each the slips count for the given part.
+func weigh(all []example, rate float64) rank.Weights {
+	type class struct {
+		text string
+		slip bool
+	}
+	size := map[class]float64{}
+	texts := map[string]bool{}
+	for _, x := range all {
+		size[class{x.text, x.slip}]++
+		texts[x.text] = true
+	}
+	for i := range all {
+		x := &all[i]
+		part := 1 - rate
+		if x.slip {
+			part = rate
+		}
+		x.weight = part * float64(len(all)) / float64(len(texts)) / size[class{x.text, x.slip}]
+	}
+	return rank.Weights{
+		Provisional: regress(all, func(x *example) []float64 { return x.provisional }),
+		Exact:       regress(all, func(x *example) []float64 { return x.exact }),
+	}
+}
+
+func precision(w rank.Weights, held []example, exact bool) float64 {
+	score := func(x example) float64 { return dot(w.Provisional, x.provisional) }
+	if exact {
+		score = func(x example) float64 { return dot(w.Exact, x.exact) }
+	}
+	sorted := slices.Clone(held)
+	slices.SortStableFunc(sorted, func(a, b example) int { return -cmp.Compare(score(a), score(b)) })
+	relevant := make([]bool, len(sorted))
+	for i, x := range sorted {
+		relevant[i] = x.slip
+	}
+	return assay.AveragePrecision(relevant, 0)
+}
+
+func dot(a, b []float64) float64 {
+	var sum float64
+	for i := range a {
+		sum += a[i] * b[i]
+	}
+	return sum
+}
+
+// ridge is the weight of the penalty on squared weights: all but the constant are
+// drawn to nought as by so many examples.
+const ridge = 3
+
+// regress fits a logistic regression with a ridge penalty by Newton's method
+// (iteratively reweighted least squares; Hastie, Tibshirani and Friedman, The
+// Elements of Statistical Learning, 2nd edition, section 4.4.1).
+func regress(all []example, values func(*example) []float64) []float64 {
+	n := len(values(&all[0]))
+	w := make([]float64, n)
+	for range 50 {
+		gradient := make([]float64, n)
+		hessian := make([][]float64, n)
+		for i := range hessian {
+			hessian[i] = make([]float64, n)
+			if i > 0 {
+				hessian[i][i] = ridge
+				gradient[i] = -ridge * w[i]
+			} else {
+				hessian[i][i] = 1e-9
+			}
+		}
+		for i := range all {
+			x := &all[i]
+			v := values(x)
+			p := 1 / (1 + math.Exp(-dot(w, v)))
+			y := 0.0
+			if x.slip {
+				y = 1
+			}
+			curve := x.weight * max(p*(1-p), 1e-9)
+			for j := range v {
+				gradient[j] += x.weight * (y - p) * v[j]
+				if v[j] != 0 {
+					for k := range j + 1 {
+						hessian[j][k] += curve * v[j] * v[k]
+					}
+				}
+			}
+		}
+		step := solve(hessian, gradient)
+		size := 0.0
+		for i := range w {
+			w[i] += step[i]
+			size = max(size, math.Abs(step[i]))
+		}
+		if size < 1e-8 {
+			break
+		}
+	}
+	return w
+}
+
+// solve solves a symmetric positive definite system, given by its lower triangle,
+// by Cholesky's decomposition, in place. O(n³).
+func solve(a [][]float64, b []float64) []float64 {
+	n := len(b)
+	for i := range n {
+		for j := range i + 1 {
+			sum := a[i][j]
+			for k := range j {
+				sum -= a[i][k] * a[j][k]
+			}
+			if i == j {
+				a[i][i] = math.Sqrt(max(sum, 1e-12))
+			} else {
+				a[i][j] = sum / a[j][j]
+			}
+		}
+	}
+	x := slices.Clone(b)
+	for i := range n {
+		for k := range i {
+			x[i] -= a[i][k] * x[k]
+		}
+		x[i] /= a[i][i]
+	}
+	for i := n - 1; i >= 0; i-- {
+		for k := i + 1; k < n; k++ {
+			x[i] -= a[k][i] * x[k]
+		}
+		x[i] /= a[i][i]
+	}
+	return x
+}

@@ -1,0 +1,227 @@
+package rank
+
+import (
+	_ "embed"
+	"fmt"
+	"math"
+	"strconv"
+	"strings"
+	"sync"
+)
+
+// Evidence is what speaks for and against an entry's being a slip. Shares are
+// from 0 to 1 and of the entry's occurrences.
+type Evidence struct {
+	// From the manuscript alone.
+	Form     string
+	Count    int     // occurrences
+	Parts    int     // parts it stands in
+	Capital  float64 // share with a capital where lower case would have none
+	Start    float64 // share with a capital that the start of a sentence or a heading explains
+	Mixed    bool    // mixes capitals (McKay), or has no other letters (NATO)
+	Elided   float64 // share that an apostrophe cuts short or that has one inside
+	Hyphen   bool    // a compound
+	Speech   float64 // share in speech
+	Marked   float64 // share in italics, quotations and notes
+	Company  float64 // mean of other unknown or elided words among the twelve around
+	Derived  bool    // a known word with a known prefix or ending
+	NearUse  int     // uses of the commonest listed form one edit away
+	NearOwn  int     // uses of the commonest other entry one edit away
+	Joins    bool    // two neighbours that together are a listed word
+	Variety  bool    // another variety has it
+	Searched bool    // what follows is filled in
+
+	// From the best candidates.
+	Found     bool    // there is a candidate
+	Distance  int     // of the best, restricted Damerau–Levenshtein
+	Cost      float64 // of its edits
+	Share     float64 // its share
+	Gap       float64 // by how much its share exceeds the second's
+	Level     int     // its size level: 10 commonest, 70 rarest; 0 of a list
+	Use       int     // how often the manuscript uses it
+	Name      bool    // it is a proper name
+	TwoWords  bool    // it is two words
+	FirstKept bool    // it begins with the form's first letter
+	Ending    bool    // the form is the candidate with an ending or without
+}
+
+// feature is one number of the log-linear model: what it is called in the file of
+// weights, and how it comes from the evidence. All are of the order of 1.
+type feature struct {
+	name  string
+	exact bool // wants the candidates
+	value func(e *Evidence, l Letters) float64
+}
+
+func is(b bool) float64 {
+	if b {
+		return 1
+	}
+	return 0
+}
+
+// doublings is how often 1 must be doubled to reach 1+n.
+func doublings(n int) float64 { return math.Log2(1 + float64(n)) }
+
+// features of the model, in the order of the file of weights.
+var features = []feature{
+	{"constant", false, func(*Evidence, Letters) float64 { return 1 }},
+	{"count", false, func(e *Evidence, _ Letters) float64 { return doublings(e.Count) - 1 }},
+	{"once", false, func(e *Evidence, _ Letters) float64 { return is(e.Count == 1) }},
+	{"parts", false, func(e *Evidence, _ Letters) float64 { return doublings(e.Parts) - 1 }},
+	{"capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital }},
+	{"capital at start", false, func(e *Evidence, _ Letters) float64 { return e.Start }},
+	{"mixed capitals", false, func(e *Evidence, _ Letters) float64 { return is(e.Mixed) }},
+	{"elided", false, func(e *Evidence, _ Letters) float64 { return e.Elided }},
+	{"hyphen", false, func(e *Evidence, _ Letters) float64 { return is(e.Hyphen) }},
+	{"speech", false, func(e *Evidence, _ Letters) float64 { return e.Speech }},
+	{"marked", false, func(e *Evidence, _ Letters) float64 { return e.Marked }},
+	{"company", false, func(e *Evidence, _ Letters) float64 { return math.Sqrt(e.Company) }},
+	{"derived", false, func(e *Evidence, _ Letters) float64 { return is(e.Derived) }},
+	{"joins", false, func(e *Evidence, _ Letters) float64 { return is(e.Joins) }},
+	{"other variety", false, func(e *Evidence, _ Letters) float64 { return is(e.Variety) }},
+	{"letters, mean", false, func(_ *Evidence, l Letters) float64 { return l.Mean - 3 }},
+	{"letters, worst", false, func(_ *Evidence, l Letters) float64 { return l.Worst/4 - 2 }},
+	{"length", false, func(_ *Evidence, l Letters) float64 { return math.Log2(float64(1+l.Length)) - 3 }},
+	{"three letters", false, func(_ *Evidence, l Letters) float64 { return is(l.Length <= 3) }},
+	{"near listed", false, func(e *Evidence, _ Letters) float64 { return doublings(e.NearUse) }},
+	{"near listed, any", false, func(e *Evidence, _ Letters) float64 { return is(e.NearUse > 0) }},
+	{"near own", false, func(e *Evidence, _ Letters) float64 {
+		return math.Max(0, doublings(e.NearOwn)-doublings(e.Count))
+	}},
+	{"near own, capital", false, func(e *Evidence, _ Letters) float64 {
+		return e.Capital * math.Max(0, doublings(e.NearOwn)-doublings(e.Count))
+	}},
+	{"near listed, capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.NearUse > 0) }},
+
+	{"none found", true, func(e *Evidence, _ Letters) float64 { return is(!e.Found) }},
+	{"distance 2", true, func(e *Evidence, _ Letters) float64 { return is(e.Distance == 2) }},
+	{"distance 3", true, func(e *Evidence, _ Letters) float64 { return is(e.Distance >= 3) }},
+	{"cost", true, func(e *Evidence, _ Letters) float64 { return e.Cost / 4 }},
+	{"share", true, func(e *Evidence, _ Letters) float64 { return e.Share }},
+	{"gap", true, func(e *Evidence, _ Letters) float64 { return e.Gap }},
+	{"level", true, func(e *Evidence, _ Letters) float64 { return float64(e.Level) / 35 }},
+	{"use", true, func(e *Evidence, _ Letters) float64 { return doublings(e.Use) }},
+	{"used", true, func(e *Evidence, _ Letters) float64 { return is(e.Use > 0) }},
+	{"name", true, func(e *Evidence, _ Letters) float64 { return is(e.Name) }},
+	{"name, capital", true, func(e *Evidence, _ Letters) float64 { return is(e.Name) * e.Capital }},
+	{"two words", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) }},
+	{"first letter", true, func(e *Evidence, _ Letters) float64 { return is(e.FirstKept) }},
+	{"ending", true, func(e *Evidence, _ Letters) float64 { return is(e.Ending) }},
+	{"long, distance 1", true, func(e *Evidence, l Letters) float64 {
+		return is(e.Distance == 1) * (math.Log2(float64(1+l.Length)) - 3)
+	}},
+	{"use, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * doublings(e.Use) }},
+	{"level, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * float64(e.Level) / 35 }},
+}
+
+// SlipFeatures returns the names of the features, those of the provisional set
+// first; provisional is how many these are.
+func SlipFeatures() (names []string, provisional int) {
+	for _, f := range features {
+		names = append(names, f.name)
+		if !f.exact {
+			provisional++
+		}
+	}
+	return names, provisional
+}
+
+// SlipValues returns the value of each feature, in the order of [SlipFeatures];
+// those of candidates are left out where none were searched for.
+func SlipValues(e Evidence) []float64 {
+	l := LettersOf(e.Form)
+	values := make([]float64, 0, len(features))
+	for _, f := range features {
+		if !f.exact || e.Searched {
+			values = append(values, f.value(&e, l))
+		}
+	}
+	return values
+}
+
+// Weights are those of a log-linear model, by feature in the order of
+// [SlipFeatures]: of the provisional set and of the exact one.
+type Weights struct{ Provisional, Exact []float64 }
+
+// Slip returns the probability that an entry is a slip rather than a word of this
+// manuscript: the logistic function of the weighted sum of the features
+// (log-linear model; Berger, Della Pietra and Della Pietra, “A Maximum Entropy
+// Approach to Natural Language Processing”, Computational Linguistics 22(1),
+// 1996). Evidence without candidates goes by the provisional weights.
+func (w Weights) Slip(e Evidence) float64 {
+	weights := w.Provisional
+	if e.Searched {
+		weights = w.Exact
+	}
+	l := LettersOf(e.Form)
+	var sum float64
+	for i, weight := range weights {
+		sum += weight * features[i].value(&e, l)
+	}
+	return 1 / (1 + math.Exp(-sum))
+}
+
+//go:embed slip.weights
+var fitted string
+
+// SlipWeights returns the weights in use, which the command fitslip wrote to the
+// file slip.weights; its head says from what.
+var SlipWeights = sync.OnceValue(func() Weights {
+	w, err := ParseWeights(fitted)
+	if err != nil {
+		panic(err) // the build is broken: a test parses the same text
+	}
+	return w
+})
+
+// ParseWeights reads the text that [Weights.Text] wrote.
+func ParseWeights(text string) (Weights, error) {
+	names, provisional := SlipFeatures()
+	w := Weights{make([]float64, provisional), make([]float64, len(names))}
+	row := -1
+	for i, line := range strings.Split(strings.TrimSpace(text), "\n") {
+		if strings.HasPrefix(line, "#") {
+			continue
+		}
+		if row++; row == 0 {
+			continue // the columns' names
+		}
+		cells := strings.Split(line, "\t")
+		if row > len(names) || len(cells) != 3 || cells[0] != names[row-1] {
+			return Weights{}, fmt.Errorf("slip.weights: line %d: the features are not those of the program; fit the weights anew", i+1)
+		}
+		for j, weights := range [][]float64{w.Provisional, w.Exact} {
+			if row > len(weights) {
+				continue
+			}
+			x, err := strconv.ParseFloat(cells[j+1], 64)
+			if err != nil {
+				return Weights{}, fmt.Errorf("slip.weights: line %d: %q is no number; fit the weights anew", i+1, cells[j+1])
+			}
+			weights[row-1] = x
+		}
+	}
+	if row != len(names) {
+		return Weights{}, fmt.Errorf("slip.weights: %d weights for %d features; fit the weights anew", max(row, 0), len(names))
+	}
+	return w, nil
+}
+
+// Text returns the weights as a table, under a head of lines that begin with #.
+func (w Weights) Text(head []string) string {
+	var b strings.Builder
+	for _, line := range head {
+		fmt.Fprintf(&b, "# %s\n", line)
+	}
+	b.WriteString("feature\tprovisional\texact\n")
+	names, provisional := SlipFeatures()
+	for i, name := range names {
+		if i < provisional {
+			fmt.Fprintf(&b, "%s\t%.4f\t%.4f\n", name, w.Provisional[i], w.Exact[i])
+		} else {
+			fmt.Fprintf(&b, "%s\t-\t%.4f\n", name, w.Exact[i])
+		}
+	}
+	return b.String()
+}
