@@ -101,6 +101,7 @@ func (m Model) helpLines() []string {
 	head("figures")
 	row("cost", "what the edits cost; under unit costs each is 1")
 	row("share", "probability among the candidates of the form")
+	row("slip", "probability that the form is a slip, not a word of this book")
 	row(s.Strip[0]+s.Strip[len(s.Strip)/2]+s.Strip[len(s.Strip)-1], "how often the form stands in each part")
 	if m.opt.Version != "" {
 		lines = append(lines, "", " "+m.sheet.Quiet.Render(m.opt.program()+" "+m.visible(m.opt.Version)))

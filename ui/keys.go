@@ -8,7 +8,7 @@ import "github.com/charmbracelet/bubbles/key"
 type KeyMap struct {
 	Accept, Stand, Add, Query, Later, Correct key.Binding
 	Undo, Redo                                key.Binding
-	Next, Previous, NextOpen, Find            key.Binding
+	Next, Previous, NextOpen, Find, Order     key.Binding
 	Focus, Actions                            key.Binding
 	Help, Quit, Break                         key.Binding
 }
@@ -28,6 +28,7 @@ func Keys() KeyMap {
 		Previous: key.NewBinding(key.WithKeys("h", "left"), key.WithHelp("h ←", "previous entry")),
 		NextOpen: key.NewBinding(key.WithKeys("n"), key.WithHelp("n", "next open")),
 		Find:     key.NewBinding(key.WithKeys("/"), key.WithHelp("/", "find")),
+		Order:    key.NewBinding(key.WithKeys("t"), key.WithHelp("t", "next order")),
 		Focus:    key.NewBinding(key.WithKeys("tab"), key.WithHelp("tab", "next part of the screen")),
 		Actions:  key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "actions")),
 		Help:     key.NewBinding(key.WithKeys("?"), key.WithHelp("?", "help")),
@@ -43,7 +44,7 @@ func (k KeyMap) rulings() []key.Binding {
 
 // actions are what the strip of actions offers, the commonest first.
 func (k KeyMap) actions() []key.Binding {
-	return []key.Binding{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo, k.NextOpen, k.Find, k.Help, k.Quit}
+	return []key.Binding{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo, k.NextOpen, k.Find, k.Order, k.Help, k.Quit}
 }
 
 // ShortHelp returns what the footer shows.
@@ -53,7 +54,7 @@ func (k KeyMap) ShortHelp() []key.Binding { return append(k.rulings(), k.Help, k
 func (k KeyMap) FullHelp() [][]key.Binding {
 	return [][]key.Binding{
 		{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo},
-		{k.Next, k.Previous, k.NextOpen, k.Find, k.Focus, k.Actions, k.Help, k.Quit, k.Break},
+		{k.Next, k.Previous, k.NextOpen, k.Find, k.Order, k.Focus, k.Actions, k.Help, k.Quit, k.Break},
 	}
 }
 

@@ -50,6 +50,9 @@ func (m *Model) frame() frame {
 			f.related = max(f.related, 1+min(kin, 3))
 		}
 	}
+	if m.width >= wide {
+		f.facts = 2
+	}
 	rest := m.body(f.footer) - f.passage - f.alignment - f.facts
 	if m.width >= wide {
 		f.left = min(m.width*11/20, 92)

@@ -150,22 +150,27 @@ func (m *Model) welcome(last *ledger.Ruling) string {
 	return strings.Join(s, "; ")
 }
 
-// factsLine is the line about the entry: what is the matter, where it stands, what
-// is near it, what was ruled.
-func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
-	dot := " " + m.sheet.Signs.Dot + " "
-	say := []string{string(e.Kind)}
+// facts are what there is to say about the entry: what is the matter, what was
+// ruled, how likely it is a slip, where it stands, what is near it.
+func (m *Model) facts(e *docket.Entry) (say []string, strip string) {
+	say = []string{string(e.Kind)}
 	if e.Why != "" {
 		say[0] += ": " + m.visible(e.Why)
 	}
 	if rulings := e.Rulings(); len(rulings) > 0 {
 		say = append(say, m.summary(rulings[len(rulings)-1]))
 	}
-	stands := count(len(e.Occurrences), "time")
+	stands := "once"
+	if n := len(e.Occurrences); n != 1 {
+		stands = count(n, "time")
+	}
 	f := m.work(e).facts
 	if f == nil {
 		say = append(say, stands)
-		return strings.Join(say, dot), ""
+		return say, ""
+	}
+	if e.Kind != docket.WordInContext {
+		say = append(say, "slip "+text.Percent(f.slip))
 	}
 	if chapters := f.parts[min(m.firstChapter(), len(f.parts)):]; len(chapters) > 1 {
 		in := 0
@@ -174,7 +179,9 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 				in++
 			}
 		}
-		stands += fmt.Sprintf(" in %d of %s", in, count(len(chapters), "chapter"))
+		if len(e.Occurrences) != 1 {
+			stands += fmt.Sprintf(" in %d of %s", in, count(len(chapters), "chapter"))
+		}
 		strip = m.strip(chapters, max(8, m.frame().left/4))
 	}
 	say = append(say, stands)
@@ -185,7 +192,36 @@ func (m *Model) factsLine(e *docket.Entry) (left, strip string) {
 		}
 		say = append(say, "near: "+strings.Join(near, ", "))
 	}
-	return strings.Join(say, dot), strip
+	return say, strip
+}
+
+// factsLines lays the facts out on as many lines as the frame has, whole ones as far
+// as they fit; the strip stands at the end of the first.
+func (m *Model) factsLines(f frame) []string {
+	s := m.sheet.Signs
+	say, strip := m.facts(m.entry)
+	lines := make([]string, f.facts)
+	room := f.left - text.Width(strip) - 5
+	at := 0
+	for i, fact := range say {
+		joined := fact
+		if lines[at] != "" {
+			joined = lines[at] + " " + s.Dot + " " + fact
+		}
+		if i > 0 && text.Width(joined) > room && at+1 < len(lines) {
+			at, joined, room = at+1, fact, f.left-3
+		}
+		lines[at] = joined
+	}
+	for i, l := range lines {
+		room = f.left - 3
+		end := ""
+		if i == 0 {
+			room, end = f.left-text.Width(strip)-5, strip
+		}
+		lines[i] = text.Ends(" "+m.sheet.Quiet.Render(text.Cut(l, room, s.Ellipsis)), m.sheet.Quiet.Render(end)+" ", f.left, "")
+	}
+	return lines
 }
 
 // firstChapter returns the index of the first part that counts as a chapter: what

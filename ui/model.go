@@ -82,10 +82,11 @@ type Model struct {
 	entry         *docket.Entry           // the one on screen; nil on onFinished
 	works         map[*docket.Entry]*work // what is known and checked, entry by entry
 	running       int                     // computations under way
-	searching     context.Context         // of the computations under way
-	stop          context.CancelFunc      // ends them
-	lexicon       int                     // how often the lexicon has grown: older answers are stale
-	lastKind      map[string]string       // the kind last added, by list and capital
+	weighing      weighing
+	searching     context.Context    // of the computations under way
+	stop          context.CancelFunc // ends them
+	lexicon       int                // how often the lexicon has grown: older answers are stale
+	lastKind      map[string]string  // the kind last added, by list and capital
 	lastList      string
 	lastWhom      string
 
@@ -136,14 +137,14 @@ type begin struct{}
 // candidates.
 func (m Model) Init() tea.Cmd { return func() tea.Msg { return begin{} } }
 
-// start goes to the first open entry after the place of the last ruling that was
-// made on a bench, and says what was done before.
+// start goes to the first open entry, in the order by slip of all, else after the
+// place of the last ruling that was made on a bench, and says what was done before.
 func (m *Model) start() tea.Cmd {
 	m.begun = true
 	last, _ := m.docket.Last()
 	from := -1
 	rulings := m.docket.Rulings()
-	for i := len(rulings) - 1; i >= 0; i-- {
+	for i := len(rulings) - 1; i >= 0 && m.docket.Order() != docket.BySlip; i-- {
 		// Rulings taken from a file come in the order of the file, on no screen.
 		if r := rulings[i]; slices.ContainsFunc(r.Occurrences, func(o ledger.Occurrence) bool { return o.Seen }) {
 			from = slices.Index(m.docket.Entries, m.entryOf(r))

@@ -34,6 +34,8 @@ func (m *Model) pressBench(k tea.KeyMsg) tea.Cmd {
 		return m.moveBy(-1, "this is the first entry")
 	case key.Matches(k, m.Keys.NextOpen):
 		return m.move(m.openAfter(m.index()))
+	case key.Matches(k, m.Keys.Order):
+		return m.turnOrder()
 	case m.screen == onFinished:
 	case key.Matches(k, m.Keys.Accept):
 		return m.accept("")

@@ -29,6 +29,9 @@ func (m Model) Update(msg tea.Msg) (tea.Model, tea.Cmd) {
 	case computed:
 		m.take(msg)
 		cmd = m.compute()
+	case weighed:
+		m.takeWeighed(msg)
+		cmd = m.compute()
 	case finder.Found:
 		m.finder, cmd = m.finder.Update(msg)
 	case written:

@@ -26,6 +26,7 @@ const (
 type work struct {
 	asked   int // the lexicon's growth when the facts were asked for, from 1; 0 never
 	facts   *facts
+	shown   bool // it has been on screen
 	checked []bool
 	seen    []bool                 // citations that have been on screen
 	kin     map[*docket.Entry]bool // checks of related forms that the editor has changed
@@ -36,6 +37,7 @@ type facts struct {
 	candidates []docket.Candidate
 	parts      []int
 	near       []docket.NearForm
+	slip       float64
 	err        error
 }
 
@@ -74,7 +76,8 @@ func (m *Model) checks(e *docket.Entry) []bool {
 }
 
 // compute asks for the facts of the entry on screen and of the open ones that
-// come after it, as many at a time as there are processors.
+// come after it, as many at a time as there are processors; then for what puts the
+// rest in order.
 func (m *Model) compute() tea.Cmd {
 	var cmds []tea.Cmd
 	ask := func(e *docket.Entry) bool {
@@ -104,6 +107,9 @@ func (m *Model) compute() tea.Cmd {
 			more = ask(e)
 		}
 	}
+	if more {
+		cmds = append(cmds, m.weigh()...)
+	}
 	return tea.Batch(cmds...)
 }
 
@@ -113,6 +119,7 @@ func (m *Model) computeFacts(e *docket.Entry) tea.Cmd {
 		var f facts
 		f.candidates, f.err = d.Candidates(ctx, e, candidates)
 		f.near = d.Near(e)
+		f.slip = d.SlipGiven(e, f.candidates)
 		return computed{id, e, f}
 	}
 }
@@ -152,6 +159,7 @@ func (m *Model) ready() bool { return m.entry == nil || m.work(m.entry).facts !=
 // show lays the entry out over all parts of the bench.
 func (m *Model) show() {
 	e, w := m.entry, m.work(m.entry)
+	w.shown = true
 	settings := make([]string, len(e.Occurrences))
 	first := -1
 	for i, o := range e.Occurrences {

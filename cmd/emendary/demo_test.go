@@ -34,12 +34,12 @@ type bench struct {
 	ctx      context.Context
 }
 
-// review opens the bench on a manuscript.
-func review(t *testing.T, manuscript string) *bench {
+// review opens the bench on a manuscript, with flags.
+func review(t *testing.T, manuscript string, flags ...string) *bench {
 	t.Helper()
 	ctx, cancel := context.WithTimeout(context.Background(), enough)
 	t.Cleanup(cancel)
-	cmd := exec.Command("emendary", "review", filepath.Base(manuscript), "--as", "Anna")
+	cmd := exec.Command("emendary", append([]string{"review", filepath.Base(manuscript), "--as", "Anna"}, flags...)...)
 	b := &bench{terminal: startOn(t, cmd, filepath.Dir(manuscript)), ctx: ctx}
 	rows, columns, err := pty.Getsize(b.pty)
 	require.NoError(t, err)
@@ -308,7 +308,7 @@ func TestKillInTheMiddleOfAReview(t *testing.T) {
 	const rulings = 10
 	manuscript := demoCopy(t)
 	right := answers(t)
-	b := review(t, manuscript)
+	b := review(t, manuscript, "--order", "place")
 	var forms []string
 	for b.number(ruledCount) < rulings {
 		b.wait("an entry", func() bool { return b.form() != "" })
@@ -322,7 +322,7 @@ func TestKillInTheMiddleOfAReview(t *testing.T) {
 	require.Equal(t, -1, b.ends(), "ended by the signal")
 	require.FileExists(t, manuscript+".ledger.lock")
 
-	again := review(t, manuscript)
+	again := review(t, manuscript, "--order", "place")
 	again.until(stood)
 	again.wait("the entry that was on screen", func() bool { return again.form() == next })
 	again.rules(next, right[bareForm(next)])
@@ -334,7 +334,7 @@ func TestKeysSentInOneBurstAllCount(t *testing.T) {
 	t.Parallel()
 	const rulings = 40
 	manuscript := demoCopy(t)
-	b := review(t, manuscript)
+	b := review(t, manuscript, "--order", "place")
 	b.typeKeys(strings.Repeat("d", rulings) + "q") // at once, before the first screen
 	b.wait("nothing more", func() bool { return strings.Contains(b.raw.String(), "manuscript.md: ") })
 	require.Equal(t, 0, b.ends())
@@ -362,7 +362,7 @@ func TestKeysSentInOneBurstAllCount(t *testing.T) {
 
 func TestATerminalOfAnotherSizeShowsTheSameEntry(t *testing.T) {
 	t.Parallel()
-	b := review(t, demoCopy(t))
+	b := review(t, demoCopy(t), "--order", "place")
 	b.until("▸ Arrack")
 	b.press("l", "▸ harder")
 	b.press("jjj", "▸ harbour")

@@ -67,7 +67,7 @@ func TestTheTruthOfTheDemoEmendsIt(t *testing.T) {
 
 	status, stdout, stderr = inProcess(t, "", "docket", manuscript, "--format", "tsv")
 	assert.Equal(t, 0, status)
-	assert.Equal(t, "form\tkind\tcount\tcandidates\tplaces\n", stdout)
+	assert.Equal(t, "form\tkind\tcount\tslip\tcandidates\tplaces\n", stdout)
 	assert.Equal(t, "emendary: "+manuscript+": nothing is open\n", stderr)
 }
 

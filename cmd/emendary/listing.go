@@ -21,6 +21,7 @@ type listed struct {
 	Form       string
 	Kind       docket.Kind // of an entry
 	Status     string      // of a word
+	Slip       float64     // of an entry: the probability that it is one
 	Candidates []listedCandidate
 	Places     []listedPlace
 }
@@ -95,16 +96,17 @@ func newEntryLister(w io.Writer, format string, entries []*docket.Entry) *entryL
 	switch format {
 	case "table":
 		if len(entries) > 0 {
-			l.row("form", "kind", "count", "first", "candidates")
+			l.row("form", "kind", "count", "slip", "first", "candidates")
 		}
 	case "tsv":
-		fmt.Fprintln(w, "form\tkind\tcount\tcandidates\tplaces")
+		fmt.Fprintln(w, "form\tkind\tcount\tslip\tcandidates\tplaces")
 	}
 	return l
 }
 
-func (l *entryLister) row(form, kind, count, first, candidates string) {
-	line := text.Pad(form, l.width) + "  " + text.Pad(kind, 15) + "  " + text.PadLeft(count, 5) + "  " + text.Pad(first, 9) + "  " + candidates
+func (l *entryLister) row(form, kind, count, slip, first, candidates string) {
+	line := text.Pad(form, l.width) + "  " + text.Pad(kind, 15) + "  " + text.PadLeft(count, 5) + "  " +
+		text.PadLeft(slip, 5) + "  " + text.Pad(first, 9) + "  " + candidates
 	fmt.Fprintln(l.w, strings.TrimRight(line, " "))
 }
 
@@ -116,9 +118,10 @@ func (l *entryLister) write(e listed) error {
 			Form       string            `json:"form"`
 			Kind       docket.Kind       `json:"kind"`
 			Count      int               `json:"count"`
+			Slip       float64           `json:"slip"`
 			Candidates []listedCandidate `json:"candidates"`
 			Places     []listedPlace     `json:"places"`
-		}{e.Form, e.Kind, len(e.Places), e.Candidates, e.Places})
+		}{e.Form, e.Kind, len(e.Places), e.Slip, e.Candidates, e.Places})
 	case "tsv":
 		var names, places []string
 		for _, c := range e.Candidates {
@@ -127,7 +130,7 @@ func (l *entryLister) write(e listed) error {
 		for _, p := range e.Places {
 			places = append(places, p.String())
 		}
-		_, err := fmt.Fprintf(l.w, "%s\t%s\t%d\t%s\t%s\n", docket.Cell(e.Form), e.Kind, len(e.Places), strings.Join(names, ", "), strings.Join(places, " "))
+		_, err := fmt.Fprintf(l.w, "%s\t%s\t%d\t%s\t%s\t%s\n", docket.Cell(e.Form), e.Kind, len(e.Places), number(e.Slip), strings.Join(names, ", "), strings.Join(places, " "))
 		return err
 	}
 	var candidates []string
@@ -138,7 +141,7 @@ func (l *entryLister) write(e listed) error {
 	if len(e.Places) > 0 {
 		first = e.Places[0].String()
 	}
-	l.row(shown(e.Form), string(e.Kind), strconv.Itoa(len(e.Places)), first, strings.Join(candidates, ", "))
+	l.row(shown(e.Form), string(e.Kind), strconv.Itoa(len(e.Places)), text.Percent(e.Slip), first, strings.Join(candidates, ", "))
 	return nil
 }
 
@@ -146,13 +149,10 @@ func (p listedPlace) String() string { return fmt.Sprintf("%d:%d", p.Line, p.Col
 
 // share returns the share in per cent, laid out by format; "" where there is none.
 func (c listedCandidate) share(format string) string {
-	switch {
-	case c.Share == nil:
+	if c.Share == nil {
 		return ""
-	case *c.Share < 0.005:
-		return fmt.Sprintf(format, "<1 %")
 	}
-	return fmt.Sprintf(format, fmt.Sprintf("%.0f %%", 100**c.Share))
+	return fmt.Sprintf(format, text.Percent(*c.Share))
 }
 
 // wordLister writes words with their candidates in one of the formats.

@@ -20,6 +20,7 @@ func newReview(p *program) *cobra.Command {
 		d          desk
 		ascii      bool
 		background = choice{"", []string{string(ground.Dark), string(ground.Light)}}
+		order      = choice{string(docket.BySlip), orders()}
 	)
 	cmd := &cobra.Command{
 		Use:   "review MANUSCRIPT",
@@ -32,16 +33,21 @@ at any moment and go on with the same command.
 The rulings are kept in a ledger beside the manuscript, and so are the variety
 and the lists that were chosen. The manuscript itself is never changed.
 
+` + orderHelp + `
+t turns to the next order. The first order by slip goes by the manuscript alone;
+once all candidates are there, what has not been shown yet is put right by them.
+
 NO_COLOR in the environment turns colours off.`,
 		Example: `  emendary review manuscript.md
   emendary review manuscript.md --variety british-ise --ascii`,
 		Args: oneManuscript,
 		RunE: func(cmd *cobra.Command, args []string) error {
-			return p.review(cmd.Context(), &d, args[0], ui.Options{ASCII: ascii, Background: background.value, Version: version()})
+			return p.review(cmd.Context(), &d, args[0], docket.Order(order.value), ui.Options{ASCII: ascii, Background: background.value, Version: version()})
 		},
 	}
 	d.flags(cmd)
 	d.signed(cmd)
+	orderFlag(cmd, &order)
 	cmd.Flags().BoolVar(&ascii, "ascii", false, "signs and marks in ASCII")
 	cmd.Flags().Var(&background, "background", "`GROUND` of the terminal, dark or light, where COLORFGBG does not say")
 	_ = cmd.RegisterFlagCompletionFunc("background", cobra.FixedCompletions(background.allowed, cobra.ShellCompDirectiveNoFileComp))
@@ -53,7 +59,7 @@ NO_COLOR in the environment turns colours off.`,
 // said without a screen.
 const atOnce = 100 * time.Millisecond
 
-func (p *program) review(ctx context.Context, d *desk, manuscript string, opt ui.Options) error {
+func (p *program) review(ctx context.Context, d *desk, manuscript string, order docket.Order, opt ui.Options) error {
 	if !p.outIsTerminal || !p.inIsTerminal {
 		return fmt.Errorf("review needs a terminal; without one, %s docket lists the entries and %s rule takes rulings", name, name)
 	}
@@ -66,7 +72,9 @@ func (p *program) review(ctx context.Context, d *desk, manuscript string, opt ui
 	)
 	go func() {
 		defer close(laid)
-		s, failed = docket.Start(ctx, d.options(manuscript, false, nil))
+		if s, failed = docket.Start(ctx, d.options(manuscript, false, nil)); failed == nil {
+			s.Docket.Reorder(order, nil)
+		}
 	}()
 	await := func() (*docket.Session, error) {
 		<-laid

@@ -13,10 +13,11 @@ import (
 	"emendary/lexicon"
 )
 
-// Docket is the entries of one manuscript, in the order of review (by first
-// place). Its state changes by Record alone, and Find may add an entry; both
-// belong to one goroutine. Candidates, Near, Parts and Lexicon may run beside it
-// in others: they read only what never changes.
+// Docket is the entries of one manuscript, in an order of review: by first place
+// until Reorder says otherwise. Its state changes by Record, Reorder and TakeSlips
+// alone, and Find may add an entry; all of these belong to one goroutine.
+// Candidates, Near, Parts, Dispersion, Slip, SlipGiven and Lexicon may run beside
+// it in others: they read only what never changes.
 type Docket struct {
 	Document *manuscript.Document
 	Entries  []*Entry
@@ -28,6 +29,9 @@ type Docket struct {
 	model  rank.Model
 	lex    atomic.Pointer[lexicon.Lexicon] // base and what this book's rulings added
 
+	words  []int // of each part
+	order  Order
+	exact  map[*Entry]float64  // probabilities of a slip that TakeSlips brought
 	laid   []*Entry            // the entries as they were laid out; never changes
 	byForm map[string]*Entry   // by exact form
 	byKey  map[string][]*Entry // by key
@@ -51,7 +55,9 @@ func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, ours map[str
 	d := &Docket{
 		Document: doc, census: c, base: lex, model: rank.Default(), now: time.Now,
 		use: map[string]int{}, byForm: map[string]*Entry{}, byKey: map[string][]*Entry{},
+		order: ByPlace, exact: map[*Entry]float64{},
 	}
+	d.words = d.partWords()
 	d.lex.Store(lex)
 	for text, f := range c.forms {
 		d.use[key(text)] += len(f.places)

@@ -87,7 +87,7 @@ func gatherStyleSheet(s *docket.Session) (content, error) {
 	out.countListed(s, byWord)
 	slices.SortFunc(out.items, func(a, b *item) int {
 		return cmp.Or(slices.Index(groups(), groupOf(a.word))-slices.Index(groups(), groupOf(b.word)),
-			cmp.Compare(sortKey(a.word), sortKey(b.word)), cmp.Compare(a.word, b.word))
+			cmp.Compare(docket.FiledUnder(a.word), docket.FiledUnder(b.word)), cmp.Compare(a.word, b.word))
 	})
 	return out, nil
 }

@@ -3,6 +3,7 @@
 package text
 
 import (
+	"fmt"
 	"strings"
 
 	"github.com/charmbracelet/x/ansi"
@@ -95,4 +96,12 @@ func Fit(lines []string, width, height int) []string {
 		}
 	}
 	return out
+}
+
+// Percent returns a probability in whole per cent.
+func Percent(p float64) string {
+	if p < 0.005 {
+		return "<1 %"
+	}
+	return fmt.Sprintf("%.0f %%", 100*p)
 }
