@@ -38,7 +38,7 @@ type Docket struct {
 	log    []ledger.Ruling     // all rulings recorded, undos included
 
 	surveying sync.Once
-	survey    map[*Entry]rank.Evidence // of laid; made when first asked for
+	survey    *survey // made when first asked for
 	who       string
 	now       func() time.Time
 }

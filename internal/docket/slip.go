@@ -1,8 +1,12 @@
 package docket
 
 import (
+	"slices"
 	"strings"
+	"unicode"
 	"unicode/utf8"
+
+	"golang.org/x/text/unicode/norm"
 
 	"emendary/internal/manuscript"
 	"emendary/internal/rank"
@@ -49,11 +53,11 @@ func judged(e *Entry) (float64, bool) {
 
 // Evidence returns what the manuscript alone tells of e.
 func (d *Docket) Evidence(e *Entry) rank.Evidence {
-	d.surveying.Do(func() { d.survey = d.surveyed() })
-	if i, ok := d.survey[e]; ok {
-		return i
+	s := d.surveyed()
+	if v, ok := s.evidence[e]; ok {
+		return v
 	}
-	return d.evidence(e, crowd{})
+	return d.evidence(e, s)
 }
 
 // EvidenceGiven returns what the manuscript and the best candidates tell of e.
@@ -64,7 +68,7 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 		return v
 	}
 	best := found[0]
-	v.Found, v.Distance, v.Cost = true, best.Distance, best.Cost
+	v.Found, v.Best, v.Distance, v.Cost = true, best.Text, best.Distance, best.Cost
 	v.Share, v.Gap = best.Share, best.Share
 	if len(found) > 1 {
 		v.Gap -= found[1].Share
@@ -73,9 +77,15 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	if level, ok := best.Word.Level(d.base.Variety()); ok {
 		v.Level = level
 	}
-	v.TwoWords = strings.Contains(best.Text, " ")
+	if first, second, two := strings.Cut(best.Text, " "); two {
+		v.TwoWords, v.Adjacent = true, d.adjacent(first, second)
+	}
 	v.Name = best.Word.IsName() && !v.TwoWords
-	v.Use = d.useOf(best.Text)
+	v.Use = d.useLike(v, best.Text)
+	v.Accent = bare(key(e.Form)) == bare(key(best.Text))
+	v.Doubled = single(key(e.Form)) == single(key(best.Text))
+	v.Vowels = consonants(key(e.Form)) == consonants(key(best.Text))
+	v.Order = inOrder(key(e.Form)) == inOrder(key(best.Text))
 	a, _ := utf8.DecodeRuneInString(key(e.Form))
 	b, _ := utf8.DecodeRuneInString(key(best.Text))
 	v.FirstKept = a == b
@@ -83,16 +93,81 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	return v
 }
 
-// useOf returns how often the manuscript uses a word, or the rarer of several.
-func (d *Docket) useOf(text string) int {
+// useLike returns how often the manuscript uses a word with capitals like those
+// of an entry: of several words, the rarest.
+func (d *Docket) useLike(v rank.Evidence, text string) int {
 	words := strings.Fields(key(text))
+	if len(words) > 1 {
+		v.Capital = 0
+	}
 	least := 0
 	for i, w := range words {
-		if n := d.use[w]; i == 0 || n < least {
+		if n := d.surveyed().uses[w].like(v); i == 0 || n < least {
 			least = n
 		}
 	}
 	return least
+}
+
+// adjacent returns how often two words stand side by side in the manuscript.
+func (d *Docket) adjacent(first, second string) int {
+	places, step, other := d.placesOf(first), int32(1), second
+	if after := d.placesOf(second); len(after) < len(places) {
+		places, step, other = after, -1, first
+	}
+	n := 0
+	for _, p := range places {
+		words := d.Document.Paragraphs[p.paragraph].Words
+		if i := p.word + step; i >= 0 && int(i) < len(words) && strings.EqualFold(words[i].Text, other) {
+			n++
+		}
+	}
+	return n
+}
+
+// placesOf returns where a word stands, in lower case and with a first capital.
+func (d *Docket) placesOf(text string) []place {
+	var places []place
+	small := strings.ToLower(text)
+	for _, spelling := range []string{small, capitalise(small)} {
+		if f := d.census.forms[spelling]; f != nil {
+			places = append(places, f.places...)
+		}
+	}
+	return places
+}
+
+// bare returns s without the marks on its letters.
+func bare(s string) string {
+	return strings.Map(func(r rune) rune {
+		if unicode.Is(unicode.Mn, r) {
+			return -1
+		}
+		return r
+	}, norm.NFD.String(s))
+}
+
+// single returns s with one letter for each run of equal ones.
+func single(s string) string {
+	letters := []rune(s)
+	return string(slices.Compact(letters))
+}
+
+// consonants returns s without vowels, one letter for each run of equal ones.
+func consonants(s string) string {
+	return single(strings.Map(func(r rune) rune {
+		if strings.ContainsRune("aeiouy", r) {
+			return -1
+		}
+		return r
+	}, bare(s)))
+}
+
+// inOrder returns the letters of s in alphabetical order.
+func inOrder(s string) string {
+	letters := []rune(s)
+	slices.Sort(letters)
+	return string(letters)
 }
 
 // endingApart reports whether one of two forms is the other with an ending.
@@ -112,8 +187,8 @@ func endingApart(a, b string) bool {
 	return false
 }
 
-// evidence gathers what is to be seen of e itself; around is its company.
-func (d *Docket) evidence(e *Entry, around crowd) rank.Evidence {
+// evidence gathers what is to be seen of e itself.
+func (d *Docket) evidence(e *Entry, s *survey) rank.Evidence {
 	n := float64(len(e.Occurrences))
 	v := rank.Evidence{
 		Form: e.Form, Count: len(e.Occurrences),
@@ -134,12 +209,15 @@ func (d *Docket) evidence(e *Entry, around crowd) rank.Evidence {
 				v.Start += 1 / n
 			} else {
 				v.Capital += 1 / n
+				if titled(p, o.Word) {
+					v.Titled += 1 / n
+				}
 			}
 		case mixed:
 			v.Mixed = true
 			v.Capital += 1 / n
 		}
-		if inside || w.Traits&manuscript.Elision != 0 {
+		if inside || w.Traits&manuscript.Elision != 0 || cutShort(o) {
 			v.Elided += 1 / n
 		}
 		switch w.Setting {
@@ -148,31 +226,53 @@ func (d *Docket) evidence(e *Entry, around crowd) rank.Evidence {
 		case manuscript.Italics, manuscript.Quotation, manuscript.Note:
 			v.Marked += 1 / n
 		}
-		v.Company += float64(around.beside(d.Document, o)) / n
+		v.Company += float64(s.crowd.beside(d.Document, o)) / n
 	}
 	v.Parts = len(parts)
 	v.Mixed = v.Mixed || capitalsOf(e.Form) == all
-	v.Derived = derived(d.base, key(e.Form))
+	v.Dialect = s.dialect
+	v.Coined = derived(d.base, key(e.Form), freePrefixes, freeEndings)
+	v.Derived = derived(d.base, key(e.Form), nil, otherEndings)
 	return v
 }
 
-// freeEndings and freePrefixes make words of words so freely that no list has
-// them all.
+// titled reports whether a word has another with a capital beside it: a first
+// name, an initial, a title.
+func titled(p *manuscript.Paragraph, at int) bool {
+	if next := at + 1; next < len(p.Words) && p.Text[p.Words[at].End:p.Words[next].Start] == " " && capitalsOf(p.Words[next].Text) != lower {
+		return true
+	}
+	if at == 0 {
+		return false
+	}
+	between := p.Text[p.Words[at-1].End:p.Words[at].Start]
+	return (between == " " || between == ". ") && capitalsOf(p.Words[at-1].Text) != lower
+}
+
+// cutShort reports whether an apostrophe stands before or after the word that is
+// no possessive (perceiv’d): it may close a quotation as well.
+func cutShort(o *Occurrence) bool {
+	return strings.HasSuffix(o.Lead, straight) || strings.HasSuffix(o.Lead, curly) || o.Tail == straight || o.Tail == curly || key(o.Tail) == "'d"
+}
+
+// freePrefixes and freeEndings make words of words so freely that no list has
+// them all; otherEndings are also where slips are made.
 var (
-	freeEndings  = []string{"less", "like", "ness", "ish", "ly", "ful", "ism", "ist", "able", "er", "ers", "s", "es", "ed", "ing", "y"}
 	freePrefixes = []string{"un", "re", "non", "over", "out", "under", "fore", "mis", "anti", "semi", "super", "be", "pre", "sub"}
+	freeEndings  = []string{"less", "like", "ness", "ish", "able", "ism", "ist", "wards", "est", "ings"}
+	otherEndings = []string{"ful", "ly", "er", "ers", "s", "es", "ed", "ing", "y"}
 )
 
-// derived reports whether form is a known word of four letters or more with a
-// prefix or an ending.
-func derived(lex *lexicon.Lexicon, form string) bool {
-	for _, ending := range freeEndings {
+// derived reports whether form is a known word of four letters or more with one
+// of the prefixes or endings.
+func derived(lex *lexicon.Lexicon, form string, prefixes, endings []string) bool {
+	for _, ending := range endings {
 		stem, ok := strings.CutSuffix(form, ending)
 		if ok && len(stem) >= leastStem && (known(lex, stem) || len(ending) > 1 && known(lex, stem+"e")) {
 			return true
 		}
 	}
-	for _, prefix := range freePrefixes {
+	for _, prefix := range prefixes {
 		if stem, ok := strings.CutPrefix(form, prefix); ok && len(stem) >= leastStem && known(lex, stem) {
 			return true
 		}

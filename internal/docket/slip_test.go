@@ -59,8 +59,11 @@ func TestEvidenceOfTheManuscript(t *testing.T) {
 	assert.InDelta(t, 0.25, of("Brannock").Start, 1e-9)
 	assert.InDelta(t, 0, of("Brannock").Speech, 1e-9)
 	assert.InDelta(t, 1, of("nothin'").Elided, 1e-9)
-	assert.True(t, of("lampless").Derived)
-	assert.False(t, of("harbuor").Derived)
+	assert.True(t, of("lampless").Coined)
+	assert.False(t, of("harbuor").Coined || of("harbuor").Derived)
+	assert.InDelta(t, 1, of("nowheres").Speech, 1e-9)
+	assert.InDelta(t, 2, of("nowheres").Company, 1e-9, "a-goin’ and nothin’")
+	assert.Positive(t, of("nowheres").Dialect)
 }
 
 // The entries one edit away by hashes are those by comparing every pair.
@@ -81,19 +84,21 @@ func TestNeighboursEqualAComparisonOfAllPairs(t *testing.T) {
 		ours[key(e.Form)] = true
 	}
 	fold := func(s string) []align.Letter { return d.base.Alphabet().Letters(s) }
-	got := d.neighbours()
+	got := make([]rank.Evidence, len(d.laid))
+	uses := d.surveyed().uses
+	d.neighbours(got, uses)
 	met := 0
 	for i, e := range d.laid {
-		want := neighbour{}
-		for k, uses := range d.use {
+		want := rank.Evidence{}
+		for k, u := range uses {
 			if e.Kind == Join || len([]rune(key(e.Form))) < leastStem || align.Restricted(fold(key(e.Form)), fold(k)) != 1 {
 				continue
 			}
 			met++
 			if ours[k] {
-				want.own = max(want.own, uses)
+				want.NearOwn = max(want.NearOwn, u.all)
 			} else {
-				want.listed = max(want.listed, uses)
+				want.NearUse = max(want.NearUse, u.all)
 			}
 		}
 		require.Equal(t, want, got[i], e.Form)

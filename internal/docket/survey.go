@@ -1,21 +1,62 @@
 package docket
 
 import (
+	"math"
+
 	"emendary/internal/manuscript"
 	"emendary/internal/rank"
 )
 
-// surveyed gathers the evidence of all entries as they were laid out.
-func (d *Docket) surveyed() map[*Entry]rank.Evidence {
-	around := d.crowd()
-	out := make(map[*Entry]rank.Evidence, len(d.laid))
-	near := d.neighbours()
-	for i, e := range d.laid {
-		v := d.evidence(e, around)
-		v.NearUse, v.NearOwn = near[i].listed, near[i].own
-		out[e] = v
+// survey is what the evidence needs of the whole manuscript.
+type survey struct {
+	evidence map[*Entry]rank.Evidence // of the entries as they were laid out
+	uses     map[string]uses          // by key
+	crowd    crowd
+	dialect  float64 // see rank.Evidence
+}
+
+// uses is how often a form stands in the manuscript, and how often of that with a
+// capital.
+type uses struct{ all, capital int }
+
+// like returns how many of the uses have capitals like those of an entry. A word
+// that mostly has a capital is no neighbour of one that has none, nor the other
+// way round; the start of a sentence speaks for neither.
+func (u uses) like(v rank.Evidence) int {
+	switch {
+	case v.Capital >= 0.5 && 2*u.capital >= u.all:
+		return u.capital
+	case v.Capital < 0.5 && (v.Start > 0 || 2*u.capital <= u.all):
+		return u.all
 	}
-	return out
+	return 0
+}
+
+// surveyed surveys the manuscript, once.
+func (d *Docket) surveyed() *survey {
+	d.surveying.Do(func() {
+		s := &survey{evidence: make(map[*Entry]rank.Evidence, len(d.laid)), uses: make(map[string]uses, len(d.use)), crowd: d.crowd()}
+		s.dialect = d.dialect(s.crowd)
+		for text, f := range d.census.forms {
+			k := key(text)
+			u := s.uses[k]
+			u.all += len(f.places)
+			if capitalsOf(text) != lower {
+				u.capital += len(f.places)
+			}
+			s.uses[k] = u
+		}
+		near := make([]rank.Evidence, len(d.laid))
+		for i, e := range d.laid {
+			near[i] = d.evidence(e, s)
+		}
+		d.neighbours(near, s.uses)
+		for i, e := range d.laid {
+			s.evidence[e] = near[i]
+		}
+		d.survey = s
+	})
+	return d.survey
 }
 
 // crowd is the places of words that lists do not know, those with capitals left
@@ -36,6 +77,28 @@ func (d *Docket) crowd() crowd {
 	return c
 }
 
+// dialect returns log₂ of how many times denser the crowd is in speech than
+// elsewhere: more where speech is in dialect. It is smoothed by ten words on
+// either side, and bounded.
+func (d *Docket) dialect(c crowd) float64 {
+	var words, crowded [2]float64 // elsewhere, in speech
+	for i := range d.Document.Paragraphs {
+		for j, w := range d.Document.Paragraphs[i].Words {
+			k := 0
+			if w.Setting == manuscript.Speech {
+				k = 1
+			}
+			words[k]++
+			if c[place{int32(i), int32(j)}] {
+				crowded[k]++
+			}
+		}
+	}
+	overall := (crowded[0] + crowded[1] + 1) / (words[0] + words[1] + 1)
+	density := func(k int) float64 { return (crowded[k] + 10) / (words[k] + 10/overall) }
+	return min(max(math.Log2(density(1)/density(0)), -3), 3)
+}
+
 // reach is how many words on either side are company.
 const reach = 6
 
@@ -54,17 +117,15 @@ func (c crowd) beside(doc *manuscript.Document, o *Occurrence) int {
 	return n
 }
 
-// neighbour is how often the manuscript uses the commonest forms one edit away
-// from an entry's: one that is listed, and one that is another entry's.
-type neighbour struct{ listed, own int }
-
-// neighbours finds the forms one edit away from each entry's, for entries of four
-// letters or more. Two forms are one restricted edit apart only if what is left
-// of both is the same for some letter dropped, or none (Mor and Fraenkel, “A Hash
-// Code Method for Detecting and Correcting Spelling Errors”, Communications of
-// the ACM 25(12), 1982): so it takes O(forms × letters) hashes, not a comparison
-// for every pair.
-func (d *Docket) neighbours() []neighbour {
+// neighbours notes in the evidence of each entry laid out how often the manuscript
+// uses the commonest forms one edit away: one that is listed, and one that is
+// another entry's. Entries of fewer than four letters have none.
+//
+// Two forms are one restricted edit apart only if what is left of both is the
+// same for some letter dropped, or none (Mor and Fraenkel, “A Hash Code Method for
+// Detecting and Correcting Spelling Errors”, Communications of the ACM 25(12),
+// 1982): so it takes O(forms × letters) hashes, not a comparison for every pair.
+func (d *Docket) neighbours(found []rank.Evidence, forms map[string]uses) {
 	type entry struct {
 		letters []rune
 		last    int // the last form compared
@@ -85,9 +146,8 @@ func (d *Docket) neighbours() []neighbour {
 			left[h] = append(left[h], int32(i))
 		}
 	}
-	out := make([]neighbour, len(d.laid))
 	form := 0
-	for k, uses := range d.use {
+	for k, u := range forms {
 		form++
 		letters := []rune(k)
 		hashes = leftovers(hashes[:0], letters)
@@ -98,15 +158,15 @@ func (d *Docket) neighbours() []neighbour {
 					continue
 				}
 				e.last = form
+				n, v := u.like(found[i]), &found[i]
 				if ours[k] {
-					out[i].own = max(out[i].own, uses)
+					v.NearOwn = max(v.NearOwn, n)
 				} else {
-					out[i].listed = max(out[i].listed, uses)
+					v.NearUse = max(v.NearUse, n)
 				}
 			}
 		}
 	}
-	return out
 }
 
 // leftovers appends the hashes of letters and of what is left of them without

@@ -7,13 +7,16 @@ import (
 
 //go:generate go run ./letters
 
-// letterTable is the letter model of English words, made by the program in the
-// folder letters: for each context of three symbols the number of its row, two
-// bytes, little-endian; then the rows, for each next symbol a byte, its bits in
+// The letter models of words and of names, made by the program in the folder
+// letters: for each context of three symbols the number of its row, two bytes,
+// little-endian; then the rows, for each next symbol a byte, its bits in
 // sixteenths. A context that no word has shares the row of its last two symbols.
-//
-//go:embed letters.table
-var letterTable string
+var (
+	//go:embed letters.table
+	letterTable string
+	//go:embed names.table
+	nameTable string
+)
 
 // LetterSymbols is how many symbols the letter model tells apart: the edge of a
 // word (0), a to z (1 to 26), and all other letters and marks together (27).
@@ -52,12 +55,18 @@ type Letters struct {
 // 1999, section 2.5), fitted on the words of the base lexicon that are no names.
 // Case counts for nothing. Most words take 2 to 3.5 bits a letter, a run of
 // random letters 6 and more. It takes O(n) time and allocates nothing.
-func LettersOf(form string) Letters {
+func LettersOf(form string) Letters { return lettersBy(letterTable, form) }
+
+// NameLettersOf returns the plausibility of form as a name: as [LettersOf], by the
+// names of the base lexicon.
+func NameLettersOf(form string) Letters { return lettersBy(nameTable, form) }
+
+func lettersBy(table, form string) Letters {
 	var l Letters
 	context := 0
 	step := func(symbol int) {
-		row := int(letterTable[2*context]) | int(letterTable[2*context+1])<<8
-		bits := float64(letterTable[2*LetterContexts+row*LetterSymbols+symbol]) / LetterUnits
+		row := int(table[2*context]) | int(table[2*context+1])<<8
+		bits := float64(table[2*LetterContexts+row*LetterSymbols+symbol]) / LetterUnits
 		l.Bits += bits
 		l.Worst = math.Max(l.Worst, bits)
 		context = (context*LetterSymbols + symbol) % LetterContexts

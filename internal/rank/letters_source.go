@@ -2,11 +2,12 @@
 
 package rank
 
-// What the letter model was made from: the base lexicon's source, its version and
-// date, and how many of its words, names and abbreviations left out.
+// What the letter models were made from: the base lexicon's source, its version and
+// date, and how many of its words and of its names, abbreviations left out.
 const (
 	LettersSource  = "Debian package scowl"
 	LettersVersion = "2020.12.07-2"
 	LettersDate    = "2022-01-19"
 	LettersWords   = 118453
+	LettersNames   = 17134
 )

@@ -19,12 +19,15 @@ type Evidence struct {
 	Capital  float64 // share with a capital where lower case would have none
 	Start    float64 // share with a capital that the start of a sentence or a heading explains
 	Mixed    bool    // mixes capitals (McKay), or has no other letters (NATO)
+	Titled   float64 // share with a capital beside another, or an initial: Captain Brannock
 	Elided   float64 // share that an apostrophe cuts short or that has one inside
 	Hyphen   bool    // a compound
 	Speech   float64 // share in speech
 	Marked   float64 // share in italics, quotations and notes
 	Company  float64 // mean of other unknown or elided words among the twelve around
-	Derived  bool    // a known word with a known prefix or ending
+	Dialect  float64 // log₂ of how many times denser unknown words without capitals are in speech than elsewhere in the manuscript, −3 to 3
+	Coined   bool    // a known word with a prefix or ending that makes words freely: un-, -less
+	Derived  bool    // a known word with any other prefix or ending
 	NearUse  int     // uses of the commonest listed form one edit away
 	NearOwn  int     // uses of the commonest other entry one edit away
 	Joins    bool    // two neighbours that together are a listed word
@@ -34,15 +37,21 @@ type Evidence struct {
 	// From the best candidates.
 	Found     bool    // there is a candidate
 	Distance  int     // of the best, restricted Damerau–Levenshtein
+	Best      string  // its text
 	Cost      float64 // of its edits
 	Share     float64 // its share
 	Gap       float64 // by how much its share exceeds the second's
 	Level     int     // its size level: 10 commonest, 70 rarest; 0 of a list
-	Use       int     // how often the manuscript uses it
+	Use       int     // how often the manuscript uses it with capitals like the form's; of two words, the rarer
+	Adjacent  int     // of two words, how often they stand side by side in the manuscript
 	Name      bool    // it is a proper name
 	TwoWords  bool    // it is two words
 	FirstKept bool    // it begins with the form's first letter
 	Ending    bool    // the form is the candidate with an ending or without
+	Accent    bool    // the two differ in diacritics alone
+	Doubled   bool    // the two differ in doubled letters alone
+	Vowels    bool    // the two differ in vowels and doubled letters alone
+	Order     bool    // the two differ in the order of letters alone
 }
 
 // feature is one number of the log-linear model: what it is called in the file of
@@ -71,12 +80,16 @@ var features = []feature{
 	{"parts", false, func(e *Evidence, _ Letters) float64 { return doublings(e.Parts) - 1 }},
 	{"capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital }},
 	{"capital at start", false, func(e *Evidence, _ Letters) float64 { return e.Start }},
+	{"titled", false, func(e *Evidence, _ Letters) float64 { return e.Titled }},
 	{"mixed capitals", false, func(e *Evidence, _ Letters) float64 { return is(e.Mixed) }},
 	{"elided", false, func(e *Evidence, _ Letters) float64 { return e.Elided }},
 	{"hyphen", false, func(e *Evidence, _ Letters) float64 { return is(e.Hyphen) }},
 	{"speech", false, func(e *Evidence, _ Letters) float64 { return e.Speech }},
 	{"marked", false, func(e *Evidence, _ Letters) float64 { return e.Marked }},
-	{"company", false, func(e *Evidence, _ Letters) float64 { return math.Sqrt(e.Company) }},
+	{"dialect", false, func(e *Evidence, _ Letters) float64 { return e.Speech * e.Dialect }},
+	{"company", false, func(e *Evidence, _ Letters) float64 { return min(e.Company, 1) }},
+	{"much company", false, func(e *Evidence, _ Letters) float64 { return math.Log2(max(e.Company, 1)) }},
+	{"coined", false, func(e *Evidence, _ Letters) float64 { return is(e.Coined) }},
 	{"derived", false, func(e *Evidence, _ Letters) float64 { return is(e.Derived) }},
 	{"joins", false, func(e *Evidence, _ Letters) float64 { return is(e.Joins) }},
 	{"other variety", false, func(e *Evidence, _ Letters) float64 { return is(e.Variety) }},
@@ -84,6 +97,9 @@ var features = []feature{
 	{"letters, worst", false, func(_ *Evidence, l Letters) float64 { return l.Worst/4 - 2 }},
 	{"length", false, func(_ *Evidence, l Letters) float64 { return math.Log2(float64(1+l.Length)) - 3 }},
 	{"three letters", false, func(_ *Evidence, l Letters) float64 { return is(l.Length <= 3) }},
+	{"no vowel", false, func(e *Evidence, _ Letters) float64 { return is(!strings.ContainsAny(e.Form, "aeiouyAEIOUY")) }},
+	{"letters of names", false, func(e *Evidence, l Letters) float64 { return l.Mean - NameLettersOf(e.Form).Mean }},
+	{"letters of names, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (l.Mean - NameLettersOf(e.Form).Mean) }},
 	{"near listed", false, func(e *Evidence, _ Letters) float64 { return doublings(e.NearUse) }},
 	{"near listed, any", false, func(e *Evidence, _ Letters) float64 { return is(e.NearUse > 0) }},
 	{"near own", false, func(e *Evidence, _ Letters) float64 {
@@ -93,6 +109,14 @@ var features = []feature{
 		return e.Capital * math.Max(0, doublings(e.NearOwn)-doublings(e.Count))
 	}},
 	{"near listed, capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.NearUse > 0) }},
+	{"near over count", false, func(e *Evidence, _ Letters) float64 {
+		return math.Max(0, doublings(e.NearUse)-doublings(e.Count))
+	}},
+	{"count, capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital * (doublings(e.Count) - 1) }},
+	{"letters, mean, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (l.Mean - 3) }},
+	{"letters, worst, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (l.Worst/4 - 2) }},
+	{"length, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (math.Log2(float64(1+l.Length)) - 3) }},
+	{"dialect, company", false, func(e *Evidence, _ Letters) float64 { return e.Speech * e.Dialect * min(e.Company, 1) }},
 
 	{"none found", true, func(e *Evidence, _ Letters) float64 { return is(!e.Found) }},
 	{"distance 2", true, func(e *Evidence, _ Letters) float64 { return is(e.Distance == 2) }},
@@ -106,11 +130,37 @@ var features = []feature{
 	{"name", true, func(e *Evidence, _ Letters) float64 { return is(e.Name) }},
 	{"name, capital", true, func(e *Evidence, _ Letters) float64 { return is(e.Name) * e.Capital }},
 	{"two words", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) }},
+	{"two words, adjacent", true, func(e *Evidence, _ Letters) float64 { return doublings(e.Adjacent) }},
+	{"two words, use", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) * doublings(e.Use) }},
+	{"two words, capital", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) * e.Capital }},
 	{"first letter", true, func(e *Evidence, _ Letters) float64 { return is(e.FirstKept) }},
 	{"ending", true, func(e *Evidence, _ Letters) float64 { return is(e.Ending) }},
+	{"accent", true, func(e *Evidence, _ Letters) float64 { return is(e.Accent) }},
+	{"letters, worse", true, func(e *Evidence, l Letters) float64 {
+		if !e.Found || e.TwoWords {
+			return 0
+		}
+		return min(max((l.Bits-LettersOf(e.Best).Bits)/8, -1), 3)
+	}},
+	{"doubled", true, func(e *Evidence, _ Letters) float64 { return is(e.Found && e.Doubled) }},
+	{"vowels", true, func(e *Evidence, _ Letters) float64 { return is(e.Found && e.Vowels) }},
+	{"order", true, func(e *Evidence, _ Letters) float64 { return is(e.Found && e.Order) }},
+	{"use over count", true, func(e *Evidence, _ Letters) float64 {
+		return math.Max(0, doublings(e.Use)-doublings(e.Count))
+	}},
 	{"long, distance 1", true, func(e *Evidence, l Letters) float64 {
 		return is(e.Distance == 1) * (math.Log2(float64(1+l.Length)) - 3)
 	}},
+	{"coined, used", true, func(e *Evidence, _ Letters) float64 { return is(e.Coined && e.Use > 0) }},
+	{"derived, used", true, func(e *Evidence, _ Letters) float64 { return is(e.Derived && e.Use > 0) }},
+	{"long, distance 1, capital", true, func(e *Evidence, l Letters) float64 {
+		return e.Capital * is(e.Distance == 1) * (math.Log2(float64(1+l.Length)) - 3)
+	}},
+	{"distance 2, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Distance == 2) }},
+	{"share, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * e.Share }},
+	{"used, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Use > 0) }},
+	{"ending, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Ending) }},
+	{"first letter, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.FirstKept) }},
 	{"use, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * doublings(e.Use) }},
 	{"level, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * float64(e.Level) / 35 }},
 }

@@ -4,6 +4,7 @@ import (
 	"cmp"
 	"context"
 	"fmt"
+	"iter"
 	"math"
 	"os"
 	"path/filepath"
@@ -18,7 +19,7 @@ import (
 
 // example is an entry as the model sees it.
 type example struct {
-	text        string // which text it is of
+	text, file  string // which text it is of, and which manuscript
 	form        string
 	slip        bool
 	weight      float64
@@ -37,7 +38,7 @@ func text(path string) string {
 
 // fit reads manuscripts with their truths in turn, measures with each text left
 // out, fits on all and writes the weights.
-func fit(ctx context.Context, files []string, asideFile string, rate float64, out string) error {
+func fit(ctx context.Context, files []string, asideFile string, rate float64, out string, list int) error {
 	aside := map[string]bool{}
 	if asideFile != "" {
 		f, err := os.Open(asideFile)
@@ -64,7 +65,7 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, ou
 		}
 	}
 	fmt.Println("average precision of the order, each text left out of the fit in turn:")
-	fmt.Println("text\tentries\tslips\tprovisional\texact\tfitted on all, provisional\texact")
+	fmt.Println("manuscript\tentries\tslips\tprovisional\texact\tfitted on all, provisional\texact")
 	weights := weigh(all, rate)
 	var head []string
 	for _, name := range texts {
@@ -76,18 +77,18 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, ou
 				rest = append(rest, x)
 			}
 		}
-		slips := 0
-		for _, x := range held {
-			if x.slip {
-				slips++
-			}
-		}
 		w := weigh(rest, rate)
-		line := fmt.Sprintf("%s\t%d\t%d\t%.4f\t%.4f", name, len(held), slips, precision(w, held, false), precision(w, held, true))
-		fmt.Printf("%s\t%.4f\t%.4f\n", line, precision(weights, held, false), precision(weights, held, true))
-		head = append(head, "left out "+strings.ReplaceAll(line, "\t", ", "))
-		if os.Getenv("SHOW") != "" {
-			show(w, held)
+		for file, held := range byFile(held) {
+			slips := 0
+			for _, x := range held {
+				if x.slip {
+					slips++
+				}
+			}
+			line := fmt.Sprintf("%s\t%d\t%d\t%.4f\t%.4f", file, len(held), slips, precision(w, held, false), precision(w, held, true))
+			fmt.Printf("%s\t%.4f\t%.4f\n", line, precision(weights, held, false), precision(weights, held, true))
+			head = append(head, strings.ReplaceAll(line, "\t", ", "))
+			show(w, held, list)
 		}
 	}
 	if out == "" {
@@ -101,23 +102,39 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, ou
 	return os.WriteFile(out, []byte(weights.Text(head)), 0o644)
 }
 
-// show lists what stands highest without being a slip, and the slips that stand lowest.
-func show(w rank.Weights, held []example) {
-	sorted := slices.Clone(held)
-	slices.SortStableFunc(sorted, func(a, b example) int { return -cmp.Compare(dot(w.Exact, a.exact), dot(w.Exact, b.exact)) })
-	n := 0
-	for i, x := range sorted {
-		if !x.slip && n < 60 {
-			n++
-			fmt.Printf("   high %d %s %.2f\n", i, x.form, dot(w.Exact, x.exact))
+// byFile yields the examples of each manuscript, in the order of the first ones.
+func byFile(all []example) iter.Seq2[string, []example] {
+	return func(yield func(string, []example) bool) {
+		for start := 0; start < len(all); {
+			end := start
+			for end < len(all) && all[end].file == all[start].file {
+				end++
+			}
+			if !yield(all[start].file, all[start:end]) {
+				return
+			}
+			start = end
 		}
 	}
-	n = 0
-	for i := len(sorted) - 1; i >= 0 && n < 40; i-- {
-		if x := sorted[i]; x.slip {
-			n++
-			fmt.Printf("   low %d %s %.2f\n", i, x.form, dot(w.Exact, x.exact))
+}
+
+// show lists the n entries that stand highest without being slips, and the n slips
+// that stand lowest, in the order by the exact weights.
+func show(w rank.Weights, held []example, n int) {
+	sorted := slices.Clone(held)
+	slices.SortStableFunc(sorted, func(a, b example) int { return -cmp.Compare(dot(w.Exact, a.exact), dot(w.Exact, b.exact)) })
+	var words, slips []string
+	for i, x := range sorted {
+		line := fmt.Sprintf("  %d\t%s\t%.2f", i+1, x.form, dot(w.Exact, x.exact))
+		if x.slip {
+			slips = append(slips, line)
+		} else {
+			words = append(words, line)
 		}
+	}
+	if n > 0 {
+		fmt.Println("  no slips, highest first:\n" + strings.Join(words[:min(n, len(words))], "\n"))
+		fmt.Println("  slips, lowest last:\n" + strings.Join(slips[max(0, len(slips)-n):], "\n"))
 	}
 }
 
@@ -147,7 +164,7 @@ func examples(ctx context.Context, path, truthFile string, aside map[string]bool
 			continue
 		}
 		out = append(out, example{
-			text: text(path), form: j.Entry.Form, slip: j.Planted != "",
+			text: text(path), file: filepath.Base(path), form: j.Entry.Form, slip: j.Planted != "",
 			provisional: rank.SlipValues(s.Docket.Evidence(j.Entry)),
 			exact:       rank.SlipValues(s.Docket.EvidenceGiven(j.Entry, j.Candidates)),
 		})
@@ -155,8 +172,13 @@ func examples(ctx context.Context, path, truthFile string, aside map[string]bool
 	return out, nil
 }
 
-// weigh fits both sets of weights on examples. Each text counts the same, and in
-// each the slips count for the given part.
+// balance is the part of the examples that slips count for in the fit.
+const balance = 0.3
+
+// weigh fits both sets of weights on examples. Each text counts the same. The
+// constants are set for manuscripts in which slips are the given part of the
+// entries (prior correction; King and Zeng, “Logistic Regression in Rare Events
+// Data”, Political Analysis 9(2), 2001, section 4.1).
 func weigh(all []example, rate float64) rank.Weights {
 	type class struct {
 		text string
@@ -170,17 +192,22 @@ func weigh(all []example, rate float64) rank.Weights {
 	}
 	for i := range all {
 		x := &all[i]
-		part := 1 - rate
+		part := 1 - balance
 		if x.slip {
-			part = rate
+			part = balance
 		}
 		x.weight = part * float64(len(all)) / float64(len(texts)) / size[class{x.text, x.slip}]
 	}
-	return rank.Weights{
+	w := rank.Weights{
 		Provisional: regress(all, func(x *example) []float64 { return x.provisional }),
 		Exact:       regress(all, func(x *example) []float64 { return x.exact }),
 	}
+	w.Provisional[0] += logit(rate) - logit(balance)
+	w.Exact[0] += logit(rate) - logit(balance)
+	return w
 }
+
+func logit(p float64) float64 { return math.Log(p / (1 - p)) }
 
 func precision(w rank.Weights, held []example, exact bool) float64 {
 	score := func(x example) float64 { return dot(w.Provisional, x.provisional) }
@@ -206,7 +233,7 @@ func dot(a, b []float64) float64 {
 
 // ridge is the weight of the penalty on squared weights: all but the constant are
 // drawn to nought as by so many examples.
-const ridge = 3
+const ridge = 1
 
 // regress fits a logistic regression with a ridge penalty by Newton's method
 // (iteratively reweighted least squares; Hastie, Tibshirani and Friedman, The

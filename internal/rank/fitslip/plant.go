@@ -8,7 +8,6 @@ import (
 	"os"
 	"slices"
 	"strings"
-	"unicode/utf8"
 
 	"emendary/internal/assay"
 	"emendary/internal/docket"
@@ -21,13 +20,16 @@ type garden struct {
 	doc    *manuscript.Document
 	lex    *lexicon.Lexicon
 	chance *rand.Rand
-	words  []spot            // what may be spoilt
+	words  []spot            // what may be spoilt: listed words
+	own    []spot            // and names and coinages that the text has often
 	places map[string][]int  // into words, by key
-	taken  map[int]bool      // words spoilt already
+	taken  map[[2]int]bool   // words spoilt already, by paragraph and word
 	uses   map[string]int    // forms of the text and forms planted
 	truth  map[string]string // by planted form
 	edits  []manuscript.Emendation
 }
+
+func (g *garden) isTaken(s spot) bool { return g.taken[[2]int{s.paragraph, s.word}] }
 
 // spot is one word of the text.
 type spot struct {
@@ -36,9 +38,10 @@ type spot struct {
 }
 
 // plant writes a copy of a text with n errors in it, and their truth: half of them
-// misspellings from a list of pairs, four in ten slips of the hand, one in ten a
-// space too many or too few.
-func plant(ctx context.Context, text, pairs, out, truth string, n int, seed uint64) error {
+// misspellings from a list of pairs, one in ten a space too many or too few, own of
+// them slips of the hand in names and coinages that the text has often, the rest
+// slips of the hand in listed words.
+func plant(ctx context.Context, text, pairs, out, truth string, n, own int, seed uint64) error {
 	s, err := docket.Start(ctx, docket.Options{Manuscript: text, ToRead: true})
 	if err != nil {
 		return err
@@ -55,8 +58,9 @@ func plant(ctx context.Context, text, pairs, out, truth string, n int, seed uint
 	}
 	g := newGarden(s.Docket, seed)
 	g.misspell(list, n/2)
-	g.slip(n * 4 / 10)
-	g.space(n - n/2 - n*4/10)
+	g.space(n / 10)
+	g.slip(n-n/2-n/10-own, false)
+	g.slip(own, true)
 	data, err := g.doc.Emend(g.edits)
 	if err != nil {
 		return err
@@ -76,7 +80,7 @@ func plant(ctx context.Context, text, pairs, out, truth string, n int, seed uint
 func newGarden(d *docket.Docket, seed uint64) *garden {
 	g := &garden{
 		doc: d.Document, lex: d.Lexicon(), chance: rand.New(rand.NewPCG(seed, 0)),
-		places: map[string][]int{}, taken: map[int]bool{}, uses: map[string]int{}, truth: map[string]string{},
+		places: map[string][]int{}, taken: map[[2]int]bool{}, uses: map[string]int{}, truth: map[string]string{},
 	}
 	for i, p := range g.doc.Paragraphs {
 		for j, w := range p.Words {
@@ -84,9 +88,12 @@ func newGarden(d *docket.Docket, seed uint64) *garden {
 			g.uses[k]++
 			const odd = manuscript.Number | manuscript.Ordinal | manuscript.Roman | manuscript.Initial |
 				manuscript.AllCapitals | manuscript.Elision | manuscript.Broken | manuscript.Hyphenated
-			if w.Traits&odd == 0 && p.Text[w.Start:w.End] == w.Text && g.known(w.Text) {
+			switch plain := w.Traits&odd == 0 && p.Text[w.Start:w.End] == w.Text; {
+			case plain && g.known(w.Text):
 				g.places[k] = append(g.places[k], len(g.words))
 				g.words = append(g.words, spot{i, j, w.Text})
+			case plain:
+				g.own = append(g.own, spot{i, j, w.Text})
 			}
 		}
 	}
@@ -100,9 +107,8 @@ func (g *garden) fresh(form string) bool {
 	return g.uses[strings.ToLower(form)] == 0 && g.lex.Find(form).Status == lexicon.Unknown
 }
 
-// put puts form in place of words words from at on, if it may.
-func (g *garden) put(at, words int, form, word string) bool {
-	s := g.words[at]
+// put puts form in place of words words from s on, if it may.
+func (g *garden) put(s spot, words int, form, word string) bool {
 	p := &g.doc.Paragraphs[s.paragraph]
 	start, end := p.Words[s.word].Start, p.Words[s.word+words-1].End
 	letters := make([]string, len(g.doc.Letters(s.paragraph, start, end)))
@@ -112,7 +118,7 @@ func (g *garden) put(at, words int, form, word string) bool {
 		return false
 	}
 	for i := range words {
-		g.taken[at+i] = true
+		g.taken[[2]int{s.paragraph, s.word + i}] = true
 	}
 	g.uses[strings.ToLower(form)]++
 	g.truth[form] = word
@@ -120,7 +126,7 @@ func (g *garden) put(at, words int, form, word string) bool {
 	return true
 }
 
-// misspell plants n misspellings of the list, one in ten of them twice.
+// misspell plants n misspellings of the list, one in five of them twice.
 func (g *garden) misspell(list assay.Truth, n int) {
 	type pair struct{ form, word string }
 	var able []pair
@@ -136,20 +142,19 @@ func (g *garden) misspell(list assay.Truth, n int) {
 	})
 	g.chance.Shuffle(len(able), func(i, j int) { able[i], able[j] = able[j], able[i] })
 	for _, p := range able {
-		if n == 0 {
+		if n <= 0 {
 			return
 		}
 		places := g.places[p.word]
-		at := places[g.chance.IntN(len(places))]
-		form := like(g.words[at].text, p.form)
-		if g.taken[at] || !g.fresh(form) || !g.put(at, 1, form, g.words[at].text) {
+		at := g.words[places[g.chance.IntN(len(places))]]
+		form := like(at.text, p.form)
+		if g.isTaken(at) || !g.fresh(form) || !g.put(at, 1, form, at.text) {
 			continue
 		}
 		n--
-		if again := places[g.chance.IntN(len(places))]; g.chance.IntN(10) == 0 && !g.taken[again] {
-			if g.words[again].text == g.words[at].text && g.put(again, 1, form, g.words[at].text) {
-				n--
-			}
+		again := g.words[places[g.chance.IntN(len(places))]]
+		if g.chance.IntN(5) == 0 && !g.isTaken(again) && again.text == at.text && g.put(again, 1, form, at.text) {
+			n--
 		}
 	}
 }
@@ -183,21 +188,33 @@ func beside(c byte) string {
 	return string(out)
 }
 
-// slip plants n slips of the hand in words of four letters and more: a neighbouring
-// key, a letter left out, doubled, or changed with the next.
-func (g *garden) slip(n int) {
-	for tries := 0; n > 0 && tries < 1000*n; tries++ {
-		at := g.chance.IntN(len(g.words))
-		word := g.words[at].text
-		if g.taken[at] || len(word) < 4 || utf8.RuneCountInString(word) != len(word) {
+// often is how many uses make a form the book's own.
+const often = 5
+
+// slip plants n slips of the hand in listed words of four letters and more, or in
+// the text's own: a neighbouring key, a letter left out, doubled, or changed with
+// the next.
+func (g *garden) slip(n int, own bool) {
+	words := g.words
+	if own {
+		words = g.own
+	}
+	for tries := 0; n > 0 && len(words) > 0 && tries < 1000*n; tries++ {
+		at := words[g.chance.IntN(len(words))]
+		if g.isTaken(at) || len(at.text) < 4 || strings.ContainsFunc(at.text, notLetter) {
 			continue
 		}
-		form := g.fumble(word)
-		if form != "" && g.fresh(form) && g.put(at, 1, form, word) {
+		if own && g.uses[strings.ToLower(at.text)] < often {
+			continue
+		}
+		form := g.fumble(at.text)
+		if form != "" && g.fresh(form) && g.put(at, 1, form, at.text) {
 			n--
 		}
 	}
 }
+
+func notLetter(r rune) bool { return r > 'z' || r < 'A' || r > 'Z' && r < 'a' }
 
 // fumble returns a word of ASCII letters as a slip of the hand leaves it; "" where
 // chance came to nothing.
@@ -219,7 +236,7 @@ func (g *garden) fumble(word string) string {
 		}
 		return word[:i] + word[i+1:]
 	case 6, 7:
-		return word[:i] + strings.ToLower(word[i:i+1]) + word[i:]
+		return word[:i+1] + strings.ToLower(word[i:i+1]) + word[i+1:]
 	}
 	if i == 0 || i+1 == len(word) || word[i] == word[i+1] {
 		return ""
@@ -232,7 +249,7 @@ func (g *garden) space(n int) {
 	for tries := 0; n > 0 && tries < 1000*n; tries++ {
 		at := g.chance.IntN(len(g.words) - 1)
 		s, next := g.words[at], g.words[at+1]
-		if g.taken[at] || g.taken[at+1] {
+		if g.isTaken(s) || g.isTaken(next) {
 			continue
 		}
 		if n%2 == 0 {
@@ -242,12 +259,12 @@ func (g *garden) space(n int) {
 				strings.ToLower(next.text) != next.text || p.Text[p.Words[s.word].End:p.Words[next.word].Start] != " " {
 				continue
 			}
-			if g.put(at, 2, together, s.text+" "+next.text) {
+			if g.put(s, 2, together, s.text+" "+next.text) {
 				n--
 			}
 			continue
 		}
-		if len(s.text) < 6 || utf8.RuneCountInString(s.text) != len(s.text) {
+		if len(s.text) < 6 || strings.ContainsFunc(s.text, notLetter) {
 			continue
 		}
 		i := 2 + g.chance.IntN(len(s.text)-3)
@@ -256,7 +273,7 @@ func (g *garden) space(n int) {
 		if level > 50 || !g.fresh(left) && !g.fresh(right) {
 			continue
 		}
-		if g.put(at, 1, left+" "+right, s.text) {
+		if g.put(s, 1, left+" "+right, s.text) {
 			n--
 		}
 	}
