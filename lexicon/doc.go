@@ -6,8 +6,9 @@
 //   - [Word] is one word with what its list says of it.
 //   - [List] is the words of one list. [Load] reads it from text, [NewList] makes
 //     it from words, [Open] views one that [List.AppendBinary] wrote.
-//   - [Lexicon] is up to four lists looked up as one: the base lexicon and, above
-//     it, the house, the series and the book list ([Layer]), in one [Variety].
+//   - [Lexicon] is up to five lists looked up as one: the base lexicon and, above
+//     it, words of other languages, the house, the series and the book list
+//     ([Layer]), in one [Variety].
 //   - [Lexicon.Find] answers whether a form is known; [Lexicon.Within] gives all
 //     words within a distance of it, and [Lexicon.Attested] the variety that a
 //     manuscript is written in.

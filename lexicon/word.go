@@ -9,20 +9,23 @@ import (
 type Layer uint8
 
 const (
-	Base   Layer = iota // the base lexicon: the words of a language
-	House               // the house list: a publisher's practice
-	Series              // the series list
-	Book                // the book list: this manuscript alone
+	Base    Layer = iota // the base lexicon: the words of a language
+	Foreign              // words of other languages, the language as their kind
+	House                // the house list: a publisher's practice
+	Series               // the series list
+	Book                 // the book list: this manuscript alone
 )
 
 // layers is how many layers there are.
 const layers = int(Book) + 1
 
-// String returns the layer's name: base, house, series or book.
+// String returns the layer's name: base, foreign, house, series or book.
 func (l Layer) String() string {
 	switch l {
 	case Base:
 		return "base"
+	case Foreign:
+		return "foreign"
 	case House:
 		return "house"
 	case Series:
@@ -44,6 +47,9 @@ type Source struct {
 // in place of the embedded base lexicon. It is the middle one.
 const plainLevel = 50
 
+// foreignLevel is the level of words of other languages: they are rarest here.
+const foreignLevel = 70
+
 // Word is a lexicon word as a layer has it.
 type Word struct {
 	Text    string // as written in its list
@@ -60,11 +66,15 @@ type Word struct {
 
 // Level returns the commonest size level at which variety v has the word: 0 for
 // words of the house, series and book lists, 50 for words of a base without
-// levels. ok is false where only another variety or a list of variants has it.
+// levels, 70 for words of other languages. ok is false where only another variety
+// or a list of variants has it.
 func (w Word) Level(v Variety) (level int, ok bool) {
 	if len(w.Sources) == 0 {
-		if w.Layer == Base {
+		switch w.Layer {
+		case Base:
 			return plainLevel, true
+		case Foreign:
+			return foreignLevel, true
 		}
 		return 0, true
 	}

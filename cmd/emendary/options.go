@@ -16,6 +16,20 @@ import (
 type words struct {
 	lexicon, house, series string
 	variety                choice
+	with                   languages
+}
+
+// languages is the flag that names word lists of other languages.
+type languages []docket.Language
+
+func (l *languages) String() string { return "" }
+func (l *languages) Type() string   { return "string" }
+func (l *languages) Set(s string) error {
+	language, err := docket.ParseLanguage(s)
+	if err == nil {
+		*l = append(*l, language)
+	}
+	return err
 }
 
 func (w *words) flags(cmd *cobra.Command) {
@@ -28,13 +42,14 @@ func (w *words) flags(cmd *cobra.Command) {
 	f.Var(&w.variety, "variety", "`VARIETY` of English: "+strings.Join(w.variety.allowed, ", "))
 	f.StringVar(&w.house, "house", "", "the house's `LIST` of words, by name or file")
 	f.StringVar(&w.series, "series", "", "the series' `LIST` of words, by name or file")
+	f.Var(&w.with, "with", "know the words of another language too, `LANG=FILE`, one a line; may be repeated")
 	_ = cmd.RegisterFlagCompletionFunc("variety", cobra.FixedCompletions(w.variety.allowed, cobra.ShellCompDirectiveNoFileComp))
 }
 
 // load returns the lexicon that the flags ask for, where there is no manuscript
 // that could attest its variety: any, unless one is chosen.
 func (w *words) load() (*lexicon.Lexicon, error) {
-	lex, _, _, err := docket.Words(w.lexicon, w.house, w.series)
+	lex, _, _, err := docket.Words(w.lexicon, w.house, w.series, w.with)
 	if err != nil || w.variety.value == "" {
 		return lex, err
 	}
@@ -74,7 +89,7 @@ func (p *program) open(ctx context.Context, d *desk, manuscript string, toRead b
 func (d *desk) options(manuscript string, toRead bool, progress func(done, total int)) docket.Options {
 	return docket.Options{
 		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: progress,
-		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series,
+		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series, With: d.with,
 	}
 }
 

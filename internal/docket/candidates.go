@@ -130,6 +130,8 @@ func (s search) weigh(form string, word lexicon.Word, distance int, kind Kind, t
 	}
 	remark := ""
 	switch {
+	case word.Layer == lexicon.Foreign:
+		remark = word.Kind
 	case word.Layer > lexicon.Base:
 		remark = strings.ToLower(word.Layer.String()) + " list"
 	case word.IsName():

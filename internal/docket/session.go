@@ -16,11 +16,12 @@ import (
 // Options of a session.
 type Options struct {
 	Manuscript string
-	Ledger     string // "" means beside the manuscript
-	Lexicon    string // a word list that replaces the base lexicon
-	Variety    string // flag value; "" means what the ledger remembers, else what the manuscript attests
-	House      string // list by name or file; "" means what the ledger remembers
-	Series     string // likewise
+	Ledger     string     // "" means beside the manuscript
+	Lexicon    string     // a word list that replaces the base lexicon
+	Variety    string     // flag value; "" means what the ledger remembers, else what the manuscript attests
+	House      string     // list by name or file; "" means what the ledger remembers
+	Series     string     // likewise
+	With       []Language // whose words are known too; none means what the ledger remembers
 	Encoding   string
 	Who        string
 	ToRead     bool                  // no lock, no writes
@@ -33,6 +34,7 @@ const (
 	settingVariety = "variety"
 	settingHouse   = "house"
 	settingSeries  = "series"
+	settingWith    = "with" // as languages writes it
 )
 
 // Session is a manuscript on the desk: its docket with the ledger and the lists
@@ -46,6 +48,7 @@ type Session struct {
 	Chosen   bool                    // the variety was chosen, not attested
 	Base     string                  // name of the base lexicon
 
+	with  string            // Options.With as the ledger keeps it
 	paths map[string]string // files of the house and series lists
 	mu    sync.Mutex
 	adds  map[ledger.ID]ledger.Ruling // adds to files, for undo
@@ -77,7 +80,7 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 	if err != nil {
 		return nil, err
 	}
-	lex, base, paths, err := Words(s.Options.Lexicon, s.Options.House, s.Options.Series)
+	lex, base, paths, err := Words(s.Options.Lexicon, s.Options.House, s.Options.Series, s.Options.With)
 	if err != nil {
 		return nil, err
 	}
@@ -132,6 +135,7 @@ func (s *Session) Lists() []string {
 func (s *Session) settings() map[string]*string {
 	return map[string]*string{
 		settingVariety: &s.Options.Variety, settingHouse: &s.Options.House, settingSeries: &s.Options.Series,
+		settingWith: &s.with,
 	}
 }
 
@@ -152,6 +156,9 @@ func (s *Session) recall(ctx context.Context) (kept map[string]string, err error
 	}
 	defer func() { err = errors.Join(err, l.Close()) }()
 	kept = map[string]string{}
+	if s.with, err = writeLanguages(s.Options.With); err != nil {
+		return nil, err
+	}
 	for name, value := range s.settings() {
 		if kept[name], err = l.Setting(ctx, name); err != nil {
 			return nil, err
@@ -160,7 +167,10 @@ func (s *Session) recall(ctx context.Context) (kept map[string]string, err error
 			*value = kept[name]
 		}
 	}
-	return kept, nil
+	if len(s.Options.With) == 0 {
+		s.Options.With, err = readLanguages(s.with)
+	}
+	return kept, err
 }
 
 // remember writes to the ledger the options that differ from what it keeps.

@@ -14,9 +14,10 @@ import (
 
 // Words puts a base lexicon and lists together, in any variety: the words of a
 // file in place of the English base, a house and a series list by name or file;
-// "" leaves each out. A list by a name that is new is empty. base is the name of
-// the base lexicon, paths the files of the lists by "house" and "series".
-func Words(file, house, series string) (lex *lexicon.Lexicon, base string, paths map[string]string, err error) {
+// "" leaves each out. A list by a name that is new is empty. The words of other
+// languages are those that the base lacks altogether. base is the name of the base
+// lexicon, paths the files of the lists by "house" and "series".
+func Words(file, house, series string, with []Language) (lex *lexicon.Lexicon, base string, paths map[string]string, err error) {
 	list := english.Base()
 	if file != "" {
 		if list, err = load(file); err != nil {
@@ -24,6 +25,11 @@ func Words(file, house, series string) (lex *lexicon.Lexicon, base string, paths
 		}
 	}
 	lex, base, paths = lexicon.New(list, lexicon.AnyVariety), list.Name(), map[string]string{}
+	if foreign, err := foreignWords(lex, with); err != nil {
+		return nil, "", nil, err
+	} else if foreign != nil {
+		lex = lex.With(lexicon.Foreign, foreign)
+	}
 	for _, l := range []struct {
 		setting, value string
 		layer          lexicon.Layer

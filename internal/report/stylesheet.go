@@ -158,7 +158,7 @@ func chosen(s *docket.Session, r ledger.Ruling) bool {
 		})
 	}
 	w := finding.Words[0]
-	if w.Layer != lexicon.Base {
+	if w.Layer > lexicon.Foreign {
 		return true
 	}
 	level, ok := w.Level(s.Variety)
@@ -180,6 +180,9 @@ func general(s *docket.Session) [][2]string {
 	out := [][2]string{{"base lexicon", fileName(s.Base)}, {"variety", variety}}
 	if len(attested) > 0 {
 		out = append(out, [2]string{"occurrences that speak for each", strings.Join(attested, ", ")})
+	}
+	for _, l := range s.Options.With {
+		out = append(out, [2]string{"words of another language", l.Name + ", " + fileName(l.File)})
 	}
 	return append(out, [2]string{"house list", cmp.Or(fileName(s.Options.House), "none")},
 		[2]string{"series list", cmp.Or(fileName(s.Options.Series), "none")})
