@@ -80,3 +80,16 @@ func BenchmarkCandidatesOfANovel(b *testing.B) {
 		require.LessOrEqual(b, len(cs), 10)
 	}
 }
+
+func BenchmarkSlipsOfANovel(b *testing.B) {
+	doc, err := manuscript.Read("novel.md", novel(250_000), manuscript.Options{})
+	require.NoError(b, err)
+	d, err := build(context.Background(), doc, lexicon.New(english.Base(), lexicon.American))
+	require.NoError(b, err)
+	for b.Loop() {
+		fresh := &Docket{Document: d.Document, census: d.census, base: d.base, use: d.use, laid: d.laid}
+		for _, e := range fresh.laid {
+			require.InDelta(b, 0.5, fresh.Slip(e), 0.5)
+		}
+	}
+}

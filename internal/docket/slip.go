@@ -230,7 +230,7 @@ func (d *Docket) evidence(e *Entry, s *survey) rank.Evidence {
 	}
 	v.Parts = len(parts)
 	v.Mixed = v.Mixed || capitalsOf(e.Form) == all
-	v.Dialect = s.dialect
+	v.Dialect = s.crowd.dialect
 	v.Coined = derived(d.base, key(e.Form), freePrefixes, freeEndings)
 	v.Derived = derived(d.base, key(e.Form), nil, otherEndings)
 	return v

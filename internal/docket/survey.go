@@ -12,7 +12,6 @@ type survey struct {
 	evidence map[*Entry]rank.Evidence // of the entries as they were laid out
 	uses     map[string]uses          // by key
 	crowd    crowd
-	dialect  float64 // see rank.Evidence
 }
 
 // uses is how often a form stands in the manuscript, and how often of that with a
@@ -36,7 +35,6 @@ func (u uses) like(v rank.Evidence) int {
 func (d *Docket) surveyed() *survey {
 	d.surveying.Do(func() {
 		s := &survey{evidence: make(map[*Entry]rank.Evidence, len(d.laid)), uses: make(map[string]uses, len(d.use)), crowd: d.crowd()}
-		s.dialect = d.dialect(s.crowd)
 		for text, f := range d.census.forms {
 			k := key(text)
 			u := s.uses[k]
@@ -61,56 +59,61 @@ func (d *Docket) surveyed() *survey {
 
 // crowd is the places of words that lists do not know, those with capitals left
 // out: where many stand together the text is foreign or dialect.
-type crowd map[place]bool
+type crowd struct {
+	first   []int // of each paragraph, where its words begin in there
+	there   []bool
+	dialect float64 // see rank.Evidence
+}
 
 func (d *Docket) crowd() crowd {
-	c := crowd{}
+	c := crowd{first: make([]int, len(d.Document.Paragraphs))}
+	n := 0
+	var words, crowded [2]float64 // elsewhere, in speech
+	for i := range d.Document.Paragraphs {
+		c.first[i] = n
+		n += len(d.Document.Paragraphs[i].Words)
+		for j := range d.Document.Paragraphs[i].Words {
+			words[spoken(&d.Document.Paragraphs[i].Words[j])]++
+		}
+	}
+	c.there = make([]bool, n)
 	for _, e := range d.laid {
 		if e.Kind != UnknownForm || capitalsOf(e.Form) != lower {
 			continue
 		}
 		for i := range e.Occurrences {
 			o := &e.Occurrences[i]
-			c[place{int32(o.Paragraph), int32(o.Word)}] = true
+			c.there[c.first[o.Paragraph]+o.Word] = true
+			crowded[spoken(&d.Document.Paragraphs[o.Paragraph].Words[o.Word])]++
 		}
 	}
+	// Ten words of the usual density on either side smooth what is small.
+	usual := (crowded[0] + crowded[1] + 1) / (words[0] + words[1] + 1)
+	density := func(k int) float64 { return (crowded[k] + 10) / (words[k] + 10/usual) }
+	c.dialect = min(max(math.Log2(density(1)/density(0)), -3), 3)
 	return c
 }
 
-// dialect returns log₂ of how many times denser the crowd is in speech than
-// elsewhere: more where speech is in dialect. It is smoothed by ten words on
-// either side, and bounded.
-func (d *Docket) dialect(c crowd) float64 {
-	var words, crowded [2]float64 // elsewhere, in speech
-	for i := range d.Document.Paragraphs {
-		for j, w := range d.Document.Paragraphs[i].Words {
-			k := 0
-			if w.Setting == manuscript.Speech {
-				k = 1
-			}
-			words[k]++
-			if c[place{int32(i), int32(j)}] {
-				crowded[k]++
-			}
-		}
+// spoken returns 1 for a word in speech, else 0.
+func spoken(w *manuscript.Word) int {
+	if w.Setting == manuscript.Speech {
+		return 1
 	}
-	overall := (crowded[0] + crowded[1] + 1) / (words[0] + words[1] + 1)
-	density := func(k int) float64 { return (crowded[k] + 10) / (words[k] + 10/overall) }
-	return min(max(math.Log2(density(1)/density(0)), -3), 3)
+	return 0
 }
 
 // reach is how many words on either side are company.
 const reach = 6
 
 // beside counts the words around o that are in the crowd or cut short.
-func (c crowd) beside(doc *manuscript.Document, o *Occurrence) int {
+func (c *crowd) beside(doc *manuscript.Document, o *Occurrence) int {
 	words := doc.Paragraphs[o.Paragraph].Words
 	n := 0
 	for i := max(o.Word-reach, 0); i <= min(o.Word+reach, len(words)-1); i++ {
 		if i == o.Word {
 			continue
 		}
-		if words[i].Traits&manuscript.Elision != 0 || c[place{int32(o.Paragraph), int32(i)}] {
+		if words[i].Traits&manuscript.Elision != 0 || c.there[c.first[o.Paragraph]+i] {
 			n++
 		}
 	}
@@ -128,11 +131,14 @@ func (c crowd) beside(doc *manuscript.Document, o *Occurrence) int {
 func (d *Docket) neighbours(found []rank.Evidence, forms map[string]uses) {
 	type entry struct {
 		letters []rune
-		last    int // the last form compared
+		met     int // the last form compared
 	}
 	entries := make([]entry, len(d.laid))
 	ours := make(map[string]bool, len(d.laid))
-	left := map[uint64][]int32{}
+	// The entries that leave a hash are a chain: last gives its newest link.
+	type link struct{ entry, before int32 }
+	links := make([]link, 1, 12*len(d.laid))
+	last := make(map[uint64]int32, 8*len(d.laid))
 	var hashes []uint64
 	for i, e := range d.laid {
 		k := key(e.Form)
@@ -143,7 +149,8 @@ func (d *Docket) neighbours(found []rank.Evidence, forms map[string]uses) {
 		}
 		hashes = leftovers(hashes[:0], entries[i].letters)
 		for _, h := range hashes {
-			left[h] = append(left[h], int32(i))
+			links = append(links, link{int32(i), last[h]})
+			last[h] = int32(len(links) - 1)
 		}
 	}
 	form := 0
@@ -152,12 +159,13 @@ func (d *Docket) neighbours(found []rank.Evidence, forms map[string]uses) {
 		letters := []rune(k)
 		hashes = leftovers(hashes[:0], letters)
 		for _, h := range hashes {
-			for _, i := range left[h] {
+			for at := last[h]; at > 0; at = links[at].before {
+				i := links[at].entry
 				e := &entries[i]
-				if e.last == form || !oneEdit(e.letters, letters) {
+				if e.met == form || !oneEdit(e.letters, letters) {
 					continue
 				}
-				e.last = form
+				e.met = form
 				n, v := u.like(found[i]), &found[i]
 				if ours[k] {
 					v.NearOwn = max(v.NearOwn, n)

@@ -126,7 +126,7 @@ func (g *garden) put(s spot, words int, form, word string) bool {
 	return true
 }
 
-// misspell plants n misspellings of the list, one in five of them twice.
+// misspell plants n misspellings of the list, one in four of them again, and again.
 func (g *garden) misspell(list assay.Truth, n int) {
 	type pair struct{ form, word string }
 	var able []pair
@@ -152,9 +152,11 @@ func (g *garden) misspell(list assay.Truth, n int) {
 			continue
 		}
 		n--
-		again := g.words[places[g.chance.IntN(len(places))]]
-		if g.chance.IntN(5) == 0 && !g.isTaken(again) && again.text == at.text && g.put(again, 1, form, at.text) {
-			n--
+		for g.chance.IntN(4) == 0 {
+			again := g.words[places[g.chance.IntN(len(places))]]
+			if !g.isTaken(again) && again.text == at.text && g.put(again, 1, form, at.text) {
+				n--
+			}
 		}
 	}
 }
