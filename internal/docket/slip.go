@@ -82,7 +82,9 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	}
 	v.Name = best.Word.IsName() && !v.TwoWords
 	v.Use = d.useLike(v, best.Text)
-	v.Accent = bare(key(e.Form)) == bare(key(best.Text))
+	for _, c := range found {
+		v.Accent = v.Accent || bare(key(e.Form)) == bare(key(c.Text))
+	}
 	v.Doubled = single(key(e.Form)) == single(key(best.Text))
 	v.Vowels = consonants(key(e.Form)) == consonants(key(best.Text))
 	v.Order = inOrder(key(e.Form)) == inOrder(key(best.Text))
@@ -263,19 +265,32 @@ var (
 	otherEndings = []string{"ful", "ly", "er", "ers", "s", "es", "ed", "ing", "y"}
 )
 
-// derived reports whether form is a known word of four letters or more with one
+// derived reports whether form is a common word of four letters or more with one
 // of the prefixes or endings.
 func derived(lex *lexicon.Lexicon, form string, prefixes, endings []string) bool {
 	for _, ending := range endings {
 		stem, ok := strings.CutSuffix(form, ending)
-		if ok && len(stem) >= leastStem && (known(lex, stem) || len(ending) > 1 && known(lex, stem+"e")) {
+		if ok && len(stem) >= leastStem && (usual(lex, stem) || len(ending) > 1 && usual(lex, stem+"e")) {
 			return true
 		}
 	}
 	for _, prefix := range prefixes {
-		if stem, ok := strings.CutPrefix(form, prefix); ok && len(stem) >= leastStem && known(lex, stem) {
+		if stem, ok := strings.CutPrefix(form, prefix); ok && len(stem) >= leastStem && usual(lex, stem) {
 			return true
 		}
 	}
 	return false
+}
+
+// rarestStem is the size level up to which words are derived from freely.
+const rarestStem = 50
+
+// usual reports whether lex has a word that is neither rare nor an abbreviation.
+func usual(lex *lexicon.Lexicon, text string) bool {
+	finding := lex.Find(text)
+	if finding.Status != lexicon.Known {
+		return false
+	}
+	level, ok := finding.Words[0].Level(lex.Variety())
+	return ok && level <= rarestStem && !slices.ContainsFunc(finding.Words[0].Sources, func(s lexicon.Source) bool { return s.Class == "abbreviations" })
 }

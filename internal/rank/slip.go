@@ -48,7 +48,7 @@ type Evidence struct {
 	TwoWords  bool    // it is two words
 	FirstKept bool    // it begins with the form's first letter
 	Ending    bool    // the form is the candidate with an ending or without
-	Accent    bool    // the two differ in diacritics alone
+	Accent    bool    // a candidate and the form differ in diacritics alone
 	Doubled   bool    // the two differ in doubled letters alone
 	Vowels    bool    // the two differ in vowels and doubled letters alone
 	Order     bool    // the two differ in the order of letters alone

@@ -38,7 +38,7 @@ func text(path string) string {
 
 // fit reads manuscripts with their truths in turn, measures with each text left
 // out, fits on all and writes the weights.
-func fit(ctx context.Context, files []string, asideFile string, rate float64, out string, list int) error {
+func fit(ctx context.Context, files []string, asideFile string, rate float64, note, out string, list int) error {
 	aside := map[string]bool{}
 	if asideFile != "" {
 		f, err := os.Open(asideFile)
@@ -94,12 +94,15 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, ou
 	if out == "" {
 		return nil
 	}
-	head = append([]string{
+	lines := []string{
 		fmt.Sprintf("Weights of the slip model, fitted by fitslip on %s, rate %g,", time.Now().Format(time.DateOnly), rate),
 		fmt.Sprintf("from errors planted in %d texts: %s.", len(texts), strings.Join(texts, ", ")),
-		"Average precision with each text left out: entries, slips, provisional, exact.",
-	}, head...)
-	return os.WriteFile(out, []byte(weights.Text(head)), 0o644)
+	}
+	if note != "" {
+		lines = append(lines, note)
+	}
+	lines = append(lines, "Average precision with each text left out: entries, slips, provisional, exact.")
+	return os.WriteFile(out, []byte(weights.Text(append(lines, head...))), 0o644)
 }
 
 // byFile yields the examples of each manuscript, in the order of the first ones.

@@ -2,7 +2,7 @@
 // plants errors in texts to fit them on.
 //
 //	fitslip plant [-n N] [-own N] [-seed N] TEXT PAIRS.tsv OUT OUT-TRUTH.tsv
-//	fitslip fit [-aside FILE] [-rate R] [-list N] [-o slip.weights] MANUSCRIPT TRUTH.tsv …
+//	fitslip fit [-aside FILE] [-rate R] [-list N] [-note TEXT] [-o slip.weights] MANUSCRIPT TRUTH.tsv …
 //
 // Manuscripts whose file names agree up to the first hyphen or full stop are one
 // text: fit leaves each text out once, to measure the order on what it was not
@@ -38,6 +38,7 @@ func run(ctx context.Context, args []string) error {
 		aside = flags.String("aside", "", "fit: file of the texts' own slips, one a line")
 		rate  = flags.Float64("rate", 0.1, "fit: which part of the entries are slips in practice")
 		list  = flags.Int("list", 0, "fit: list so many of the entries that stand highest and are no slips, and of the slips that stand lowest")
+		note  = flags.String("note", "", "fit: what the texts are, for the head of the weights")
 		out   = flags.String("o", "", "fit: where to write the weights")
 	)
 	if err := flags.Parse(args[1:]); err != nil {
@@ -48,7 +49,7 @@ func run(ctx context.Context, args []string) error {
 	case args[0] == "plant" && len(files) == 4:
 		return plant(ctx, files[0], files[1], files[2], files[3], *n, *own, *seed)
 	case args[0] == "fit" && len(files) > 0 && len(files)%2 == 0:
-		return fit(ctx, files, *aside, *rate, *out, *list)
+		return fit(ctx, files, *aside, *rate, *note, *out, *list)
 	}
 	return usage
 }
