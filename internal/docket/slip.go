@@ -80,7 +80,6 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	if first, second, two := strings.Cut(best.Text, " "); two {
 		v.TwoWords, v.Adjacent = true, d.adjacent(first, second)
 	}
-	v.Name = best.Word.IsName() && !v.TwoWords
 	v.Use = d.useLike(v, best.Text)
 	for _, c := range found {
 		v.Accent = v.Accent || bare(key(e.Form)) == bare(key(c.Text))
@@ -88,10 +87,7 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	v.Doubled = single(key(e.Form)) == single(key(best.Text))
 	v.Vowels = consonants(key(e.Form)) == consonants(key(best.Text))
 	v.Order = inOrder(key(e.Form)) == inOrder(key(best.Text))
-	a, _ := utf8.DecodeRuneInString(key(e.Form))
-	b, _ := utf8.DecodeRuneInString(key(best.Text))
-	v.FirstKept = a == b
-	v.Ending = endingApart(key(e.Form), key(best.Text))
+	v.FirstKept, v.LastKept = sameEnds(key(e.Form), key(best.Text))
 	return v
 }
 
@@ -149,6 +145,15 @@ func bare(s string) string {
 	}, norm.NFD.String(s))
 }
 
+// sameEnds reports whether a and b have the same first and the same last letter.
+func sameEnds(a, b string) (first, last bool) {
+	x, _ := utf8.DecodeRuneInString(a)
+	y, _ := utf8.DecodeRuneInString(b)
+	u, _ := utf8.DecodeLastRuneInString(a)
+	v, _ := utf8.DecodeLastRuneInString(b)
+	return x == y, u == v
+}
+
 // single returns s with one letter for each run of equal ones.
 func single(s string) string {
 	letters := []rune(s)
@@ -170,23 +175,6 @@ func inOrder(s string) string {
 	letters := []rune(s)
 	slices.Sort(letters)
 	return string(letters)
-}
-
-// endingApart reports whether one of two forms is the other with an ending.
-func endingApart(a, b string) bool {
-	if len(a) < len(b) {
-		a, b = b, a
-	}
-	rest, ok := strings.CutPrefix(a, b)
-	if !ok {
-		return false
-	}
-	for _, ending := range endings {
-		if rest == ending {
-			return true
-		}
-	}
-	return false
 }
 
 // evidence gathers what is to be seen of e itself.

@@ -7,6 +7,7 @@ import (
 	"strconv"
 	"strings"
 	"sync"
+	"unicode/utf8"
 )
 
 // Evidence is what speaks for and against an entry's being a slip. Shares are
@@ -44,14 +45,27 @@ type Evidence struct {
 	Level     int     // its size level: 10 commonest, 70 rarest; 0 of a list
 	Use       int     // how often the manuscript uses it with capitals like the form's; of two words, the rarer
 	Adjacent  int     // of two words, how often they stand side by side in the manuscript
-	Name      bool    // it is a proper name
 	TwoWords  bool    // it is two words
 	FirstKept bool    // it begins with the form's first letter
-	Ending    bool    // the form is the candidate with an ending or without
+	LastKept  bool    // it ends with the form's last letter
 	Accent    bool    // a candidate and the form differ in diacritics alone
 	Doubled   bool    // the two differ in doubled letters alone
 	Vowels    bool    // the two differ in vowels and doubled letters alone
 	Order     bool    // the two differ in the order of letters alone
+}
+
+// inner reports whether the best candidate is one word with the form's first and
+// last letters, which writers seldom get wrong.
+func (e *Evidence) inner() bool { return e.Found && !e.TwoWords && e.FirstKept && e.LastKept }
+
+// missing reports whether the form is one word short of one letter.
+func (e *Evidence) missing(l Letters) bool {
+	return e.Found && !e.TwoWords && e.Distance == 1 && utf8.RuneCountInString(e.Best) > l.Length
+}
+
+// surplus reports whether the form is one word with a letter too many.
+func (e *Evidence) surplus(l Letters) bool {
+	return e.Found && !e.TwoWords && e.Distance == 1 && utf8.RuneCountInString(e.Best) < l.Length
 }
 
 // feature is one number of the log-linear model: what it is called in the file of
@@ -96,27 +110,14 @@ var features = []feature{
 	{"letters, mean", false, func(_ *Evidence, l Letters) float64 { return l.Mean - 3 }},
 	{"letters, worst", false, func(_ *Evidence, l Letters) float64 { return l.Worst/4 - 2 }},
 	{"length", false, func(_ *Evidence, l Letters) float64 { return math.Log2(float64(1+l.Length)) - 3 }},
-	{"three letters", false, func(_ *Evidence, l Letters) float64 { return is(l.Length <= 3) }},
 	{"no vowel", false, func(e *Evidence, _ Letters) float64 { return is(!strings.ContainsAny(e.Form, "aeiouyAEIOUY")) }},
-	{"letters of names", false, func(e *Evidence, l Letters) float64 { return l.Mean - NameLettersOf(e.Form).Mean }},
 	{"letters of names, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (l.Mean - NameLettersOf(e.Form).Mean) }},
 	{"near listed", false, func(e *Evidence, _ Letters) float64 { return doublings(e.NearUse) }},
 	{"near listed, any", false, func(e *Evidence, _ Letters) float64 { return is(e.NearUse > 0) }},
 	{"near own", false, func(e *Evidence, _ Letters) float64 {
 		return math.Max(0, doublings(e.NearOwn)-doublings(e.Count))
 	}},
-	{"near own, capital", false, func(e *Evidence, _ Letters) float64 {
-		return e.Capital * math.Max(0, doublings(e.NearOwn)-doublings(e.Count))
-	}},
-	{"near listed, capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.NearUse > 0) }},
-	{"near over count", false, func(e *Evidence, _ Letters) float64 {
-		return math.Max(0, doublings(e.NearUse)-doublings(e.Count))
-	}},
-	{"count, capital", false, func(e *Evidence, _ Letters) float64 { return e.Capital * (doublings(e.Count) - 1) }},
 	{"letters, mean, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (l.Mean - 3) }},
-	{"letters, worst, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (l.Worst/4 - 2) }},
-	{"length, capital", false, func(e *Evidence, l Letters) float64 { return e.Capital * (math.Log2(float64(1+l.Length)) - 3) }},
-	{"dialect, company", false, func(e *Evidence, _ Letters) float64 { return e.Speech * e.Dialect * min(e.Company, 1) }},
 
 	{"none found", true, func(e *Evidence, _ Letters) float64 { return is(!e.Found) }},
 	{"distance 2", true, func(e *Evidence, _ Letters) float64 { return is(e.Distance == 2) }},
@@ -127,14 +128,9 @@ var features = []feature{
 	{"level", true, func(e *Evidence, _ Letters) float64 { return float64(e.Level) / 35 }},
 	{"use", true, func(e *Evidence, _ Letters) float64 { return doublings(e.Use) }},
 	{"used", true, func(e *Evidence, _ Letters) float64 { return is(e.Use > 0) }},
-	{"name", true, func(e *Evidence, _ Letters) float64 { return is(e.Name) }},
-	{"name, capital", true, func(e *Evidence, _ Letters) float64 { return is(e.Name) * e.Capital }},
 	{"two words", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) }},
 	{"two words, adjacent", true, func(e *Evidence, _ Letters) float64 { return doublings(e.Adjacent) }},
-	{"two words, use", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) * doublings(e.Use) }},
-	{"two words, capital", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) * e.Capital }},
 	{"first letter", true, func(e *Evidence, _ Letters) float64 { return is(e.FirstKept) }},
-	{"ending", true, func(e *Evidence, _ Letters) float64 { return is(e.Ending) }},
 	{"accent", true, func(e *Evidence, _ Letters) float64 { return is(e.Accent) }},
 	{"letters, worse", true, func(e *Evidence, l Letters) float64 {
 		if !e.Found || e.TwoWords {
@@ -145,24 +141,20 @@ var features = []feature{
 	{"doubled", true, func(e *Evidence, _ Letters) float64 { return is(e.Found && e.Doubled) }},
 	{"vowels", true, func(e *Evidence, _ Letters) float64 { return is(e.Found && e.Vowels) }},
 	{"order", true, func(e *Evidence, _ Letters) float64 { return is(e.Found && e.Order) }},
+	{"letter missing", true, func(e *Evidence, l Letters) float64 { return is(e.missing(l)) }},
+	{"letter too many", true, func(e *Evidence, l Letters) float64 { return is(e.surplus(l)) }},
+	{"last letter", true, func(e *Evidence, _ Letters) float64 { return is(e.LastKept) }},
+	{"inner, distance 1", true, func(e *Evidence, _ Letters) float64 { return is(e.inner() && e.Distance == 1) }},
+	{"inner, distance 2", true, func(e *Evidence, _ Letters) float64 { return is(e.inner() && e.Distance == 2) }},
+	{"inner, elided", true, func(e *Evidence, _ Letters) float64 { return is(e.inner()) * e.Elided }},
 	{"use over count", true, func(e *Evidence, _ Letters) float64 {
 		return math.Max(0, doublings(e.Use)-doublings(e.Count))
 	}},
 	{"long, distance 1", true, func(e *Evidence, l Letters) float64 {
 		return is(e.Distance == 1) * (math.Log2(float64(1+l.Length)) - 3)
 	}},
-	{"coined, used", true, func(e *Evidence, _ Letters) float64 { return is(e.Coined && e.Use > 0) }},
-	{"derived, used", true, func(e *Evidence, _ Letters) float64 { return is(e.Derived && e.Use > 0) }},
-	{"long, distance 1, capital", true, func(e *Evidence, l Letters) float64 {
-		return e.Capital * is(e.Distance == 1) * (math.Log2(float64(1+l.Length)) - 3)
-	}},
 	{"distance 2, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Distance == 2) }},
-	{"share, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * e.Share }},
-	{"used, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Use > 0) }},
-	{"ending, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Ending) }},
-	{"first letter, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.FirstKept) }},
 	{"use, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * doublings(e.Use) }},
-	{"level, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * float64(e.Level) / 35 }},
 }
 
 // SlipFeatures returns the names of the features, those of the provisional set
