@@ -15,7 +15,7 @@ func (m Model) failureView(width int) []string {
 // actionStrip draws the strip of actions on two lines, the chosen one in brackets.
 func (m Model) actionStrip(width int) []string {
 	lines := []string{""}
-	for i, b := range m.Keys.actions() {
+	for i, b := range m.actions() {
 		label := " " + b.Help().Desc + " "
 		if i == m.action {
 			label = m.sheet.Cursor.Render(m.sheet.Signs.Open + b.Help().Desc + m.sheet.Signs.Close)

@@ -35,6 +35,7 @@ func (m Model) helpSections() []helpSection {
 		{"a correction of your own", line.CorrectionKeys()},
 		{"adding to a list", line.AdditionKeys()},
 		{"a query", line.QueryKeys()},
+		{"the language of a passage", line.LanguageKeys()},
 		{"finding a form", finder.Keys()},
 		{"a page", m.page.Keys},
 		{"when a ruling could not be written", m.Failure},
@@ -47,6 +48,8 @@ var explained = []string{
 		"can be undone: nothing is unsaved when you leave, and the manuscript itself is never changed.",
 	"Accept emends to the candidate under the cursor. Let stand leaves the form as it is. Add puts it on a " +
 		"list of known words. Query asks the author, the publisher or yourself. Later puts the entry off.",
+	"A passage is a run of words in another language or in dialect: let stand takes it as a whole, in the " +
+		"language you name; unfold puts its words on the docket one by one.",
 	"Quotations start unchecked, and so does speech where the form also stands in narration: accept leaves " +
 		"them alone; let stand and add take them in, unless you have changed a check.",
 }

@@ -7,6 +7,7 @@ import "github.com/charmbracelet/bubbles/key"
 // enter, space and tab do all of it too.
 type KeyMap struct {
 	Accept, Stand, Add, Query, Later, Correct key.Binding
+	Unfold                                    key.Binding
 	Undo, Redo                                key.Binding
 	Next, Previous, NextOpen, Find, Order     key.Binding
 	Focus, Actions                            key.Binding
@@ -22,6 +23,7 @@ func Keys() KeyMap {
 		Query:    key.NewBinding(key.WithKeys("a"), key.WithHelp("a", "query")),
 		Later:    key.NewBinding(key.WithKeys("g"), key.WithHelp("g", "later")),
 		Correct:  key.NewBinding(key.WithKeys(";"), key.WithHelp(";", "correct")),
+		Unfold:   key.NewBinding(key.WithKeys("p"), key.WithHelp("p", "unfold the passage")),
 		Undo:     key.NewBinding(key.WithKeys("u"), key.WithHelp("u", "undo")),
 		Redo:     key.NewBinding(key.WithKeys("r"), key.WithHelp("r", "redo")),
 		Next:     key.NewBinding(key.WithKeys("l", "right"), key.WithHelp("l →", "next entry")),
@@ -42,18 +44,13 @@ func (k KeyMap) rulings() []key.Binding {
 	return []key.Binding{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo}
 }
 
-// actions are what the strip of actions offers, the commonest first.
-func (k KeyMap) actions() []key.Binding {
-	return []key.Binding{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo, k.NextOpen, k.Find, k.Order, k.Help, k.Quit}
-}
-
 // ShortHelp returns what the footer shows.
 func (k KeyMap) ShortHelp() []key.Binding { return append(k.rulings(), k.Help, k.Quit) }
 
 // FullHelp returns all keys: the rulings, then the moves.
 func (k KeyMap) FullHelp() [][]key.Binding {
 	return [][]key.Binding{
-		{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo},
+		{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Unfold, k.Undo, k.Redo},
 		{k.Next, k.Previous, k.NextOpen, k.Find, k.Order, k.Focus, k.Actions, k.Help, k.Quit, k.Break},
 	}
 }

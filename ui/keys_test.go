@@ -34,7 +34,7 @@ func TestKeysAndTheirHelp(t *testing.T) {
 func TestNoKeyMeansTwoThings(t *testing.T) {
 	m := New(context.Background(), &docket.Session{Docket: &docket.Docket{}}, Options{Getenv: plain})
 	k := m.Keys
-	everywhere := []key.Binding{k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Undo, k.Redo, k.Next, k.Previous,
+	everywhere := []key.Binding{k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Unfold, k.Undo, k.Redo, k.Next, k.Previous,
 		k.NextOpen, k.Find, k.Order, k.Focus, k.Help, k.Quit, k.Accept}
 	for name, part := range map[string][][]key.Binding{
 		"alignment":   append(m.alignment.Keys.FullHelp(), []key.Binding{k.Actions}),
@@ -61,6 +61,7 @@ on the bench | s | s | add
 on the bench | a | a | query
 on the bench | g | g | later
 on the bench | ; | ; | correct
+on the bench | p | p | unfold the passage
 on the bench | u | u | undo
 on the bench | r | r | redo
 on the bench | l right | l → | next entry
@@ -103,6 +104,8 @@ a query | enter | enter | ask
 a query | tab up | tab ↑ | whom
 a query | down shift+tab | ↓ | alone or with a ruling
 a query | esc | esc | back
+the language of a passage | enter | enter | let it stand in this language, or in none named
+the language of a passage | esc | esc | back
 finding a form | enter | enter | show the form
 finding a form | down tab ctrl+n | tab ↓ | next form
 finding a form | up shift+tab ctrl+p | ↑ | previous form

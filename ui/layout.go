@@ -14,7 +14,7 @@ type frame struct {
 // typedLines is how many lines the line being typed takes.
 func (m *Model) typedLines() int {
 	switch m.screen {
-	case onCorrection:
+	case onCorrection, onLanguage:
 		return 2
 	case onAddition, onQuery:
 		return 4

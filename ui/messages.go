@@ -36,13 +36,13 @@ func capital(s string) bool {
 
 // summary says what a ruling did: "accepted harbour for harber".
 func (m *Model) summary(r ledger.Ruling) string {
-	form := m.visible(r.Form)
+	form := m.named(r.Form)
 	var s string
 	switch r.Act {
 	case ledger.Accept:
 		s = "accepted " + m.visible(r.Word) + " for " + form
 	case ledger.Reject:
-		s = form + " stands"
+		s = m.standsAs(r)
 	case ledger.Add:
 		s = "added " + form + " to the " + m.visible(r.List) + " list"
 		if r.Kind != "" {
@@ -52,6 +52,8 @@ func (m *Model) summary(r ledger.Ruling) string {
 		return "query to " + m.visible(r.To) + " on " + form
 	case ledger.Later:
 		return form + " put off"
+	case ledger.Unfold:
+		s = form + " unfolded"
 	default:
 		return string(r.Act) + " " + form
 	}
@@ -76,7 +78,7 @@ func (m *Model) told(rulings []ledger.Ruling) string {
 	if n := len(rulings) - 1; n > 0 {
 		var forms []string
 		for _, r := range rulings[1:] {
-			forms = append(forms, fmt.Sprintf("%s (%d)", m.visible(r.Form), len(r.Occurrences)))
+			forms = append(forms, fmt.Sprintf("%s (%d)", m.named(r.Form), len(r.Occurrences)))
 		}
 		s += "; with it " + strings.Join(forms, ", ")
 	}
@@ -111,6 +113,8 @@ func (m *Model) ruled(r ledger.Ruling) string {
 		return "query"
 	case ledger.Later:
 		return "later"
+	case ledger.Unfold:
+		return "unfolded"
 	}
 	return string(r.Act)
 }
@@ -136,7 +140,7 @@ func (m *Model) welcome(last *ledger.Ruling) string {
 	var s []string
 	if n := len(m.docket.Unplaced); n > 0 {
 		s = append(s, fmt.Sprintf("%s of earlier rulings not in the manuscript as it is now (first: %s)",
-			count(n, "place"), m.visible(m.docket.Unplaced[0].Ruling.Form)))
+			count(n, "place"), m.named(m.docket.Unplaced[0].Ruling.Form)))
 	}
 	if last != nil {
 		s = append(s, "resumed: "+count(m.docket.Tally().Ruled, "entry")+" ruled, the latest: "+m.summary(*last))
@@ -169,7 +173,7 @@ func (m *Model) facts(e *docket.Entry) (say []string, strip string) {
 		say = append(say, stands)
 		return say, ""
 	}
-	if e.Kind != docket.WordInContext {
+	if e.Kind != docket.WordInContext && e.Kind != docket.Passage {
 		say = append(say, "slip "+text.Percent(f.slip))
 	}
 	if chapters := f.parts[min(m.firstChapter(), len(f.parts)):]; len(chapters) > 1 {

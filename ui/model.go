@@ -49,6 +49,7 @@ const (
 	onCorrection        // a line below the alignment
 	onAddition          //
 	onQuery             //
+	onLanguage          // of a passage
 	onActions           // the strip of actions
 	onFailure           // a ruling could not be written
 )
@@ -89,6 +90,7 @@ type Model struct {
 	lastKind      map[string]string  // the kind last added, by list and capital
 	lastList      string
 	lastWhom      string
+	lastLanguage  string // of a passage
 
 	begun   bool         // the first entry has been chosen
 	held    []tea.KeyMsg // keys that wait their turn
@@ -110,6 +112,7 @@ type Model struct {
 	correction  line.Correction
 	addition    line.Addition
 	query       line.Query
+	language    line.Language
 	companions  []ledger.Act // what the query may go with, option by option
 	typed       string       // the word that an accept is for
 	action      int          // on the strip

@@ -37,6 +37,18 @@ func (m *Model) pressBench(k tea.KeyMsg) tea.Cmd {
 	case key.Matches(k, m.Keys.Order):
 		return m.turnOrder()
 	case m.screen == onFinished:
+	default:
+		if cmd, taken := m.pressPassage(k); taken {
+			return cmd
+		}
+		return m.pressRuling(k)
+	}
+	return nil
+}
+
+// pressRuling takes the rulings on the entry, and what its parts do.
+func (m *Model) pressRuling(k tea.KeyMsg) tea.Cmd {
+	switch {
 	case key.Matches(k, m.Keys.Accept):
 		return m.accept("")
 	case key.Matches(k, m.Keys.Stand):
@@ -107,7 +119,7 @@ func (m *Model) nextFocus() {
 // pressActions takes the keys of the strip; a key that is none of them closes it
 // and does what it always does.
 func (m *Model) pressActions(k tea.KeyMsg) tea.Cmd {
-	n := len(m.Keys.actions())
+	n := len(m.actions())
 	switch {
 	case key.Matches(k, m.Strip.Left):
 		m.action = (m.action + n - 1) % n
@@ -117,7 +129,7 @@ func (m *Model) pressActions(k tea.KeyMsg) tea.Cmd {
 		m.open(onBench)
 	case key.Matches(k, m.Strip.Do):
 		m.open(onBench)
-		return m.pressBench(keyOf(m.Keys.actions()[m.action]))
+		return m.pressBench(keyOf(m.actions()[m.action]))
 	default:
 		m.open(onBench)
 		return m.pressBench(k)

@@ -63,11 +63,11 @@ func TestNoScreenIsWiderOrTallerThanTheTerminal(t *testing.T) {
 	sizes := [][2]int{{1, 1}, {59, 18}, {60, 17}, {60, 18}, {61, 19}, {79, 22}, {80, 23}, {80, 24},
 		{100, 30}, {119, 40}, {120, 18}, {121, 41}, {200, 60}, {300, 60}}
 	few := [][2]int{{60, 18}, {80, 24}, {121, 41}, {200, 60}}
-	for i, manuscript := range []string{storm, hard + strings.Repeat("漢字 harbor qqq ", 80) + "\n"} {
+	for i, manuscript := range []string{storm, hard + strings.Repeat("漢字 harbor qqq ", 80) + "\n", song} {
 		for _, s := range screens {
 			h := ready(t, manuscript)
 			h.press(s.keys...)
-			for _, size := range [][][2]int{sizes, few}[i] {
+			for _, size := range [][][2]int{sizes, few, few}[i] {
 				h.send(tea.WindowSizeMsg{Width: size[0], Height: size[1]})
 				h.drain()
 				fits(t, h, size[0], size[1], s.name)

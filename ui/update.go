@@ -134,6 +134,8 @@ func (m *Model) press(k tea.KeyMsg) tea.Cmd {
 		return m.pressAddition(k)
 	case onQuery:
 		return m.pressQuery(k)
+	case onLanguage:
+		return m.pressLanguage(k)
 	case onActions:
 		return m.pressActions(k)
 	default:

@@ -113,6 +113,8 @@ func (m Model) footer() []string {
 		return only([]key.Binding{a.Add, pair(a.Left, a.Right, "choose"), pair(a.Down, a.Up, "list, kind, note"), brief(a.Query, "with a query"), a.Leave})
 	case onQuery:
 		return only(m.query.Keys.ShortHelp())
+	case onLanguage:
+		return only([]key.Binding{brief(m.language.Keys.Stand, "let stand"), m.language.Keys.Leave})
 	case onActions:
 		return only([]key.Binding{pair(m.Strip.Left, m.Strip.Right, "choose"), m.Strip.Do, m.Strip.Close})
 	case onFinished:
@@ -130,11 +132,14 @@ func (m Model) footer() []string {
 		r := m.related.Keys
 		second = []key.Binding{pair(r.Down, r.Up, "row"), brief(r.Check, "check"), pair(k.Previous, k.Next, "entry"), m.nextPart()}
 	}
+	if full == 1 && m.onPassage() {
+		return []string{list(k.Stand, k.Unfold, k.Query, k.Help)}
+	}
 	if full == 1 {
 		return []string{list(k.Accept, k.Stand, k.Add, k.Query, k.Correct, k.Help)}
 	}
 	second = append(second, k.Help, k.Quit)
-	return []string{list(k.rulings()...), list(second...)}
+	return []string{list(m.rulingKeys()...), list(second...)}
 }
 
 // pair names two keys that go opposite ways by their letters, under one word.
@@ -222,6 +227,8 @@ func (m Model) typedView(f frame) []string {
 		return append([]string{rule}, m.addition.View(f.left)...)
 	case onQuery:
 		return append([]string{rule}, m.query.View(f.left)...)
+	case onLanguage:
+		return append([]string{rule}, m.language.View(f.left)...)
 	case onActions:
 		return append([]string{rule}, m.actionStrip(f.left)...)
 	case onFailure:

@@ -203,6 +203,10 @@ func (m *Model) showPassage() {
 // layRows lays the candidates under the form, with a typed correction above
 // them, and puts the cursor on row at.
 func (m *Model) layRows(at int) {
+	if m.onPassage() {
+		m.notePassage()
+		return
+	}
 	e, f := m.entry, m.work(m.entry).facts
 	var form []string
 	var rows []alignment.Row

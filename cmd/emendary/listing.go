@@ -141,7 +141,11 @@ func (l *entryLister) write(e listed) error {
 	if len(e.Places) > 0 {
 		first = e.Places[0].String()
 	}
-	l.row(shown(e.Form), string(e.Kind), strconv.Itoa(len(e.Places)), text.Percent(e.Slip), first, strings.Join(candidates, ", "))
+	form := shown(e.Form)
+	if e.Kind == docket.Passage {
+		form = text.Cut(form, l.width, "…")
+	}
+	l.row(form, string(e.Kind), strconv.Itoa(len(e.Places)), text.Percent(e.Slip), first, strings.Join(candidates, ", "))
 	return nil
 }
 

@@ -21,7 +21,8 @@ func newRule(p *program) *cobra.Command {
 		Long: `Take rulings from standard input into the ledger of a manuscript: tab-separated
 lines under a header with the columns form, ruling and word, and where needed
 list, scope, place, kind, note, query, to, who and time. A ruling is accept,
-reject, add, query or later. "report rulings" writes the same lines.
+reject, add, query, later or, of a passage, unfold. "report rulings" writes the
+same lines.
 
 A line is in dispute where a ruling in force, or an earlier line, says otherwise
 of its form: it is named on standard error and not taken, and the exit status is

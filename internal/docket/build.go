@@ -69,19 +69,29 @@ func (c *census) counts() iter.Seq2[string, int] {
 	}
 }
 
-// entries makes the docket's entries, by first place.
-func (d *Docket) entries(ours map[string]bool) []*Entry {
-	groups := map[string][]*pending{}
-	for text, f := range d.census.forms {
-		if v := judge(d.base, f, ours); v.kind != "" {
-			for _, p := range f.places {
-				if w := d.word(p); asked(w) {
-					groups[key(text)] = append(groups[key(text)], &pending{d.occurrence(p), w.Traits, v})
-				}
+// entries makes the docket's entries, by first place. The words of a passage are
+// in no other entry, unless it is unfolded.
+func (d *Docket) entries() []*Entry {
+	verdicts := d.verdicts(d.base)
+	var out []*Entry
+	folded := map[place]bool{}
+	for _, r := range d.passages(d.unknownForms(verdicts)) {
+		e := d.passageEntry(r)
+		out = append(out, e)
+		if !d.unfolded[e.Form] {
+			for p := range r.places() {
+				folded[p] = true
 			}
 		}
 	}
-	var out []*Entry
+	groups := map[string][]*pending{}
+	for f, v := range verdicts {
+		for _, p := range f.places {
+			if w := d.word(p); asked(w) && !folded[p] {
+				groups[key(f.text)] = append(groups[key(f.text)], &pending{d.occurrence(p), w.Traits, v})
+			}
+		}
+	}
 	for _, group := range groups {
 		if joined := d.joins(group); joined != nil {
 			out = append(out, fold(joined)...)
@@ -98,10 +108,6 @@ func (d *Docket) entries(ours map[string]bool) []*Entry {
 
 // merge puts entries of one form together: a join may come from both its halves.
 func merge(entries []*Entry) []*Entry {
-	type name struct {
-		kind Kind
-		form string
-	}
 	seen := map[name]*Entry{}
 	out := entries[:0]
 	for _, e := range entries {

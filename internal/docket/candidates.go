@@ -26,8 +26,11 @@ type Candidate struct {
 // a list names, then by edits, commonness and the manuscript's own use of them.
 // It is safe for concurrent use and stops when ctx ends, with ctx's error. One
 // form costs a search of the lexicon within two edits, of three or four where
-// nothing is so near.
+// nothing is so near. A passage has none.
 func (d *Docket) Candidates(ctx context.Context, e *Entry, n int) ([]Candidate, error) {
+	if e.Kind == Passage {
+		return nil, ctx.Err()
+	}
 	s := search{lex: d.Lexicon(), model: d.model, use: d.use, size: d.census.size}
 	return s.candidates(ctx, e.Form, e.Kind, e.Instead, n)
 }

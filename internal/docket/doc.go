@@ -9,8 +9,9 @@
 //
 // What goes on the docket: words that no layer of the lexicon knows, words that
 // only another variety has, words that a list bars, faults the splitter sees
-// (2th, l9l4, ‘tis), and two neighbours that are one listed word (to gether).
-// How forms fold into one entry is written at fold.
+// (2th, l9l4, ‘tis), two neighbours that are one listed word (to gether), and
+// passages in other languages, whose words are no entries until it is unfolded.
+// How forms fold into one entry is written at fold, what a passage is at passages.
 //
 // What does not: numbers, ordinals, Roman numerals, initials, words with digits
 // in them; hyphenated compounds whose members are all known; known words with a
@@ -31,6 +32,7 @@ const (
 	OtherVariety  Kind = "other variety"
 	BarredWord    Kind = "barred word"
 	Join          Kind = "join"
+	Passage       Kind = "passage"
 	WordInContext Kind = "word in context" // a listed word that somebody ruled on or asked for
 )
 
@@ -51,7 +53,7 @@ type Entry struct {
 type Occurrence struct {
 	Paragraph int            // index into Document.Paragraphs
 	Word      int            // index of its first word there
-	Words     int            // how many words it spans: 1, for a join 2
+	Words     int            // how many words it spans: 1, for a join 2, for a passage all of them
 	Text      string         // as it stands, without Lead, Tail and marks
 	Lead      string         // what stands before it in its word: a suspended hyphen, an apostrophe
 	Tail      string         // what stands after it: a possessive, a clitic, a suspended hyphen

@@ -29,13 +29,17 @@ type Docket struct {
 	model  rank.Model
 	lex    atomic.Pointer[lexicon.Lexicon] // base and what this book's rulings added
 
-	words  []int // of each part
-	order  Order
-	exact  map[*Entry]float64  // probabilities of a slip that TakeSlips brought
-	laid   []*Entry            // the entries as they were laid out; never changes
-	byForm map[string]*Entry   // by exact form
-	byKey  map[string][]*Entry // by key
-	log    []ledger.Ruling     // all rulings recorded, undos included
+	words    []int // of each part
+	order    Order
+	exact    map[*Entry]float64       // probabilities of a slip that TakeSlips brought
+	laid     []*Entry                 // the entries as they were first laid out; never changes
+	current  atomic.Pointer[[]*Entry] // the entries as they are laid out, by place
+	ours     map[string]bool          // keys of forms that the manuscript's own rulings put on lists
+	ruled    map[string]bool          // forms of passages that rulings in force are on
+	unfolded map[string]bool          // those of them whose words are ruled on one by one
+	byForm   map[string]*Entry        // by exact form
+	byKey    map[string][]*Entry      // by key
+	log      []ledger.Ruling          // all rulings recorded, undos included
 
 	surveying sync.Once
 	survey    *survey // made when first asked for
@@ -49,23 +53,25 @@ type Unplaced struct {
 	Occurrence ledger.Occurrence
 }
 
-// lay lays out the docket of a census under lex. ours are the keys of the forms
-// that the manuscript's own rulings put on lists.
-func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, ours map[string]bool) *Docket {
+// lay lays out the docket of a census under lex. Of rulings it takes the words
+// that they put on lists and the passages they are on; Record takes the rest.
+func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, rulings []ledger.Ruling) *Docket {
 	d := &Docket{
 		Document: doc, census: c, base: lex, model: rank.Default(), now: time.Now,
 		use: map[string]int{}, byForm: map[string]*Entry{}, byKey: map[string][]*Entry{},
-		order: ByPlace, exact: map[*Entry]float64{},
+		order: ByPlace, exact: map[*Entry]float64{}, ours: listed(rulings),
 	}
 	d.words = d.partWords()
 	d.lex.Store(lex)
 	for text, f := range c.forms {
 		d.use[key(text)] += len(f.places)
 	}
-	for _, e := range d.entries(ours) {
+	d.takePassageRulings(ledger.Effective(rulings))
+	for _, e := range d.entries() {
 		d.list(e)
 	}
 	d.laid = slices.Clone(d.Entries)
+	d.current.Store(&d.laid)
 	return d
 }
 

@@ -19,7 +19,7 @@ const (
 	AnotherUsage                  // another variety's spellings, and barred words
 	Doubtful                      // perhaps slips
 	Dialect                       // dialect and elisions
-	ForeignWords                  // words of other languages
+	ForeignWords                  // words of other languages, and passages
 	CompoundCoinages              // compounds, and coinages made of known parts
 	Names
 	Listed // listed words that somebody asked for
@@ -42,6 +42,8 @@ func (d *Docket) Group(e *Entry) Group {
 	switch p := d.Probability(e); {
 	case e.Kind == WordInContext:
 		return Listed
+	case e.Kind == Passage:
+		return ForeignWords
 	case e.Kind == OtherVariety || e.Kind == BarredWord:
 		return AnotherUsage
 	case p >= likely:

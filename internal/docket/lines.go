@@ -129,7 +129,7 @@ func readLine(header, cells []string) (Line, error) {
 
 func readAct(cell string) (ledger.Act, error) {
 	act, err := oneOf("ruling", cell, string(ledger.Accept), string(ledger.Reject), string(ledger.Add),
-		string(ledger.Query), string(ledger.Later))
+		string(ledger.Query), string(ledger.Later), string(ledger.Unfold))
 	return ledger.Act(act), err
 }
 

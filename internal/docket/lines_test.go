@@ -14,7 +14,7 @@ func TestReadLinesNamesWhatIsWrong(t *testing.T) {
 	tests := []struct{ name, text, want string }{
 		{"nothing", "", `r.tsv: no header line; begin with the columns form, ruling and word, parted by tabs`},
 		{"no header", "harber\taccept\tharbour\n", `r.tsv: line 1: no column "form" in the header; begin with the columns form, ruling and word, parted by tabs`},
-		{"another ruling", "form\truling\tword\nharber\tkeep\t\n", `r.tsv: line 2: ruling "keep" is not one of accept, reject, add, query, later`},
+		{"another ruling", "form\truling\tword\nharber\tkeep\t\n", `r.tsv: line 2: ruling "keep" is not one of accept, reject, add, query, later, unfold`},
 		{"no word", "form\truling\tword\nharber\taccept\t\n", `r.tsv: line 2: accept without a word; give the word that takes the place of harber`},
 		{"no form", "form\truling\tword\n\treject\t\n", `r.tsv: line 2: no form; give the form that the ruling is on`},
 		{"no question", "form\truling\tword\nharber\tquery\t\n", `r.tsv: line 2: query without a question; add a column query that asks it`},

@@ -26,13 +26,13 @@ const leastStem = 4
 // were text accepted for e; text may be empty. O(entries).
 func (d *Docket) Related(e *Entry, text string) []Related {
 	stem := key(e.Form)
-	if len(stem) < leastStem || e.Kind == Join {
+	if len(stem) < leastStem || e.several() {
 		return nil
 	}
 	lex := d.Lexicon()
 	var out []Related
 	for _, other := range d.Entries {
-		if other == e || !other.Open() || other.Kind == Join || !builtOn(key(other.Form), stem) {
+		if other == e || !other.Open() || other.several() || !builtOn(key(other.Form), stem) {
 			continue
 		}
 		r := Related{Entry: other}
@@ -83,11 +83,11 @@ const farthest = 2
 func (d *Docket) Near(e *Entry) []NearForm {
 	alphabet := d.base.Alphabet()
 	form := alphabet.Fold(alphabet.Letters(e.Form))
-	if len(form) < leastStem {
+	if len(form) < leastStem || e.Kind == Passage {
 		return nil
 	}
 	var out []NearForm
-	for _, other := range d.laid {
+	for _, other := range *d.current.Load() {
 		if other == e || abs(len(other.Form)-len(e.Form)) > 4*farthest {
 			continue
 		}

@@ -53,13 +53,13 @@ func (d *Docket) Undo(r ledger.Ruling) ledger.Ruling {
 func (d *Docket) Rulings() []ledger.Ruling { return ledger.Effective(d.log) }
 
 // Record takes rulings that the ledger holds into the docket's state. Without an
-// undo among them it takes time in proportion to their occurrences; an undo
-// takes all rulings anew.
+// undo among them it takes time in proportion to their occurrences; an undo, and
+// a ruling on a passage, takes all rulings anew.
 func (d *Docket) Record(rulings ...ledger.Ruling) {
 	d.log = append(d.log, rulings...)
 	added := false
 	for i := range rulings {
-		if rulings[i].Act == ledger.Undo {
+		if rulings[i].Act == ledger.Undo || rulings[i].EntryKind == string(Passage) {
 			d.restate()
 			return
 		}
@@ -75,6 +75,10 @@ func (d *Docket) Record(rulings ...ledger.Ruling) {
 
 // restate works out the state of all entries from the whole log.
 func (d *Docket) restate() {
+	inForce := d.Rulings()
+	if d.takePassageRulings(inForce) {
+		d.layAgain()
+	}
 	for _, e := range d.Entries {
 		e.rulings, e.putOff, e.open = nil, false, len(e.Occurrences)
 		for i := range e.Occurrences {
@@ -82,7 +86,6 @@ func (d *Docket) restate() {
 		}
 	}
 	d.Unplaced = nil
-	inForce := d.Rulings()
 	for i := range inForce {
 		d.take(&inForce[i])
 	}

@@ -108,6 +108,10 @@ func (m *matching) claimPlaces(l *Line) {
 	}
 	wanted := slices.Clone(l.Places)
 	for _, e := range entries {
+		if why := m.d.unfit(e, l.Act); why != "" {
+			m.dispute(l, "%s", why)
+			continue
+		}
 		claims := m.claim(e)
 		for i := range e.Occurrences {
 			at := slices.Index(wanted, m.d.at(e, i))
@@ -145,6 +149,10 @@ func (m *matching) claimForm(l *Line) {
 		return
 	}
 	for _, e := range entries {
+		if why := m.d.unfit(e, l.Act); why != "" {
+			m.dispute(l, "%s", why)
+			continue
+		}
 		claims := m.claim(e)
 		for i := range claims {
 			if claims[i] == nil && m.best(e, e.Occurrences[i]) == l {
@@ -164,6 +172,17 @@ func (m *matching) best(e *Entry, o Occurrence) *Line {
 		return l
 	}
 	return m.folded[key(e.Form)][0]
+}
+
+// unfit says why an act is not for e; "" where it is.
+func (d *Docket) unfit(e *Entry, act ledger.Act) string {
+	switch passage := e.Kind == Passage; {
+	case passage && (act == ledger.Accept || act == ledger.Add):
+		return "a passage; reject lets it stand, unfold puts its words on the docket"
+	case !passage && act == ledger.Unfold:
+		return "no passage; only a passage can be unfolded"
+	}
+	return ""
 }
 
 // rulings makes one ruling of each line on each entry, for the occurrences that

@@ -110,7 +110,7 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 		return nil, err
 	}
 	lex = s.choose(lex, c)
-	s.Docket = lay(doc, c, lex, listed(rulings))
+	s.Docket = lay(doc, c, lex, rulings)
 	s.Docket.who, s.Docket.now = opt.Who, opt.Now
 	s.Docket.Record(rulings...)
 	s.keep(rulings)

@@ -16,7 +16,7 @@ import (
 // What no text can teach: entries that a rule or a list has already judged.
 const (
 	slipOfRule   = 0.99 // a fault that the splitter sees, a word that a list bars
-	slipOfListed = 0.0  // a listed word: nothing but somebody's asking speaks against it
+	slipOfListed = 0.0  // a listed word, a passage: nothing but somebody's asking speaks against it
 )
 
 // Slip returns the provisional probability, 0 to 1, that e is a slip rather than
@@ -45,7 +45,7 @@ func judged(e *Entry) (float64, bool) {
 	switch {
 	case e.Kind == BarredWord, e.Kind == UnknownForm && e.Why != "":
 		return slipOfRule, true
-	case e.Kind == WordInContext:
+	case e.Kind == WordInContext, e.Kind == Passage:
 		return slipOfListed, true
 	}
 	return 0, false

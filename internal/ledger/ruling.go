@@ -38,13 +38,14 @@ func (id ID) IsZero() bool { return id == ID{} }
 // Act is what a ruling does.
 type Act string
 
-// The acts. Any of them but Undo may carry a query.
+// The acts. Any of them but Undo may carry a query; Unfold is for passages alone.
 const (
 	Accept Act = "accept" // emend the form to Word
 	Reject Act = "reject" // let the form stand
 	Add    Act = "add"    // put the form on List
 	Query  Act = "query"  // ask, and nothing else
 	Later  Act = "later"  // put the entry off
+	Unfold Act = "unfold" // rule on the words of a passage one by one
 	Undo   Act = "undo"   // take back the ruling that Undoes names; of an undo: redo
 )
 
@@ -83,7 +84,7 @@ type Ruling struct {
 	Act         Act          // what the ruling does
 	Word        string       // of an accept: what takes the form's place
 	List        string       // of an add: book, series or house
-	Kind        string       // of an add: person, place, term, …
+	Kind        string       // of an add: person, place, term, …; of a reject: a passage's language
 	Note        string       // the editor's own words about it
 	Query       string       // the question, if there is one
 	To          string       // whom it asks: author, publisher, self
@@ -97,7 +98,7 @@ type Ruling struct {
 // check reports what keeps r out of a ledger, whatever that ledger holds.
 func (r *Ruling) check() error {
 	switch r.Act {
-	case Accept, Reject, Add, Query, Later:
+	case Accept, Reject, Add, Query, Later, Unfold:
 		if !r.Undoes.IsZero() {
 			return fmt.Errorf("it is %q and names a ruling to undo; only an undo may", r.Act)
 		}
@@ -106,7 +107,7 @@ func (r *Ruling) check() error {
 			return fmt.Errorf("it is an undo and does not say of which ruling; set Undoes")
 		}
 	default:
-		return fmt.Errorf("its act is %.40q; it must be accept, reject, add, query, later or undo", r.Act)
+		return fmt.Errorf("its act is %.40q; it must be accept, reject, add, query, later, unfold or undo", r.Act)
 	}
 	switch r.Scope {
 	case Every, Checked, "":

@@ -45,7 +45,7 @@ func gatherFigures(s *docket.Session) (content, error) {
 }
 
 func (f *figures) entries(d *docket.Docket) {
-	kinds := []docket.Kind{docket.UnknownForm, docket.OtherVariety, docket.BarredWord, docket.Join, docket.WordInContext}
+	kinds := []docket.Kind{docket.UnknownForm, docket.OtherVariety, docket.BarredWord, docket.Join, docket.Passage, docket.WordInContext}
 	counts := map[docket.Kind]int{}
 	for _, e := range d.Entries {
 		if e.Kind != docket.WordInContext || len(e.Rulings()) > 0 {

@@ -70,7 +70,7 @@ func describe(l docket.Line) string {
 
 // acts is the acts that can be in force, in the order of the reports.
 func acts() []ledger.Act {
-	return []ledger.Act{ledger.Accept, ledger.Reject, ledger.Add, ledger.Query, ledger.Later}
+	return []ledger.Act{ledger.Accept, ledger.Reject, ledger.Add, ledger.Query, ledger.Later, ledger.Unfold}
 }
 
 func (r *rulings) tsv(t *table) { t.Write(r.text) }

@@ -3,8 +3,10 @@ package report
 import (
 	"cmp"
 	"fmt"
+	"maps"
 	"path/filepath"
 	"slices"
+	"strconv"
 	"strings"
 
 	"emendary/internal/docket"
@@ -67,7 +69,7 @@ func gatherStyleSheet(s *docket.Session) (content, error) {
 			it.known = true
 			it.lists = with(it.lists, cmp.Or(r.List, "book"))
 			it.kinds = with(it.kinds, r.Kind)
-		case r.Act == ledger.Reject:
+		case r.Act == ledger.Reject && r.EntryKind != string(docket.Passage): // those are no words
 			it = get(r.Form)
 			it.stand = true
 		case r.Act == ledger.Accept && chosen(s, r):
@@ -184,8 +186,29 @@ func general(s *docket.Session) [][2]string {
 	for _, l := range s.Options.With {
 		out = append(out, [2]string{"words of another language", l.Name + ", " + fileName(l.File)})
 	}
+	out = append(out, passages(s)...)
 	return append(out, [2]string{"house list", cmp.Or(fileName(s.Options.House), "none")},
 		[2]string{"series list", cmp.Or(fileName(s.Options.Series), "none")})
+}
+
+// passages says how many passages stand in each language.
+func passages(s *docket.Session) [][2]string {
+	stand := map[string]int{}
+	for _, e := range s.Docket.Entries {
+		if e.Kind != docket.Passage {
+			continue
+		}
+		for _, o := range e.Occurrences {
+			if o.Ruling != nil && o.Ruling.Act == ledger.Reject {
+				stand[cmp.Or(o.Ruling.Kind, "another language")]++
+			}
+		}
+	}
+	var out [][2]string
+	for _, language := range slices.Sorted(maps.Keys(stand)) {
+		out = append(out, [2]string{"passages in " + language, strconv.Itoa(stand[language])})
+	}
+	return out
 }
 
 // fileName is a list's name without its folder, which is nobody else's business.

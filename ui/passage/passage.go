@@ -56,8 +56,15 @@ func (m Model) FormLine() int {
 	return at
 }
 
-// wrap keeps a margin of one column on either side.
-func (m *Model) wrap() { m.lines = text.Wrap(m.whole, m.width-2, m.form) }
+// wrap keeps a margin of one column on either side, and a form in one piece unless
+// it is a long one.
+func (m *Model) wrap() {
+	keep := m.form
+	if text.Width(m.whole[keep[0]:keep[1]]) > m.width/2 {
+		keep = [2]int{}
+	}
+	m.lines = text.Wrap(m.whole, m.width-2, keep)
+}
 
 // View returns the lines around the form; a sign at the edge says that the
 // paragraph goes on.
