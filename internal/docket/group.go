@@ -15,7 +15,7 @@ type Group uint8
 
 // The groups.
 const (
-	LikelySlips      Group = iota // more likely slips than not
+	LikelySlips      Group = iota // one in five or more is a slip
 	AnotherUsage                  // another variety's spellings, and barred words
 	Doubtful                      // perhaps slips
 	Dialect                       // dialect and elisions
@@ -30,10 +30,11 @@ func (g Group) String() string {
 	return [...]string{"likely slips", "other variety", "doubtful", "dialect", "foreign", "compounds and coinages", "names", "listed"}[g]
 }
 
-// From which probability of a slip on an entry is likely one, and doubtful.
+// From which probability of a slip on an entry is likely one, and doubtful: a slip
+// that is passed over costs an editor far more than a look at a word.
 const (
-	likely   = 0.5
-	doubtful = 0.1
+	likely   = 0.2
+	doubtful = 0.05
 )
 
 // Group returns the group of e, by its kind, its probability of being a slip and

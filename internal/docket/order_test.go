@@ -94,8 +94,8 @@ func TestTheOrderBySlipPutsGroupsTogether(t *testing.T) {
 		slips[e] = 0.01
 	}
 	slips[d.Find("seperate")] = 0.9
-	slips[d.Find("harberside")] = 0.3
-	slips[d.Find("Tressikk")] = 0.05
+	slips[d.Find("harberside")] = 0.15
+	slips[d.Find("Tressikk")] = 0.04
 	d.TakeSlips(slips)
 	d.Reorder(BySlip, nil)
 	groups := []Group{}
@@ -107,7 +107,7 @@ func TestTheOrderBySlipPutsGroupsTogether(t *testing.T) {
 		"seperate", "gray", "harberside", "pokin'", "velamar", "kelp-skerrel", "Tressick", "Tressikk", "Marrack", "Pryle", "lay",
 	}, forms(s))
 
-	slips[d.Find("Tressikk")] = 0.2
+	slips[d.Find("Tressikk")] = 0.1
 	d.TakeSlips(slips)
 	d.Reorder(BySlip, nil)
 	assert.Equal(t, []string{"seperate", "gray", "harberside", "Tressick", "Tressikk"}, forms(s)[:5],
