@@ -36,28 +36,76 @@ func text(path string) string {
 	return base
 }
 
-// fit reads manuscripts with their truths in turn, measures with each text left
-// out, fits on all and writes the weights.
-func fit(ctx context.Context, files []string, asideFile string, rate float64, note, out string, list int) error {
+// fitting is how the weights are fitted.
+type fitting struct {
+	pairs, aside, note, out string
+	rate                    float64
+	list                    int
+}
+
+// fit reads manuscripts with their truths, measures with each text left out, fits
+// on all and writes the weights.
+func (f fitting) fit(ctx context.Context, files []string) error {
 	aside := map[string]bool{}
-	if asideFile != "" {
-		f, err := os.Open(asideFile)
+	if f.aside != "" {
+		file, err := os.Open(f.aside)
 		if err != nil {
 			return err
 		}
-		defer f.Close()
-		if aside, err = assay.ReadForms(f, asideFile); err != nil {
+		defer file.Close()
+		if aside, err = assay.ReadForms(file, f.aside); err != nil {
 			return err
 		}
 	}
+	folder, err := os.MkdirTemp("", "fitslip")
+	if err != nil {
+		return err
+	}
+	defer os.RemoveAll(folder)
 	var all []example
-	for i := 0; i < len(files); i += 2 {
-		read, err := examples(ctx, files[i], files[i+1], aside)
+	for _, file := range files {
+		planted, err := f.planted(ctx, file, folder)
 		if err != nil {
 			return err
 		}
-		all = append(all, read...)
+		for _, p := range planted {
+			read, err := examples(ctx, p[0], p[1], aside)
+			if err != nil {
+				return err
+			}
+			all = append(all, read...)
+		}
 	}
+	return f.weigh(all)
+}
+
+// planted returns the manuscripts and truths of an argument: its own, or two
+// copies of a text with errors planted in them.
+func (f fitting) planted(ctx context.Context, file, folder string) ([][2]string, error) {
+	if manuscript, truth, ok := strings.Cut(file, ":"); ok {
+		return [][2]string{{manuscript, truth}}, nil
+	}
+	if f.pairs == "" {
+		return nil, fmt.Errorf("%s: no truth; give MANUSCRIPT:TRUTH.tsv, or -pairs PAIRS.tsv to have errors planted", file)
+	}
+	var out [][2]string
+	for seed := range uint64(2) {
+		name := filepath.Join(folder, fmt.Sprintf("%s-%d", text(file), seed+1))
+		copied := [2]string{name + filepath.Ext(file), name + ".tsv"}
+		if err := plant(ctx, file, f.pairs, copied[0], copied[1], planted, plantedOwn, seed+1); err != nil {
+			return nil, err
+		}
+		out = append(out, copied)
+	}
+	return out, nil
+}
+
+// How many errors are planted in a copy, and how many of them in the text's own
+// names and coinages.
+const planted, plantedOwn = 300, 15
+
+// weigh measures with each text left out, fits on all and writes the weights.
+func (f fitting) weigh(all []example) error {
 	var texts []string
 	for _, x := range all {
 		if !slices.Contains(texts, x.text) {
@@ -66,7 +114,7 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, no
 	}
 	fmt.Println("average precision of the order, each text left out of the fit in turn:")
 	fmt.Println("manuscript\tentries\tslips\tprovisional\texact\tfitted on all, provisional\texact")
-	weights := weigh(all, rate)
+	weights := weigh(all, f.rate)
 	var head []string
 	for _, name := range texts {
 		var rest, held []example
@@ -77,7 +125,7 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, no
 				rest = append(rest, x)
 			}
 		}
-		w := weigh(rest, rate)
+		w := weigh(rest, f.rate)
 		for file, held := range byFile(held) {
 			slips := 0
 			for _, x := range held {
@@ -88,21 +136,21 @@ func fit(ctx context.Context, files []string, asideFile string, rate float64, no
 			line := fmt.Sprintf("%s\t%d\t%d\t%.4f\t%.4f", file, len(held), slips, precision(w, held, false), precision(w, held, true))
 			fmt.Printf("%s\t%.4f\t%.4f\n", line, precision(weights, held, false), precision(weights, held, true))
 			head = append(head, strings.ReplaceAll(line, "\t", ", "))
-			show(w, held, list)
+			show(w, held, f.list)
 		}
 	}
-	if out == "" {
+	if f.out == "" {
 		return nil
 	}
 	lines := []string{
-		fmt.Sprintf("Weights of the slip model, fitted by fitslip on %s, rate %g,", time.Now().Format(time.DateOnly), rate),
+		fmt.Sprintf("Weights of the slip model, fitted by fitslip on %s, rate %g,", time.Now().Format(time.DateOnly), f.rate),
 		fmt.Sprintf("from errors planted in %d texts: %s.", len(texts), strings.Join(texts, ", ")),
 	}
-	if note != "" {
-		lines = append(lines, note)
+	if f.note != "" {
+		lines = append(lines, f.note)
 	}
 	lines = append(lines, "Average precision with each text left out: entries, slips, provisional, exact.")
-	return os.WriteFile(out, []byte(weights.Text(append(lines, head...))), 0o644)
+	return os.WriteFile(f.out, []byte(weights.Text(append(lines, head...))), 0o644)
 }
 
 // byFile yields the examples of each manuscript, in the order of the first ones.

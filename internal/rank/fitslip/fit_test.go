@@ -90,17 +90,30 @@ func TestFitWritesWeightsThatReadBack(t *testing.T) {
 	a, aTruth := plantedDemo(t, "one", "1")
 	b, bTruth := plantedDemo(t, "two", "2")
 	out := filepath.Join(t.TempDir(), "slip.weights")
-	require.NoError(t, run(context.Background(), []string{"fit", "-o", out, a, aTruth, b, bTruth}))
+	require.NoError(t, run(context.Background(), []string{"fit", "-o", out, "-note", "The demo.", a + ":" + aTruth, b + ":" + bTruth}))
 	data, err := os.ReadFile(out)
 	require.NoError(t, err)
-	assert.Contains(t, string(data), "from errors planted in 2 texts: one, two.")
+	assert.Contains(t, string(data), "from errors planted in 2 texts: one, two.\n# The demo.\n")
 	w, err := rank.ParseWeights(string(data))
 	require.NoError(t, err)
 	assert.NotZero(t, w.Exact[0])
 }
 
+func TestFitPlantsErrorsItself(t *testing.T) {
+	folder := t.TempDir()
+	pairs, out := filepath.Join(folder, "pairs.tsv"), filepath.Join(folder, "slip.weights")
+	require.NoError(t, os.WriteFile(pairs, []byte("teh\tthe\n"), 0o600))
+	a, aTruth := plantedDemo(t, "one", "1")
+	require.NoError(t, run(context.Background(), []string{"fit", "-pairs", pairs, "-o", out, demo, a + ":" + aTruth}))
+	data, err := os.ReadFile(out)
+	require.NoError(t, err)
+	assert.Contains(t, string(data), "from errors planted in 2 texts: emended, one.")
+	assert.Contains(t, string(data), "\n# emended-2.md, ")
+	assert.ErrorContains(t, run(context.Background(), []string{"fit", demo}), "emended.md: no truth; give MANUSCRIPT:TRUTH.tsv")
+}
+
 func TestUsage(t *testing.T) {
-	for _, args := range [][]string{nil, {"fit"}, {"fit", "a"}, {"plant", "a"}, {"other"}} {
+	for _, args := range [][]string{nil, {"fit"}, {"plant", "a"}, {"other"}} {
 		assert.ErrorContains(t, run(context.Background(), args), "want plant or fit", args)
 	}
 }
