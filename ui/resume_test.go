@@ -31,6 +31,22 @@ func TestAReviewResumesAfterTheLastRuling(t *testing.T) {
 	assert.Len(t, h.rulings("quai"), 1)
 }
 
+func TestAReviewBySlipResumesWithTheLikeliestThatIsOpen(t *testing.T) {
+	s := start(t, many)
+	path := s.Options.Manuscript
+	s.Docket.Reorder(docket.BySlip, nil)
+	h := newHand(t, s, 80, 24)
+	h.drain()
+	first := h.form()
+	h.press("l", "l", "d") // the first two are passed over
+	require.NoError(t, s.Close())
+	s = restart(t, path)
+	s.Docket.Reorder(docket.BySlip, nil)
+	h = newHand(t, s, 80, 24)
+	h.drain()
+	assert.Equal(t, first, h.form())
+}
+
 func TestPlacesThatAreGoneAreTold(t *testing.T) {
 	s := start(t, storm)
 	path := s.Options.Manuscript

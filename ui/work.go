@@ -75,18 +75,18 @@ func (m *Model) checks(e *docket.Entry) []bool {
 	return checked
 }
 
-// compute asks for the facts of the entry on screen and of the open ones that
-// come after it, as many at a time as there are processors; then for what puts the
-// rest in order.
+// compute asks for the facts of the entry on screen, at once, and of the open ones
+// that come after it, as many at a time as there are processors; then for what puts
+// the rest in order.
 func (m *Model) compute() tea.Cmd {
 	var cmds []tea.Cmd
 	ask := func(e *docket.Entry) bool {
-		if m.running >= runtime.GOMAXPROCS(0) {
-			return false
-		}
 		w := m.work(e)
 		if w.facts != nil || w.asked == m.lexicon+1 {
 			return true
+		}
+		if m.running >= runtime.GOMAXPROCS(0) && e != m.entry {
+			return false
 		}
 		w.asked = m.lexicon + 1
 		m.running++

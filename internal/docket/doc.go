@@ -33,7 +33,7 @@ const (
 	BarredWord    Kind = "barred word"
 	Join          Kind = "join"
 	Passage       Kind = "passage"
-	WordInContext Kind = "word in context" // a listed word that somebody ruled on or asked for
+	WordInContext Kind = "word in context" // a listed word, or one within a passage, that somebody ruled on or asked for
 )
 
 // Entry is one question about the occurrences of one form.
