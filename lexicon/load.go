@@ -35,6 +35,30 @@ const maxLine = 64 << 10
 // characters that cannot be seen, such as control characters.
 func Load(r io.Reader, name string) (*List, error) {
 	b := newListBuilder(name)
+	if err := scan(r, name, b.add); err != nil {
+		return nil, err
+	}
+	return b.list()
+}
+
+// ReadWords returns the words of a list that Load would read, in the order of its lines
+// and each as often as it stands there, without making a list of them: for lists
+// that are put together from several. Its errors are those of Load, but for words
+// of too many letters, which NewList refuses.
+func ReadWords(r io.Reader, name string) ([]Word, error) {
+	var words []Word
+	err := scan(r, name, func(w Word) error {
+		words = append(words, w)
+		return checkWord(w)
+	})
+	if err != nil {
+		return nil, err
+	}
+	return words, nil
+}
+
+// scan hands the words of a list's lines to take, one by one.
+func scan(r io.Reader, name string, take func(Word) error) error {
 	lines := bufio.NewScanner(r)
 	lines.Buffer(nil, maxLine)
 	lines.Split(scanLine)
@@ -47,18 +71,18 @@ func Load(r io.Reader, name string) (*List, error) {
 		}
 		w, ok, err := parseLine(line)
 		if err == nil && ok {
-			err = b.add(w)
+			err = take(w)
 		}
 		if err != nil {
-			return nil, fmt.Errorf("%s: line %d: %w", name, number, err)
+			return fmt.Errorf("%s: line %d: %w", name, number, err)
 		}
 	}
 	if err := lines.Err(); errors.Is(err, bufio.ErrTooLong) {
-		return nil, fmt.Errorf("%s: line %d: longer than %d bytes; give each word a line of its own", name, number+1, maxLine)
+		return fmt.Errorf("%s: line %d: longer than %d bytes; give each word a line of its own", name, number+1, maxLine)
 	} else if err != nil {
-		return nil, fmt.Errorf("%s: after line %d: %w", name, number, err)
+		return fmt.Errorf("%s: after line %d: %w", name, number, err)
 	}
-	return b.list()
+	return nil
 }
 
 // scanLine splits at LF and takes one CR before it off.

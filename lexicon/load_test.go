@@ -153,3 +153,24 @@ func FuzzLoad(f *testing.F) {
 		require.Equal(t, words, slices.Collect(again.Words()))
 	})
 }
+
+func TestReadWordsReadsWhatLoadDoes(t *testing.T) {
+	const text = "# ours\nharbour\nMerrin\tperson\tthe pilot\nokay → OK\nharbour\tterm\n"
+	words, err := lexicon.ReadWords(strings.NewReader(text), "house.txt")
+	require.NoError(t, err)
+	assert.Equal(t, []lexicon.Word{
+		{Text: "harbour"}, {Text: "Merrin", Kind: "person", Note: "the pilot"},
+		{Text: "okay", Barred: true, Instead: "OK"}, {Text: "harbour", Kind: "term"},
+	}, words)
+	list, err := lexicon.NewList("house.txt", words)
+	require.NoError(t, err)
+	assert.Equal(t, slices.Collect(load(t, text).Words()), slices.Collect(list.Words()))
+
+	for _, bad := range []string{"a\nSallow Quay\n", "a\n\xff\n", "a\n\x07\n", "a\nb\tc\td\te\n"} {
+		_, want := lexicon.Load(strings.NewReader(bad), "house.txt")
+		words, err := lexicon.ReadWords(strings.NewReader(bad), "house.txt")
+		assert.Empty(t, words)
+		require.Error(t, err)
+		assert.EqualError(t, err, want.Error())
+	}
+}

@@ -64,22 +64,20 @@ func foreignWords(base *lexicon.Lexicon, languages []Language) (*lexicon.List, e
 	var words []lexicon.Word
 	var names []string
 	for _, l := range languages {
-		list, err := load(l.File)
+		read, err := fromFile(l.File, lexicon.ReadWords)
 		if err != nil {
 			return nil, err
 		}
 		names = append(names, l.Name)
-		for w := range list.Words() {
-			if w.Barred {
+		own := map[string]bool{}
+		for _, w := range read {
+			if own[w.Text] || w.Barred {
 				continue
 			}
+			own[w.Text] = true
 			if i, ok := at[w.Text]; ok {
-				if words[i].Kind != l.Name {
-					words[i].Kind += ", " + l.Name
-				}
-				continue
-			}
-			if base.Find(w.Text).Status == lexicon.Unknown {
+				words[i].Kind += ", " + l.Name
+			} else if base.Find(w.Text).Status == lexicon.Unknown {
 				at[w.Text] = len(words)
 				words = append(words, lexicon.Word{Text: w.Text, Kind: l.Name})
 			}

@@ -3,6 +3,7 @@ package docket
 import (
 	"errors"
 	"fmt"
+	"io"
 	"io/fs"
 	"os"
 	"strings"
@@ -54,15 +55,18 @@ func Words(file, house, series string, with []Language) (lex *lexicon.Lexicon, b
 	return lex, base, paths, nil
 }
 
-func load(path string) (*lexicon.List, error) {
+func load(path string) (*lexicon.List, error) { return fromFile(path, lexicon.Load) }
+
+// fromFile reads a word list's file.
+func fromFile[T any](path string, read func(io.Reader, string) (T, error)) (none T, err error) {
 	f, err := os.Open(path)
 	var named *fs.PathError
 	if errors.As(err, &named) {
 		err = named.Err
 	}
 	if err != nil {
-		return nil, fmt.Errorf("%s: %w; name a word list, one word a line", path, err)
+		return none, fmt.Errorf("%s: %w; name a word list, one word a line", path, err)
 	}
 	defer f.Close()
-	return lexicon.Load(f, path)
+	return read(f, path)
 }
