@@ -27,6 +27,10 @@
 // hangs on its number. Words that differ in case alone (rose, Rose) share a path
 // and a number, which then stands for several written forms.
 //
+// Beside it each list has an automaton of its words from their ends, for searches
+// that start where a form is right, and marks in the first one that tell which
+// words lie below, for searches that weigh them.
+//
 // # Case, apostrophes and full stops
 //
 // A form is covered by an entry that has the same folded letters (see

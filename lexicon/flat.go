@@ -11,18 +11,26 @@ import (
 // The flat form of a list:
 //
 //	magic      8 bytes
-//	header     six 32-bit numbers: arcs, words, written forms, root,
-//	           bytes of records, bytes of the tail
-//	arcs       two numbers an arc
-//	skips      a number an arc
-//	offsets    a number a word
+//	header     ten 32-bit numbers: arcs, words, written forms, root, reversed
+//	           arcs, reversed root, sets, members of all sets, bytes of records,
+//	           bytes of the tail
+//	arcs       two 32-bit numbers an arc
+//	skips      a 32-bit number an arc
+//	offsets    a 32-bit number a word
+//	reversed   a 32-bit number an arc of the reversed trie
+//	ends       a 32-bit number a set
+//	members    a 16-bit number each
+//	below      a 16-bit number an arc
+//	listed     a 16-bit number a word
 //	records    bytes
-//	tail       letters and attributes: uvarints, and texts after their lengths
+//	tail       letters, attributes and their grades: uvarints, and texts after
+//	           their lengths
 //
-// All 32-bit numbers are little-endian, and stand at multiples of four bytes.
+// All 32-bit numbers are little-endian, and stand at multiples of four bytes; so
+// are the 16-bit ones, which stand at multiples of two.
 const (
-	magic      = "lexicon\x01"
-	headerSize = len(magic) + 6*4
+	magic      = "lexicon\x02"
+	headerSize = len(magic) + 10*4
 )
 
 // AppendBinary appends the list in the flat form that [Open] views, without its
@@ -39,16 +47,27 @@ func (l *List) AppendBinary(b []byte) ([]byte, error) {
 	for i := range l.attributes {
 		tail = l.attributes[i].append(tail)
 	}
+	for _, g := range l.gradeOf {
+		tail = binary.AppendUvarint(tail, uint64(g))
+	}
 	if len(l.records) > math.MaxUint32 || len(tail) > math.MaxUint32 {
 		return b, fmt.Errorf("%s: more than 4 GB of words; use a shorter list", l.name)
 	}
 	b = append(b, magic...)
-	for _, n := range []int{len(l.trie.skips), len(l.offsets), l.written, int(l.trie.root), len(l.records), len(tail)} {
+	for _, n := range []int{
+		len(l.trie.skips), len(l.offsets), l.written, int(l.trie.root), len(l.reversed.arcs), int(l.reversed.root),
+		len(l.ends), len(l.members), len(l.records), len(tail),
+	} {
 		b = binary.LittleEndian.AppendUint32(b, uint32(n))
 	}
-	for _, numbers := range [][]uint32{l.trie.arcs, l.trie.skips, l.offsets} {
+	for _, numbers := range [][]uint32{l.trie.arcs, l.trie.skips, l.offsets, l.reversed.arcs, l.ends} {
 		for _, n := range numbers {
 			b = binary.LittleEndian.AppendUint32(b, n)
+		}
+	}
+	for _, numbers := range [][]uint16{l.members, l.below, l.listed} {
+		for _, n := range numbers {
+			b = binary.LittleEndian.AppendUint16(b, n)
 		}
 	}
 	b = append(b, l.records...)
@@ -68,7 +87,7 @@ func Open(name, data string) (*List, error) {
 func open(name, data string, inPlace bool) (*List, error) {
 	l, err := parse(data, inPlace)
 	if err == nil {
-		err = l.trie.check(len(l.letters))
+		err = l.check()
 	}
 	if err != nil {
 		return nil, fmt.Errorf("%s: not the flat form of a list: %w; generate it anew", name, err)
@@ -81,7 +100,7 @@ func parse(data string, inPlace bool) (*List, error) {
 	if len(data) < headerSize || data[:len(magic)] != magic {
 		return nil, errors.New("other first bytes than expected")
 	}
-	var header [6]int
+	var header [10]int
 	for i := range header {
 		n := littleEndianAt(data, len(magic)+4*i)
 		if uint64(n) > uint64(len(data)) { // no sum of such numbers can overflow
@@ -89,25 +108,44 @@ func parse(data string, inPlace bool) (*List, error) {
 		}
 		header[i] = int(n)
 	}
-	arcs, words, written, root, records, tail := header[0], header[1], header[2], header[3], header[4], header[5]
-	if want := headerSize + 4*(3*arcs+words) + records + tail; len(data) != want {
+	arcs, words, root, reversed, reversedRoot := header[0], header[1], header[3], header[4], header[5]
+	sets, members, records, tail := header[6], header[7], header[8], header[9]
+	if want := headerSize + 4*(3*arcs+words+reversed+sets) + 2*(members+arcs+words) + records + tail; len(data) != want {
 		return nil, fmt.Errorf("%d bytes where its header promises %d", len(data), want)
 	}
-	l := &List{written: written}
+	l := &List{written: header[2]}
 	rest := data[headerSize:]
 	l.trie.root = uint32(root)
-	l.trie.arcs, rest = cutNumbers(rest, 2*arcs, inPlace)
-	l.trie.skips, rest = cutNumbers(rest, arcs, inPlace)
-	l.offsets, rest = cutNumbers(rest, words, inPlace)
+	l.trie.arcs, rest = cutNumbers[uint32](rest, 2*arcs, inPlace)
+	l.trie.skips, rest = cutNumbers[uint32](rest, arcs, inPlace)
+	l.offsets, rest = cutNumbers[uint32](rest, words, inPlace)
+	l.reversed.root = uint32(reversedRoot)
+	l.reversed.arcs, rest = cutNumbers[uint32](rest, reversed, inPlace)
+	l.ends, rest = cutNumbers[uint32](rest, sets, inPlace)
+	l.members, rest = cutNumbers[uint16](rest, members, inPlace)
+	l.below, rest = cutNumbers[uint16](rest, arcs, inPlace)
+	l.listed, rest = cutNumbers[uint16](rest, words, inPlace)
 	l.records = rest[:records]
 	r := reader{rest: rest[records:]}
 	l.letters = make([]string, r.count())
 	for i := range l.letters {
 		l.letters[i] = r.text()
 	}
+	l.reversed.childBit = childBit(len(l.letters))
 	l.attributes = make([]attribute, r.count())
 	for i := range l.attributes {
 		l.attributes[i] = r.attribute()
+	}
+	l.gradeOf = make([]uint16, len(l.attributes))
+	for i := range l.gradeOf {
+		g := r.number()
+		if g > len(l.grades) || g >= maxSets {
+			return nil, fmt.Errorf("grade %d before %d", g, len(l.grades))
+		}
+		if g == len(l.grades) {
+			l.grades = append(l.grades, i)
+		}
+		l.gradeOf[i] = uint16(g)
 	}
 	if r.short || r.rest != "" {
 		return nil, errors.New("its letters and attributes do not fill their place")
@@ -115,40 +153,53 @@ func parse(data string, inPlace bool) (*List, error) {
 	return l, nil
 }
 
+// check makes sure that nothing leads out of the list.
+func (l *List) check() error {
+	if err := l.trie.check(len(l.letters)); err != nil {
+		return err
+	}
+	if err := l.reversed.check(len(l.letters)); err != nil {
+		return err
+	}
+	return l.marks.check()
+}
+
 // check makes sure that every walk stays within the arcs and comes to an end.
 func (t *trie) check(letters int) error {
 	if len(t.skips) == 0 || int(t.root) >= len(t.skips) || t.arcs[len(t.arcs)-2]&lastArc == 0 {
 		return errors.New("its root or its last node is missing")
 	}
-	node := 1 // first arc of the node
+	node := uint32(1) // first arc of the node
 	for i := 1; i < len(t.skips); i++ {
 		head := t.arcs[2*i]
-		if int(t.arcs[2*i+1]) >= node {
+		if t.arcs[2*i+1] >= node {
 			return fmt.Errorf("arc %d leads to a node that is not before its own", i)
 		}
 		if int(head>>labelBit) >= letters {
 			return fmt.Errorf("arc %d has a letter that does not exist", i)
 		}
-		if head&lastArc != 0 {
-			node = i + 1
-		}
+		last := -(head & lastArc / lastArc) // all bits or none: where nodes end can't be foretold
+		node ^= (node ^ (uint32(i) + 1)) & last
 	}
 	return nil
 }
 
 // cutNumbers returns n numbers from the head of data, and what follows them.
-func cutNumbers(data string, n int, inPlace bool) ([]uint32, string) {
-	rest := data[4*n:]
+func cutNumbers[T uint16 | uint32](data string, n int, inPlace bool) ([]T, string) {
+	size := int(unsafe.Sizeof(T(0)))
+	rest := data[size*n:]
 	if n == 0 {
 		return nil, rest
 	}
 	if inPlace {
 		// Nothing writes to a list's numbers: the string stays as it is.
-		return unsafe.Slice((*uint32)(unsafe.Pointer(unsafe.StringData(data))), n), rest
+		return unsafe.Slice((*T)(unsafe.Pointer(unsafe.StringData(data))), n), rest
 	}
-	numbers := make([]uint32, n)
+	numbers := make([]T, n)
 	for i := range numbers {
-		numbers[i] = littleEndianAt(data, 4*i)
+		for at := size - 1; at >= 0; at-- {
+			numbers[i] = numbers[i]<<8 | T(data[size*i+at])
+		}
 	}
 	return numbers, rest
 }

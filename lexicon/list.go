@@ -25,6 +25,9 @@ type List struct {
 	letters []string // what the labels of the trie stand for: folded letters, ascending
 	written int      // written forms
 
+	reversed reversed // the same words from their ends
+	marks             // what is listed where
+
 	// offsets[n] is where in records the written forms of word n stand: their
 	// number, then for each its attribute, its length in bytes and its text, the
 	// numbers as uvarints, in ascending order of the texts.
@@ -69,6 +72,18 @@ func (l *List) Words() iter.Seq[Word] {
 // forms returns the written forms of word n with their attributes.
 func (l *List) forms(n uint32) iter.Seq2[string, *attribute] {
 	return func(yield func(string, *attribute) bool) {
+		for a, text := range l.indexes(n) {
+			if !yield(text, &l.attributes[a]) {
+				return
+			}
+		}
+	}
+}
+
+// indexes returns the written forms of word n after the indexes of their
+// attributes.
+func (l *List) indexes(n uint32) iter.Seq2[int, string] {
+	return func(yield func(int, string) bool) {
 		if int(n) >= len(l.offsets) || int(l.offsets[n]) > len(l.records) {
 			return
 		}
@@ -76,7 +91,7 @@ func (l *List) forms(n uint32) iter.Seq2[string, *attribute] {
 		for range r.number() {
 			a := r.number()
 			text := r.text()
-			if r.short || a >= len(l.attributes) || !yield(text, &l.attributes[a]) {
+			if r.short || a >= len(l.attributes) || !yield(a, text) {
 				return
 			}
 		}
@@ -150,6 +165,7 @@ func (b *listBuilder) list() (*List, error) {
 	})
 	tries := newTrieBuilder()
 	var records []byte
+	var words [][]uint32
 	indexes := map[string][]int{} // of attributes, by what is easily compared of them
 	for start := 0; start < len(b.entries); {
 		end := start + 1
@@ -165,11 +181,16 @@ func (b *listBuilder) list() (*List, error) {
 			records = binary.AppendUvarint(records, uint64(l.attribute(indexes, e.word)))
 			records = appendText(records, e.word.Text)
 		}
+		words = append(words, b.entries[start].labels)
 		tries.add(b.entries[start].labels)
 		start = end
 	}
 	l.trie = tries.finish()
 	l.records = string(records)
+	l.reversed = reverse(words, len(l.letters))
+	if err := l.mark(words); err != nil {
+		return nil, err
+	}
 	return l, nil
 }
 

@@ -32,18 +32,12 @@ func (t *trie) number(labels []uint32) (uint32, bool) {
 	var n uint32
 	next := t.root
 	for i, label := range labels {
-		arc := next
-		if arc == 0 {
-			return 0, false
-		}
-		for t.arcs[2*arc]>>labelBit < label && t.arcs[2*arc]&lastArc == 0 {
-			arc++
-		}
-		head := t.arcs[2*arc]
-		if head>>labelBit != label {
+		arc, ok := t.arc(next, label)
+		if !ok {
 			return 0, false
 		}
 		n += t.skips[arc]
+		head := t.arcs[2*arc]
 		if i == len(labels)-1 {
 			return n, head&endsWord != 0
 		}
@@ -51,6 +45,17 @@ func (t *trie) number(labels []uint32) (uint32, bool) {
 		next = t.arcs[2*arc+1]
 	}
 	return 0, false
+}
+
+// arc returns the arc with a label of the node whose first arc is given.
+func (t *trie) arc(arc, label uint32) (uint32, bool) {
+	if arc == 0 {
+		return 0, false
+	}
+	for t.arcs[2*arc]>>labelBit < label && t.arcs[2*arc]&lastArc == 0 {
+		arc++
+	}
+	return arc, t.arcs[2*arc]>>labelBit == label
 }
 
 // draft is an arc of a node that is still open to more words.

@@ -11,5 +11,5 @@ const (
 	Words   = 137446 // written forms
 
 	// SHA256 is the checksum of english.lexicon.
-	SHA256 = "d75594239cdf896cbd5c65d873b968f683e51c74a857692f42fac48d55908029"
+	SHA256 = "65af8ba8415e5020b9f9f57b81ba295727b03dbcfc02ee76baf089e39e738de9"
 )
