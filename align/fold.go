@@ -37,6 +37,18 @@ func (a *Alphabet) Fold(letters []Letter) []Letter {
 	return folded
 }
 
+// AppendFolded appends the folded letters of s to letters, as Fold(Letters(s))
+// returns them. For s in ASCII it allocates nothing where letters has room.
+func (a *Alphabet) AppendFolded(letters []Letter, s string) []Letter {
+	if !isPlain(s) {
+		return append(letters, a.Fold(a.Letters(s))...)
+	}
+	for i := range len(s) {
+		letters = append(letters, Letter(foldRune(rune(s[i]))))
+	}
+	return letters
+}
+
 func foldRune(r rune) rune {
 	switch {
 	case 'A' <= r && r <= 'Z':

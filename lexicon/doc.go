@@ -10,8 +10,9 @@
 //     it, words of other languages, the house, the series and the book list
 //     ([Layer]), in one [Variety].
 //   - [Lexicon.Find] answers whether a form is known; [Lexicon.Within] gives all
-//     words within a distance of it, and [Lexicon.Attested] the variety that a
-//     manuscript is written in.
+//     words within a distance of it ([Lexicon.AppendWithin] where many forms are
+//     asked about), and [Lexicon.Attested] the variety that a manuscript is written
+//     in.
 //
 // The embedded English base lexicon is package emendary/lexicon/english.
 //

@@ -23,6 +23,7 @@ type layer struct {
 	*List
 	toLetter []align.Letter          // by label
 	toLabel  map[align.Letter]uint32 // the inverse
+	ascii    [128]uint32             // the inverse for ASCII, and one more; 0 where there is none
 }
 
 // New returns a lexicon of the base list alone, in variety v.
@@ -73,6 +74,9 @@ func newLayer(l *List, a *align.Alphabet) *layer {
 		if letters := a.Fold(a.Letters(text)); len(letters) == 1 {
 			y.toLetter[label] = letters[0]
 			y.toLabel[letters[0]] = uint32(label)
+			if letters[0] < align.Letter(len(y.ascii)) {
+				y.ascii[letters[0]] = uint32(label) + 1
+			}
 		}
 	}
 	return y
@@ -95,26 +99,50 @@ func (x *Lexicon) Alphabet() *align.Alphabet {
 	return x.alphabet
 }
 
-// labels spells folded letters with the labels of y; false where y has not all.
-func (y *layer) labels(letters []align.Letter) ([]uint32, bool) {
-	labels := make([]uint32, len(letters))
-	for i, letter := range letters {
-		label, ok := y.toLabel[letter]
-		if !ok {
-			return nil, false
-		}
-		labels[i] = label
+// label returns the label of a folded letter; false where y has none.
+func (y *layer) label(letter align.Letter) (uint32, bool) {
+	if 0 <= letter && letter < align.Letter(len(y.ascii)) {
+		label := y.ascii[letter]
+		return label - 1, label != 0
 	}
-	return labels, true
+	label, ok := y.toLabel[letter]
+	return label, ok
 }
 
-// lookup returns the number of the word that folded letters spell.
+// lookup returns the number of the word that folded letters spell. It allocates
+// nothing.
 func (y *layer) lookup(letters []align.Letter) (uint32, bool) {
-	labels, ok := y.labels(letters)
-	if !ok {
-		return 0, false
+	p, ok := y.follow(letters)
+	return p.number, ok && p.ends
+}
+
+// place is where letters lead to in the trie of a layer.
+type place struct {
+	node   uint32 // what follows, 0 where nothing does
+	number uint32 // of the word they are, or of the first that begins with them
+	ends   bool   // they are a word
+}
+
+// follow returns where folded letters lead to; false where no word begins so.
+func (y *layer) follow(letters []align.Letter) (place, bool) {
+	p := place{node: y.trie.root}
+	for _, letter := range letters {
+		label, ok := y.label(letter)
+		if !ok {
+			return place{}, false
+		}
+		arc, ok := y.trie.arc(p.node, label)
+		if !ok {
+			return place{}, false
+		}
+		if p.ends {
+			p.number++
+		}
+		p.number += y.trie.skips[arc]
+		p.ends = y.trie.arcs[2*arc]&endsWord != 0
+		p.node = y.trie.arcs[2*arc+1]
 	}
-	return y.trie.number(labels)
+	return p, true
 }
 
 // Status is what the lexicon says of a form.

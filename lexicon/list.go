@@ -84,10 +84,7 @@ func (l *List) forms(n uint32) iter.Seq2[string, *attribute] {
 // attributes.
 func (l *List) indexes(n uint32) iter.Seq2[int, string] {
 	return func(yield func(int, string) bool) {
-		if int(n) >= len(l.offsets) || int(l.offsets[n]) > len(l.records) {
-			return
-		}
-		r := reader{rest: l.records[l.offsets[n]:]}
+		r := l.record(n)
 		for range r.number() {
 			a := r.number()
 			text := r.text()
@@ -96,6 +93,14 @@ func (l *List) indexes(n uint32) iter.Seq2[int, string] {
 			}
 		}
 	}
+}
+
+// record returns a reader of the written forms of word n.
+func (l *List) record(n uint32) reader {
+	if int(n) >= len(l.offsets) || int(l.offsets[n]) > len(l.records) {
+		return reader{}
+	}
+	return reader{rest: l.records[l.offsets[n]:]}
 }
 
 // NewList makes a list of words; their layers are ignored, and of words that have

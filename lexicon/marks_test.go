@@ -36,12 +36,15 @@ func gradedList(t *testing.T, random *rand.Rand) *List {
 
 // spelt returns the labels of all words of a list, by their numbers.
 func spelt(t *testing.T, l *List) [][]uint32 {
-	y := newLayer(l, New(l, AnyVariety).alphabet)
+	x := New(l, AnyVariety)
 	var words [][]uint32
 	for w := range l.Words() {
-		x := New(l, AnyVariety)
-		labels, ok := y.labels(x.alphabet.Fold(x.alphabet.Letters(w.Text)))
-		require.True(t, ok)
+		var labels []uint32
+		for _, letter := range x.alphabet.AppendFolded(nil, w.Text) {
+			label, ok := x.layers[Base].label(letter)
+			require.True(t, ok)
+			labels = append(labels, label)
+		}
 		if len(words) == 0 || !slices.Equal(words[len(words)-1], labels) {
 			words = append(words, labels)
 		}

@@ -9,7 +9,7 @@ import (
 
 // reversed is a minimal acyclic automaton of the words of a list read from their
 // ends, without numbers. Where it has no arcs, there was no room for it (see
-// reverse), and the list is searched forward alone.
+// reverse), and the list is searched in rows.
 //
 // An arc is one number: from childBit up the first arc of the node it leads to, 0
 // for none; below that the label from bit 2 up, and the two bits of a trie's arc.
@@ -56,7 +56,7 @@ func reverse(words [][]uint32, letters int) reversed {
 
 // check makes sure that every walk stays within the arcs and comes to an end.
 func (r *reversed) check(letters int) error {
-	if len(r.arcs) == 0 {
+	if len(r.arcs) == 0 && r.root == 0 {
 		return nil
 	}
 	if int(r.root) >= len(r.arcs) || r.arcs[len(r.arcs)-1]&lastArc == 0 {

@@ -1,72 +1,178 @@
 package lexicon
 
-import "emendary/align"
+import (
+	"slices"
 
-// hits are the words that a search found, with their labels one after another.
-type hits struct {
-	words  []hit
-	labels []uint32
-}
+	"emendary/align"
+)
 
-type hit struct {
-	number     uint32
-	start, end int // of its labels
-	distance   int
-}
-
-// search is the scratch space of one search at a time. It simulates the
-// nondeterministic automaton that accepts all strings within k edits of a form
-// (Wu and Manber, “Fast Text Searching Allowing Errors”, Communications of the
-// ACM 35(10), 1992, without its start loop; transpositions after Hyyrö, “A
-// Bit-Vector Algorithm for Computing Levenshtein and Damerau Edit Distances”,
-// Nordic Journal of Computing 10(1), 2003): bit i of row d at a depth is set where
-// the first i letters of the form are within d edits of the letters on the path
-// to that depth.
-//
-// No bit in the last row means that no word below can come within k. That holds
-// with transpositions too, although one is complete only a letter later: after
-// its first letter the row has the same edit as a substitution, at the same cost.
-// It would not hold where a transposition costs less than a substitution.
+// search is the scratch space of one search at a time. Nothing in it is allocated
+// anew once it was used for forms as long and with as many words near them.
 type search struct {
-	hits
-	trie  *trie
-	size  int      // letters of the form
-	words int      // machine words in a row, one for up to 63 letters
-	k     int      // edits allowed
-	masks []uint64 // a row by label: bit i is set where the form's letter i has it
-	rows  []uint64 // rows 0 to k for each depth
-	path  []uint32 // labels
+	form  []align.Letter // folded
+	codes []uint8        // of its letters: from 1, the same letters the same one
+	k     int
 
-	deepest int // the most letters a path may have
+	ahead, back band   // of the form, and of the form from its end
+	certain     uint64 // states of words that the walk forward finds for certain
+	rows        rows
+
+	// For the layer that is searched:
+	trie     *trie
+	reversed *reversed
+	code     []uint8 // by label, 0 where the form lacks it; all 0 between searches
+	followed [2][MaxLetters + 2*maxBand + 32]uint64
+	many     uint64 // with more than 64 letters, a bit that is always wanted
+	none     uint64 // what is left of wanted letters where none are
+
+	hits    []hit
+	merged  []hit          // room for them
+	order   []uint64       // of those found backward: number<<32 | index
+	labels  []uint32       // of the hits
+	letters []align.Letter // of one hit
 }
 
-// within returns the words of a layer within k of the folded form. They stand
-// until the next search with the same scratch space.
-func (s *search) within(y *layer, form []align.Letter, k int) hits {
-	s.hits = hits{s.hits.words[:0], s.hits.labels[:0]}
-	s.trie, s.size, s.k, s.words = &y.trie, len(form), k, len(form)/64+1
-	s.masks = zeros(s.masks, len(y.toLetter)*s.words)
-	for i, letter := range form {
-		if label, ok := y.toLabel[letter]; ok {
-			s.masks[int(label)*s.words+i/64] |= 1 << (i % 64)
-		}
+// hit is a word that a search found in a list.
+type hit struct {
+	number   uint32
+	start    uint32 // of its labels
+	length   uint8
+	distance uint16
+}
+
+// prepare readies s for the words within k of s.form, for which within then
+// searches layers.
+//
+// A word within k has at most ⌊k/2⌋ edits in the first half of the form, or fewer
+// than the rest in the second: the first are found forward, the others backward,
+// and few ways lead far that are right at first (Mihov and Schulz 2004, section 8).
+func (s *search) prepare(k int) {
+	s.k = k
+	if k > maxBand {
+		return
 	}
-	// No path of more than size+k letters leads on, and no word has more than
-	// MaxLetters.
-	s.path = s.path[:0]
-	s.deepest = min(s.size+k, MaxLetters)
-	s.rows = zeros(s.rows, (s.deepest+1)*(k+1)*s.words)
-	for d := range k + 1 {
-		for i := range min(d, s.size) + 1 { // i letters taken from the form
-			s.rows[d*s.words+i/64] |= 1 << (i % 64)
-		}
+	codes := s.encode()
+	few := k / 2
+	half := len(s.form) / 2
+	if k%2 == 0 {
+		half = (len(s.form) + 1) / 2 // the half with the more edits is the shorter one backward
 	}
-	if root := s.trie.root; root != 0 && s.words == 1 {
-		s.walkShort(root, 0, 0)
-	} else if root != 0 {
-		s.walkLong(root, 0, 0)
+	s.ahead.within(s.codes, codes, k, few, half, s.followed[0][:])
+	slices.Reverse(s.codes)
+	s.back.within(s.codes, codes, k, k-few-1, len(s.form)-half, s.followed[1][:])
+	slices.Reverse(s.codes)
+	s.certain = 1<<((few+1)*rowBits) - 1
+}
+
+// encode gives the letters of the form their codes and returns how many there
+// are, with 0, which no letter of the form has.
+func (s *search) encode() int {
+	s.codes = s.codes[:0]
+	codes := uint8(1)
+	for i, letter := range s.form {
+		code := codes
+		if j := slices.Index(s.form[:i], letter); j >= 0 {
+			code = s.codes[j]
+		} else {
+			codes++
+		}
+		s.codes = append(s.codes, code)
+	}
+	return int(codes)
+}
+
+// within returns the words of a layer within k of the form, by their numbers. They
+// stand until the next search with the same scratch space.
+func (s *search) within(y *layer) []hit {
+	s.hits, s.labels = s.hits[:0], s.labels[:0]
+	s.trie, s.reversed = &y.trie, &y.reversed
+	switch {
+	case y.trie.root == 0:
+		return nil
+	case s.k > maxBand, s.k > 0 && y.reversed.root == 0:
+		s.inRows(y, s.k)
+		return s.hits
+	}
+	s.spell(y)
+	s.forward(y.trie.root, &s.ahead.levels[0], 0, s.ahead.begin(s.k), 0)
+	if known := len(s.hits); s.k > 0 {
+		s.backward(y.reversed.root, &s.back.levels[0], s.back.begin(s.k), 0)
+		s.merge(known)
+	}
+	for _, letter := range s.form {
+		if label, ok := y.label(letter); ok {
+			s.code[label] = 0
+		}
 	}
 	return s.hits
+}
+
+// spell puts the form in terms of the labels of a layer.
+func (s *search) spell(y *layer) {
+	if len(s.code) < len(y.letters) {
+		s.code = make([]uint8, len(y.letters))
+	}
+	s.many, s.none = 0, 1
+	if len(y.letters) > 64 {
+		s.many, s.none = 1<<63, 0
+	}
+	clear(s.followed[0][:])
+	clear(s.followed[1][:])
+	for i, letter := range s.form {
+		if label, ok := y.label(letter); ok {
+			s.code[label] = s.codes[i]
+			s.followed[0][i+s.k+1] = 1 << (label & 63)
+			s.followed[1][len(s.form)-i+s.k] = 1 << (label & 63)
+		}
+	}
+}
+
+// found records word number, whose labels are those of the path forward.
+func (s *search) found(number uint32, length, distance int) {
+	s.hits = append(s.hits, hit{number, uint32(len(s.labels)), uint8(length), uint16(distance)})
+	for t := range length {
+		s.labels = append(s.labels, s.ahead.levels[t].label)
+	}
+}
+
+// foundBackward records the word whose labels from its end are those of the path
+// backward.
+func (s *search) foundBackward(length, distance int) {
+	start := len(s.labels)
+	for t := length - 1; t >= 0; t-- {
+		s.labels = append(s.labels, s.back.levels[t].label)
+	}
+	if number, ok := s.trie.number(s.labels[start:]); ok {
+		s.hits = append(s.hits, hit{number, uint32(start), uint8(length), uint16(distance)})
+	}
+}
+
+// merge puts in order the hits of which so many were found forward, in order. A word
+// that was found both ways stays with its lesser distance.
+func (s *search) merge(forward int) {
+	if forward == len(s.hits) {
+		return
+	}
+	s.order = s.order[:0]
+	for i := forward; i < len(s.hits); i++ {
+		s.order = append(s.order, uint64(s.hits[i].number)<<32|uint64(i))
+	}
+	slices.Sort(s.order)
+	s.merged = s.merged[:0]
+	i := 0
+	for _, o := range s.order {
+		h := s.hits[uint32(o)]
+		for ; i < forward && s.hits[i].number < h.number; i++ {
+			s.merged = append(s.merged, s.hits[i])
+		}
+		if i < forward && s.hits[i].number == h.number {
+			s.hits[i].distance = min(s.hits[i].distance, h.distance)
+			continue
+		}
+		s.merged = append(s.merged, h)
+	}
+	s.merged = append(s.merged, s.hits[i:forward]...)
+	s.hits, s.merged = s.merged, s.hits
 }
 
 // zeros returns n zeros, in the space of b where there is enough.
@@ -77,181 +183,4 @@ func zeros(b []uint64, n int) []uint64 {
 	b = b[:n]
 	clear(b)
 	return b
-}
-
-// rowsAt returns the rows at a depth.
-func (s *search) rowsAt(depth int) []uint64 {
-	stride := (s.k + 1) * s.words
-	return s.rows[depth*stride:][:stride]
-}
-
-// walkShort goes on from depth along the arcs of the node whose first arc is
-// given, for a form of one machine word; number is that of the node's first word.
-//
-// An arc leads on where the last row after it has a bit. It has one if the form
-// agrees with the arc, if an edit is left before it, or if it completes a
-// transposition; every other way to the last row takes one of these first. Most
-// arcs fail this test, which saves making their rows.
-func (s *search) walkShort(arc uint32, depth int, number uint32) {
-	if depth >= s.deepest {
-		return
-	}
-	last, next := s.rowsAt(depth), s.rowsAt(depth+1)
-	var two []uint64  // rows two letters ago
-	var before uint64 // bit i: the form's letter i+1 is the letter before the arc
-	if depth > 0 {
-		two = s.rowsAt(depth - 1)
-		before = s.masks[s.path[depth-1]] >> 1
-	}
-	agree, left, swap := last[s.k], uint64(0), uint64(0)
-	if s.k > 0 {
-		left = last[s.k-1]
-		if depth > 0 {
-			swap = two[s.k-1] & before
-		}
-	}
-	for ; ; arc++ {
-		head := s.trie.arcs[2*arc]
-		label := head >> labelBit
-		mask := s.masks[label]
-		if agree&mask|left|swap&mask != 0 {
-			s.stepShort(last, next, two, mask, mask&before)
-			s.path = append(s.path[:depth], label)
-			n := number + s.trie.skips[arc]
-			if head&endsWord != 0 {
-				s.found(depth+1, n)
-				n++
-			}
-			if child := s.trie.arcs[2*arc+1]; child != 0 {
-				s.walkShort(child, depth+1, n)
-			}
-		}
-		if head&lastArc != 0 {
-			return
-		}
-	}
-}
-
-// stepShort makes the rows next from the rows last and two, which is one letter
-// further back. Bit i of swapped is set where the form has, from i on, the last
-// two letters of the path in the other order.
-func (s *search) stepShort(last, next, two []uint64, mask, swapped uint64) {
-	valid := ^uint64(0) >> (63 - s.size)
-	row := (last[0] & mask) << 1 // agreement
-	next[0] = row
-	for d := 1; d <= s.k; d++ {
-		fewer := last[d-1]
-		row = (last[d]&mask)<<1 | // agreement
-			fewer | // a letter that the form lacks
-			(fewer|row)<<1 // substitution, or a letter of the form too many
-		if swapped != 0 {
-			row |= (two[d-1] & swapped) << 2
-		}
-		row &= valid
-		next[d] = row
-	}
-}
-
-// walkLong is walkShort for a form of several machine words. Such forms are rare:
-// it makes the rows of every arc.
-func (s *search) walkLong(arc uint32, depth int, number uint32) {
-	if depth >= s.deepest {
-		return
-	}
-	last, next := s.rowsAt(depth), s.rowsAt(depth+1)
-	var two, before []uint64
-	if depth > 0 {
-		two = s.rowsAt(depth - 1)
-		before = s.masks[int(s.path[depth-1])*s.words:][:s.words]
-	}
-	for ; ; arc++ {
-		head := s.trie.arcs[2*arc]
-		label := head >> labelBit
-		mask := s.masks[int(label)*s.words:][:s.words]
-		if s.stepLong(last, next, two, mask, before) {
-			s.path = append(s.path[:depth], label)
-			n := number + s.trie.skips[arc]
-			if head&endsWord != 0 {
-				s.found(depth+1, n)
-				n++
-			}
-			if child := s.trie.arcs[2*arc+1]; child != 0 {
-				s.walkLong(child, depth+1, n)
-			}
-		}
-		if head&lastArc != 0 {
-			return
-		}
-	}
-}
-
-// stepLong is stepShort for a form of several machine words; before is the mask
-// of the letter before. It reports whether the last row has a bit.
-func (s *search) stepLong(last, next, two, mask, before []uint64) bool {
-	n := s.words
-	valid := ^uint64(0) >> (63 - s.size%64) // of the last machine word
-	alive := false
-	for d := 0; d <= s.k; d++ {
-		alive = false
-		for w := range n {
-			row := shift(last[d*n:][:n], mask, w)
-			if d > 0 {
-				fewer := last[(d-1)*n:][:n]
-				row |= fewer[w] | shift(fewer, nil, w) | shift(next[(d-1)*n:][:n], nil, w)
-				if two != nil {
-					row |= shiftSwapped(two[(d-1)*n:][:n], mask, before, w)
-				}
-			}
-			if w == n-1 {
-				row &= valid
-			}
-			next[d*n+w] = row
-			alive = alive || row != 0
-		}
-	}
-	return alive
-}
-
-// shift returns machine word w of (row & mask) << 1; a nil mask has all bits.
-func shift(row, mask []uint64, w int) uint64 {
-	at := func(i int) uint64 {
-		if mask == nil {
-			return row[i]
-		}
-		return row[i] & mask[i]
-	}
-	bits := at(w) << 1
-	if w > 0 {
-		bits |= at(w-1) >> 63
-	}
-	return bits
-}
-
-// shiftSwapped returns machine word w of (row & mask & before>>1) << 2.
-func shiftSwapped(row, mask, before []uint64, w int) uint64 {
-	at := func(i int) uint64 {
-		b := before[i] >> 1
-		if i+1 < len(before) {
-			b |= before[i+1] << 63
-		}
-		return row[i] & mask[i] & b
-	}
-	bits := at(w) << 2
-	if w > 0 {
-		bits |= at(w-1) >> 62
-	}
-	return bits
-}
-
-// found records the word that ends at depth if it is within k.
-func (s *search) found(depth int, number uint32) {
-	rows := s.rowsAt(depth)
-	for d := range s.k + 1 {
-		if rows[d*s.words+s.size/64]>>(s.size%64)&1 != 0 {
-			start := len(s.hits.labels)
-			s.hits.labels = append(s.hits.labels, s.path[:depth]...)
-			s.hits.words = append(s.hits.words, hit{number, start, len(s.hits.labels), d})
-			return
-		}
-	}
 }

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"math/bits"
 	"math/rand/v2"
+	"os"
 	"slices"
 	"strings"
 	"sync"
@@ -129,6 +130,22 @@ func TestWithinEqualsAScanOfTheWholeBase(t *testing.T) {
 	compareToScan(t, newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: base}), forms, 3)
 }
 
+// Every fortieth of the misspellings in testdata/wikipedia-misspellings.tsv.
+func TestWithinEqualsAScanOfTheWholeBaseForRealMisspellings(t *testing.T) {
+	data, err := os.ReadFile("../testdata/wikipedia-misspellings.tsv")
+	require.NoError(t, err)
+	var forms []string
+	for i, line := range strings.Split(string(data), "\n")[1:] {
+		if form, _, ok := strings.Cut(line, "\t"); ok && i%40 == 0 {
+			forms = append(forms, form)
+		}
+	}
+	require.Greater(t, len(forms), 100)
+	base := english.Base()
+	x := lexicon.New(base, lexicon.American)
+	compareToScan(t, newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: base}), forms, 4)
+}
+
 // A part of the base, so that hundreds of forms can be compared, with lists that
 // list, bar and un-bar words of it, words above ASCII and letters of two code
 // points.
@@ -163,27 +180,82 @@ func TestWithinEqualsAScanOfAllLayers(t *testing.T) {
 	compareToScan(t, newScan(x, layers), forms, 3)
 }
 
+// allStrings returns all strings over letters of at most so many of them.
+func allStrings(letters string, most int) []string {
+	all := []string{""}
+	for from := 0; most > 0; most-- {
+		to := len(all)
+		for _, s := range all[from:to] {
+			for _, letter := range letters {
+				all = append(all, s+string(letter))
+			}
+		}
+		from = to
+	}
+	return all
+}
+
+func listOf(t *testing.T, name string, words []string) *lexicon.List {
+	var listed []lexicon.Word
+	for _, w := range words {
+		if w != "" {
+			listed = append(listed, lexicon.Word{Text: w})
+		}
+	}
+	list, err := lexicon.NewList(name, listed)
+	require.NoError(t, err)
+	return list
+}
+
 // All strings of a small alphabet meet every transposition there is (a prune that
 // forgets them fails here), and k beyond every distance finds all.
 func TestWithinEqualsAScanOfAllShortStrings(t *testing.T) {
-	var words []lexicon.Word
-	for i := range 1 << 10 { // each two bits a letter, 0 the end
-		text := ""
-		for ; i > 0; i >>= 2 {
-			text += []string{"", "a", "b", "c"}[i&3]
-		}
-		if text != "" {
-			words = append(words, lexicon.Word{Text: text})
-		}
-	}
-	list, err := lexicon.NewList("abc", words)
-	require.NoError(t, err)
+	list := listOf(t, "abc", allStrings("abc", 5))
 	require.Equal(t, 3+9+27+81+243, list.Len())
 	x := lexicon.New(list, lexicon.AnyVariety)
 	s := newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: list})
 	compareToScan(t, s, []string{"", "a", "ba", "cab", "abca", "bacab", "ccabba", "d", "adb"}, 7)
 	assert.Len(t, x.Within("cab", 1_000_000), 363)
 	assert.Empty(t, x.Within("cab", -1))
+}
+
+// In a list of a few of all short strings most branches come to nothing, and every
+// form has words with their edits in either half or across the middle.
+func TestWithinEqualsAScanOfFewShortStrings(t *testing.T) {
+	random := rand.New(rand.NewPCG(17, 18))
+	all := allStrings("ab", 7)
+	for range 20 {
+		var some []string
+		for _, w := range all {
+			if random.IntN(6) == 0 {
+				some = append(some, w)
+			}
+		}
+		list := listOf(t, "some", append(some, "abba"))
+		x := lexicon.New(list, lexicon.AnyVariety)
+		compareToScan(t, newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: list}), all, 5)
+	}
+}
+
+// More letters than a machine word has bits, those 64 apart often in one place.
+func TestWithinEqualsAScanOfWordsInManyLetters(t *testing.T) {
+	random := rand.New(rand.NewPCG(19, 20))
+	const letters = 200
+	letter := func(i int) rune { return '一' + rune(i) }
+	var words []string
+	for i := range letters {
+		words = append(words, string(letter(i)))
+	}
+	for range 400 {
+		word := make([]rune, 1+random.IntN(6))
+		for i := range word {
+			word[i] = letter(random.IntN(4) + 64*random.IntN(3))
+		}
+		words = append(words, string(word))
+	}
+	list := listOf(t, "many", words)
+	x := lexicon.New(list, lexicon.AnyVariety)
+	compareToScan(t, newScan(x, map[lexicon.Layer]*lexicon.List{lexicon.Base: list}), words[letters-20:letters+150], 4)
 }
 
 // Forms and words about the sizes at which a machine word is full.
@@ -221,6 +293,33 @@ func TestWithinLeavesOutWhatAFullStopBars(t *testing.T) {
 		assert.Empty(t, x.Within(form, k), form)
 	}
 	assert.Len(t, x.Within("for", 1), 1)
+}
+
+// What a slice held before makes no difference, and its elements keep apart.
+func TestAppendWithinTakesASliceUsedBefore(t *testing.T) {
+	base := english.Base()
+	x := lexicon.New(base, lexicon.AnyVariety).With(lexicon.Book, load(t, "harbar\tplace\nharbér"))
+	var used []lexicon.Near
+	for _, form := range append(misspellings(texts(base), 100, 3), "harber") {
+		kept := lexicon.Near{Distance: -1}
+		used = x.AppendWithin(append(used[:0], kept), form, 2)
+		require.Equal(t, kept, used[0])
+		fresh := x.AppendWithin(nil, form, 2)
+		require.Equal(t, len(fresh), len(used)-1)
+		for i, n := range fresh {
+			require.Equal(t, n, used[i+1])
+			require.Equal(t, x.Alphabet().Fold(x.Alphabet().Letters(n.Word.Text)), n.Letters)
+		}
+	}
+}
+
+func TestAppendWithinGoesByLayerThenDistanceThenOrderOfTheList(t *testing.T) {
+	x := lexicon.New(load(t, "bat\nCat\ncut\ncoat"), lexicon.AnyVariety).With(lexicon.House, load(t, "czt\ncat's\tterm"))
+	var order []string
+	for _, n := range x.AppendWithin(nil, "cat", 2) {
+		order = append(order, n.Word.Text)
+	}
+	assert.Equal(t, []string{"czt", "cat's", "Cat", "bat", "coat", "cut"}, order)
 }
 
 func TestWithinGivesTheWordAsItsHighestLayerHasIt(t *testing.T) {
