@@ -11,20 +11,17 @@ const (
 	// to spare.
 	rowBits = 2*maxBand + 3
 	inRow   = 1<<rowBits - 1
-
-	// everyRow is the first place of each row.
-	everyRow = 1 | 1<<rowBits | 1<<(2*rowBits) | 1<<(3*rowBits) | 1<<(4*rowBits)
 )
 
 // band simulates the nondeterministic automaton that accepts all strings within k
 // edits of a form, few of them in the form's first letters (Mihov and Schulz,
 // “Fast Approximate Search in Large Dictionaries”, Computational Linguistics
-// 30(4), 2004, section 8).
+// 30(4), 2004, on backward dictionaries).
 //
 // A state (i, d) at a depth t, where t letters of a word are read, says that the
 // first i letters of the form are d edits away from them, on some way there. i
 // can't be further from t than d, so that the states at a depth are a band about
-// the diagonal (as in their universal automaton, section 4). They make one machine
+// the diagonal (as in their universal automaton). They make one machine
 // word: a row for each d, in it a place for each i-t. The letter that is read
 // takes (i, d) to
 //

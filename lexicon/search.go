@@ -45,7 +45,7 @@ type hit struct {
 //
 // A word within k has at most ⌊k/2⌋ edits in the first half of the form, or fewer
 // than the rest in the second: the first are found forward, the others backward,
-// and few ways lead far that are right at first (Mihov and Schulz 2004, section 8).
+// and few ways lead far that are right at first (Mihov and Schulz 2004).
 func (s *search) prepare(k int) {
 	s.k = k
 	if k > maxBand {
