@@ -74,6 +74,8 @@ func (x *Lexicon) appendWithin(near []Near, s *search, form string, k int) []Nea
 // gather appends the known words within s.k of the form in a layer.
 func (x *Lexicon) gather(near []Near, s *search, y *layer, which Layer) []Near {
 	hits := s.within(y)
+	near = slices.Grow(near, len(hits))
+	room := rooms{chunk: len(hits)}
 	covered := slices.ContainsFunc(x.layers[which+1:], func(y *layer) bool { return y != nil })
 	for d := range s.k + 1 {
 		for _, h := range hits {
@@ -96,23 +98,35 @@ func (x *Lexicon) gather(near []Near, s *search, y *layer, which Layer) []Near {
 				if attribute.barred || !attribute.varieties.has(x.variety) || hidden && !x.stands(text, which) {
 					continue
 				}
-				near = appendNear(near, attribute.word(text, which), s.letters, d)
+				n := len(near)
+				near = slices.Grow(near, 1)[:n+1]
+				letters := append(room.of(near[n].Letters, len(s.letters)), s.letters...)
+				near[n] = Near{Word: attribute.word(text, which), Letters: letters, Distance: d}
 			}
 		}
 	}
 	return near
 }
 
-// appendNear appends a word, its letters in the room that the element had.
-func appendNear(near []Near, w Word, letters []align.Letter, distance int) []Near {
-	n := len(near)
-	if n == cap(near) {
-		near = slices.Grow(near, 1)
+// rooms gives words room for their letters, many at once.
+type rooms struct {
+	chunk int // of how many words room is made at once
+	left  []align.Letter
+}
+
+// of returns an empty slice with room for n letters: that of old where it has it.
+func (r *rooms) of(old []align.Letter, n int) []align.Letter {
+	if cap(old) >= n {
+		return old[:0]
 	}
-	near = near[:n+1]
-	room := near[n].Letters[:0]
-	near[n] = Near{Word: w, Letters: append(room, letters...), Distance: distance}
-	return near
+	const usual = 16 // so that a longer word fits next time
+	size := max(n, usual)
+	if len(r.left) < size {
+		r.left = make([]align.Letter, max(size, usual*r.chunk))
+	}
+	room := r.left[:0:size]
+	r.left = r.left[size:]
+	return room
 }
 
 // above reports whether a layer above which has entries that may cover a word
