@@ -16,7 +16,7 @@ import (
 func BenchmarkWithin(b *testing.B) {
 	x := lexicon.New(english.Base(), lexicon.AnyVariety)
 	forms := misspellings(texts(english.Base()), 300, 3)
-	for k := 1; k <= 3; k++ {
+	for k := 1; k <= 5; k++ {
 		b.Run(fmt.Sprint("k=", k), func(b *testing.B) {
 			b.ReportAllocs()
 			found := 0

@@ -62,11 +62,12 @@ func (s *search) walkRows(arc uint32, depth int, number uint32) {
 		two = s.rows.rowsAt(depth - 1)
 		before = s.rows.masks[int(s.rows.path[depth-1])*s.rows.words:][:s.rows.words]
 	}
+	free := s.rows.free(last, two, before)
 	for ; ; arc++ {
 		head := s.trie.arcs[2*arc]
 		label := head >> labelBit
 		mask := s.rows.masks[int(label)*s.rows.words:][:s.rows.words]
-		if s.rows.stepRows(last, next, two, mask, before) {
+		if (free || meet(last[s.rows.k*s.rows.words:], mask)) && s.rows.stepRows(last, next, two, mask, before) {
 			s.rows.path = append(s.rows.path[:depth], label)
 			n := number + s.trie.skips[arc]
 			if head&endsWord != 0 {
@@ -81,6 +82,35 @@ func (s *search) walkRows(arc uint32, depth int, number uint32) {
 			return
 		}
 	}
+}
+
+// free reports whether more than agreement may lead on from the rows last and two:
+// an edit that is left, or the end of a transposition. Most arcs need neither rows
+// nor more of a look where it is false.
+func (r *rows) free(last, two, before []uint64) bool {
+	if r.k == 0 {
+		return false
+	}
+	from, to := (r.k-1)*r.words, r.k*r.words
+	if meet(last[from:to], last[from:to]) {
+		return true
+	}
+	for w := range before {
+		if shiftSwapped(two[from:to], two[from:to], before, w) != 0 {
+			return true
+		}
+	}
+	return false
+}
+
+// meet reports whether a and b have a bit in common.
+func meet(a, b []uint64) bool {
+	for w := range b {
+		if a[w]&b[w] != 0 {
+			return true
+		}
+	}
+	return false
 }
 
 // stepRows makes the rows next from the rows last and two, which is one letter
