@@ -5,7 +5,7 @@
 //
 //   - [Word] is one word with what its list says of it.
 //   - [List] is the words of one list. [Load] reads it from text, [NewList] makes
-//     it from words, [Open] views one that [List.AppendBinary] wrote.
+//     it from words, [Open] or [View] views one that [List.AppendBinary] wrote.
 //   - [Lexicon] is up to five lists looked up as one: the base lexicon and, above
 //     it, words of other languages, the house, the series and the book list
 //     ([Layer]), in one [Variety].

@@ -67,6 +67,17 @@ func TestOpenRefusesDamage(t *testing.T) {
 	require.Error(t, err)
 }
 
+func TestViewIsOpenWithoutTheChecks(t *testing.T) {
+	flat := flatOf(t, flatSample(t))
+	opened, err := Open("sample", flat)
+	require.NoError(t, err)
+	viewed, err := View("sample", flat)
+	require.NoError(t, err)
+	assert.Equal(t, opened, viewed)
+	_, err = View("sample", flat[1:])
+	assert.EqualError(t, err, "sample: not the flat form of a list: other first bytes than expected; generate it anew")
+}
+
 func TestListWithoutWordsHasNoFlatForm(t *testing.T) {
 	for _, l := range []*List{nil, {}} {
 		_, err := l.AppendBinary(nil)
