@@ -60,10 +60,12 @@ func (o *Ours) Within(form string, found func(word []byte, distance int)) error 
 }
 
 // Vellum is a search by github.com/blevesearch/vellum with its own automaton of
-// a form, transpositions included; the builder of automata is made once.
+// a form, transpositions included; the builder of automata is made once, and its
+// iterator is used again.
 type Vellum struct {
 	fst     *vellum.FST
 	builder *levenshtein.LevenshteinAutomatonBuilder
+	it      vellum.FSTIterator
 	k       uint8
 }
 
@@ -90,7 +92,7 @@ func NewVellum(words []string, k int) (*Vellum, error) {
 	if err != nil {
 		return nil, err
 	}
-	return &Vellum{fst, automata, uint8(k)}, nil
+	return &Vellum{fst: fst, builder: automata, k: uint8(k)}, nil
 }
 
 // Within implements [Search].
@@ -99,12 +101,11 @@ func (v *Vellum) Within(form string, found func(word []byte, distance int)) erro
 	if err != nil {
 		return err
 	}
-	it, err := v.fst.Search(dfa, nil, nil)
+	err = v.it.Reset(v.fst, nil, nil, dfa)
 	for err == nil {
-		word, _ := it.Current()
-		_, distance := dfa.MatchAndDistance(string(word))
-		found(word, int(distance))
-		err = it.Next()
+		word, _ := v.it.Current()
+		found(word, int(v.it.EditDistance()))
+		err = v.it.Next()
 	}
 	if errors.Is(err, vellum.ErrIteratorDone) {
 		return nil

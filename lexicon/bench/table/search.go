@@ -31,7 +31,7 @@ func search(w io.Writer, in input) error {
 		if err != nil {
 			return err
 		}
-		for i, name := range []string{"lexicon.Within", "blevesearch/vellum"} {
+		for i, name := range []string{"lexicon.AppendWithin", "blevesearch/vellum"} {
 			t := timings[i]
 			fmt.Fprintf(w, "| %d | %s | %.0f | %.1f µs | %.1f µs |\n", k, name, t.PerSecond(),
 				float64(t.Median)/1000, float64(t.P99)/1000)
