@@ -19,6 +19,9 @@ type Sheet struct {
 	none    []LongStep
 }
 
+// Form returns the form that the prices are for. It is the sheet's own: do not change it.
+func (s *Sheet) Form() []Letter { return s.form }
+
 type rareColumn struct {
 	left   symbol
 	letter Letter

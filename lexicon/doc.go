@@ -13,6 +13,8 @@
 //     words within a distance of it ([Lexicon.AppendWithin] where many forms are
 //     asked about), and [Lexicon.Attested] the variety that a manuscript is written
 //     in.
+//   - [Ranking] is a lexicon under a [Prior]; [Ranking.Best] gives the n words that
+//     cost least by edits and prior together, each a [Match].
 //
 // The embedded English base lexicon is package emendary/lexicon/english.
 //

@@ -1,0 +1,162 @@
+package lexicon
+
+import (
+	"cmp"
+	"slices"
+	"strings"
+
+	"emendary/align"
+)
+
+// maxBest is the most letters a form may have to be searched for its best words.
+const maxBest = MaxLetters + 20
+
+// Best appends to dst the best n words for the sheet's form: those for which edits
+// and prior together cost least, none of them more than limit grains, by what they
+// cost, then by text. The form's letters are those of [Lexicon.Alphabet], folded.
+//
+// Candidates are the words that [Lexicon.Within] would find at any distance, every
+// written form of its own with the price of its own; but those with the same
+// folded letters count as one of the n, which costs what its cheapest written
+// form costs, and all of them that cost no more than limit are appended. The
+// answer is exact: that of pricing the whole lexicon. A form of more than 120
+// letters has none.
+//
+// Like [Lexicon.AppendWithin], Best uses again what stands in dst beyond its length.
+func (r *Ranking) Best(dst []Match, sheet *align.Sheet, n int, limit int32) []Match {
+	form := sheet.Form()
+	if n <= 0 || len(form) > maxBest {
+		return dst
+	}
+	b := r.scratch.Get().(*best)
+	defer r.scratch.Put(b)
+	b.Ranking, b.sheet, b.form, b.n = r, sheet, form, n
+	b.list, b.limit = b.list[:0], min(limit, never-1)
+	b.quick()
+	b.branch()
+	return b.appendTo(dst)
+}
+
+// best is the scratch space of one search for best words.
+type best struct {
+	*Ranking
+	sheet *align.Sheet
+	form  []align.Letter
+	n     int
+	limit int32
+	list  []held // the best so far, in order
+
+	search  search // for the quick set
+	scorer  align.Scorer
+	letters []align.Letter // of a word
+	rows    [][]int32      // by depth
+	path    []align.Letter
+}
+
+// held is a word among the best so far.
+type held struct {
+	letters      []align.Letter
+	edits, prior int32
+	text         string // of the written form that costs least
+}
+
+func (h *held) total() int32 { return h.edits + h.prior }
+
+// bound returns what a word may cost at most to be among the best.
+func (b *best) bound() int32 {
+	if len(b.list) < b.n {
+		return b.limit
+	}
+	return b.list[b.n-1].total()
+}
+
+// take takes a word, whose cheapest alignment costs edits, into the list if it is
+// among the best so far.
+func (b *best) take(letters []align.Letter, edits int32) {
+	for i := range b.list {
+		if b.list[i].edits == edits && slices.Equal(b.list[i].letters, letters) {
+			return
+		}
+	}
+	h := held{edits: edits, prior: never}
+	b.lexicon.known(letters, func(e entry) {
+		if price := b.price(e, len(letters)); price < h.prior || price == h.prior && e.text < h.text {
+			h.prior, h.text = price, e.text
+		}
+	})
+	if h.prior == never || h.total() > b.bound() {
+		return
+	}
+	i, _ := slices.BinarySearchFunc(b.list, h, func(x, y held) int {
+		return cmp.Or(cmp.Compare(x.total(), y.total()), strings.Compare(x.text, y.text))
+	})
+	if i == b.n {
+		return
+	}
+	if len(b.list) == b.n {
+		h.letters = b.list[b.n-1].letters[:0]
+		b.list = b.list[:b.n-1]
+	} else if n := len(b.list); n < cap(b.list) {
+		h.letters = b.list[:n+1][n].letters[:0]
+	}
+	h.letters = append(h.letters, letters...)
+	b.list = slices.Insert(b.list, i, h)
+}
+
+// price returns the price of an entry of so many letters, never where it is no
+// candidate.
+func (r *Ranking) price(e entry, letters int) int32 {
+	if price, ok := r.own.of(&r.prices, e); ok {
+		return price
+	}
+	return r.weights[e.which].price(r.lexicon.layers[e.which].gradeOf[e.attribute], letters)
+}
+
+// quick takes in the words within few unit edits, which gives a good bound.
+func (b *best) quick() {
+	s := &b.search
+	s.form = append(s.form[:0], b.form...)
+	s.prepare(min(quickEdits, max(len(s.form), MaxLetters)))
+	for which, y := range b.lexicon.layers {
+		if y == nil {
+			continue
+		}
+		w := b.weights[which]
+		for _, h := range s.within(y) {
+			letters := b.letters[:0]
+			for _, label := range s.labels[h.start:][:h.length] {
+				letters = append(letters, y.toLetter[label])
+			}
+			b.letters = letters
+			limit := b.bound() - w.least(y.listed[h.number], int(h.length))
+			if edits, ok := b.scorer.Score(b.sheet, letters, limit+1); ok {
+				b.take(letters, edits)
+			}
+		}
+	}
+}
+
+// quickEdits is how many unit edits the words taken in first may have.
+const quickEdits = 2
+
+// appendTo appends the words of the list in all their written forms.
+func (b *best) appendTo(dst []Match) []Match {
+	start := len(dst)
+	room := rooms{chunk: b.n}
+	for _, h := range b.list {
+		b.lexicon.known(h.letters, func(e entry) {
+			price := b.price(e, len(h.letters))
+			if h.edits+price > b.limit {
+				return
+			}
+			n := len(dst)
+			dst = slices.Grow(dst, 1)[:n+1]
+			letters := append(room.of(dst[n].Letters, len(h.letters)), h.letters...)
+			dst[n] = Match{Word: b.lexicon.word(e), Letters: letters, Edits: h.edits, Prior: price}
+		})
+	}
+	slices.SortFunc(dst[start:], func(x, y Match) int {
+		return cmp.Or(cmp.Compare(x.Total(), y.Total()), strings.Compare(x.Word.Text, y.Word.Text))
+	})
+	return dst
+}

@@ -1,0 +1,160 @@
+package lexicon
+
+import (
+	"cmp"
+	"context"
+	"maps"
+	"math"
+	"math/rand/v2"
+	"os"
+	"slices"
+	"strings"
+	"testing"
+
+	"github.com/stretchr/testify/require"
+
+	"emendary/align"
+)
+
+// listedPairs returns the pairs of the open list of misspellings: every step-th.
+func listedPairs(t testing.TB, step int) [][2]string {
+	data, err := os.ReadFile("../testdata/wikipedia-misspellings.tsv")
+	require.NoError(t, err)
+	var pairs [][2]string
+	for i, line := range strings.Split(string(data), "\n") {
+		form, word, ok := strings.Cut(line, "\t")
+		word, _, _ = strings.Cut(word, ",")
+		if ok && i%step == 1 && !strings.Contains(word, " ") {
+			pairs = append(pairs, [2]string{form, word})
+		}
+	}
+	return pairs
+}
+
+func fitted(t testing.TB, pairs [][2]string) *align.Fitted {
+	var a align.Alphabet
+	var labelled []align.Pair
+	for _, p := range pairs {
+		form, word := a.AppendFolded(nil, p[0]), a.AppendFolded(nil, p[1])
+		if !slices.Equal(form, word) {
+			labelled = append(labelled, align.Pair{Form: form, Word: word, Weight: 1})
+		}
+	}
+	f, err := align.Fit(context.Background(), labelled, align.Origin{}, nil)
+	require.NoError(t, err)
+	return f
+}
+
+// scanned is the answer of Best by pricing every word of the lexicon.
+func scanned(x *Lexicon, costs *align.Fitted, p Prior, used map[string]int, form string, n int, limit int32) []Match {
+	letters := x.alphabet.AppendFolded(nil, form)
+	sheet := costs.Sheet(letters)
+	var scorer align.Scorer
+	var all []Match
+	seen := map[string]bool{} // in a higher layer
+	for which := layers - 1; which >= 0; which-- {
+		y := x.layers[which]
+		if y == nil {
+			continue
+		}
+		for w := range y.Words() {
+			w.Layer = Layer(which)
+			hidden := seen[w.Text]
+			seen[w.Text] = true
+			if hidden || w.Barred || !sourceVarieties(w.Sources).has(x.variety) {
+				continue
+			}
+			if f := x.Find(w.Text); f.Status != Known {
+				continue
+			}
+			m := Match{Word: w, Letters: x.alphabet.AppendFolded(nil, w.Text)}
+			asked := w
+			if used[w.Text] == 0 {
+				asked.Text = ""
+			}
+			prior, ok := p(asked, min(len(m.Letters), PriorLetters), used[w.Text])
+			if !ok {
+				continue
+			}
+			m.Prior = prior
+			if m.Edits, ok = scorer.Score(sheet, m.Letters, never); ok && m.Total() <= limit {
+				all = append(all, m)
+			}
+		}
+	}
+	slices.SortFunc(all, func(x, y Match) int {
+		return cmp.Or(cmp.Compare(x.Total(), y.Total()), strings.Compare(x.Word.Text, y.Word.Text))
+	})
+	var heads [][]align.Letter
+	for _, m := range all {
+		if len(heads) < n && !slices.ContainsFunc(heads, func(l []align.Letter) bool { return slices.Equal(l, m.Letters) }) {
+			heads = append(heads, m.Letters)
+		}
+	}
+	return slices.DeleteFunc(all, func(m Match) bool {
+		return !slices.ContainsFunc(heads, func(l []align.Letter) bool { return slices.Equal(l, m.Letters) })
+	})
+}
+
+// randomPrior looks at all that a prior may look at.
+func randomPrior(random *rand.Rand, v Variety) Prior {
+	seed, scale := random.Uint64(), int32(1+random.IntN(12000))
+	return func(w Word, letters, use int) (int32, bool) {
+		level, _ := w.Level(v)
+		h := seed + uint64(level)*31 + uint64(letters)*7919 + uint64(w.Layer)*104729 + uint64(use)*15485863
+		if w.IsName() {
+			h += 3
+		}
+		h *= 0x9e3779b97f4a7c15
+		return int32(h>>33) % scale, h>>60 != 0
+	}
+}
+
+func TestBestIsThatOfAScan(t *testing.T) {
+	costs := fitted(t, listedPairs(t, 7))
+	random := rand.New(rand.NewPCG(21, 22))
+	for range 300 {
+		v := Variety(random.IntN(len(varieties)))
+		x := New(gradedList(t, random), v)
+		for which := Foreign; which <= Book; which++ {
+			if random.IntN(3) == 0 {
+				x = x.With(which, gradedList(t, random))
+			}
+		}
+		used := map[string]int{}
+		for _, y := range x.layers {
+			if y == nil {
+				continue
+			}
+			for w := range y.Words() {
+				if random.IntN(5) == 0 {
+					used[w.Text] = 1 + random.IntN(9)
+				}
+			}
+		}
+		used["unknown"] = 4
+		p := randomPrior(random, v)
+		r := x.Ranking(p, maps.All(used))
+		if random.IntN(2) == 0 {
+			p = randomPrior(random, v)
+			r = r.WithPrior(p)
+		}
+		for range 6 {
+			form := ""
+			for range random.IntN(8) {
+				form += string([]rune("abcé")[random.IntN(4)])
+			}
+			n := 1 + random.IntN(12)
+			limit := int32(math.MaxInt32)
+			if random.IntN(2) == 0 {
+				limit = int32(random.IntN(40 << 10))
+			}
+			want := scanned(x, costs, p, used, form, n, limit)
+			got := r.Best(nil, costs.Sheet(x.alphabet.AppendFolded(nil, form)), n, limit)
+			require.Equal(t, len(want), len(got), "%q", form)
+			for i := range want {
+				require.Equal(t, want[i], got[i], "%q, %d", form, i)
+			}
+		}
+	}
+}
