@@ -7,7 +7,10 @@
 //     An [Alphabet] makes letters of a string and a string of letters.
 //   - [Levenshtein], [Restricted] and [Distance] count the edits between two
 //     strings under unit costs; they differ in what they allow a transposition.
-//   - [Costs] prices edits; [Unit] is the plainest.
+//   - [Costs] prices edits; [Unit] is the plainest. [Fitted] are those of a
+//     noisy channel, in bits: [Fit] estimates them from pairs, [ReadCosts] reads
+//     them from a file, and a [Sheet] has those of one form ready for a search,
+//     a [Scorer] for many words.
 //   - [Align] finds a cheapest [Alignment], which is a list of [Edit] values
 //     that cover form and word from left to right; [Count] says how many are as
 //     cheap, [All] lists them.

@@ -55,6 +55,8 @@ func Fit(ctx context.Context, pairs []Pair, origin Origin, progress func(done, t
 				return nil, err
 			}
 			f.expect(p, t)
+			t.spaces[0].met += p.Weight
+			t.spaces[1].met += p.Weight
 		}
 		f = newFitted(t.prune(), keys, smooth)
 		if progress != nil {
@@ -213,13 +215,40 @@ func (f *Fitted) withLong(counts map[longEdit]float64) *Fitted {
 	return newFitted(&t, f.keys, f.smooth)
 }
 
-// prune drops edits of several letters that the others explain better, and
-// counts too small to matter.
+// misread are letters that print and handwriting make look like others (from
+// memory of proofs and scanned pages). Pairs of one writer's slips may lack them.
+var misread = [][2]string{{"rn", "m"}, {"m", "rn"}, {"nn", "m"}, {"cl", "d"}, {"d", "cl"}, {"vv", "w"}, {"ii", "u"}, {"li", "h"}}
+
+// misreadCount is how often each of them is taken to have been seen.
+const misreadCount = 0.3
+
+// prune drops edits of several letters that the others explain better, but keeps
+// some for the misread ones; and the counts of stretches that no price needs.
 func (t *tally) prune() *tally {
 	for e, n := range t.long {
 		if n < 1 {
 			delete(t.long, e)
 		}
 	}
+	for _, m := range misread {
+		t.long[longEdit{stretchOf(spellText(m[0])), stretchOf(spellText(m[1]))}] += misreadCount
+	}
+	needed := map[stretch]bool{}
+	for e := range t.long {
+		needed[e.to] = true
+	}
+	for s := range t.met {
+		if s.size() > 2 && !needed[s] {
+			delete(t.met, s)
+		}
+	}
 	return t
+}
+
+func spellText(s string) []symbol {
+	var letters []Letter
+	for _, r := range s {
+		letters = append(letters, Letter(r))
+	}
+	return spell(letters)
 }

@@ -152,6 +152,9 @@ func price(p float64) int32 {
 func (f *Fitted) kept(s spot, p position) int32 { return price(1 - f.wrong(s, p)) }
 
 func (f *Fitted) slipped(s spot, p position, letter symbol) int32 {
+	if side, ok := s.spaceOf(letter); ok {
+		return price(f.tally.spaces[side].blend(0.005, 200))
+	}
 	return price(f.wrong(s, p) * f.written(s, p, letter))
 }
 
@@ -182,7 +185,11 @@ func newFitted(t *tally, k keyboard, by smoothing) *Fitted {
 		f.swaps[p] = t.swaps[p].blend(0.002, 100)
 	}
 	for e, n := range t.long {
-		c := price(n / (t.met[e.to] + by.long))
+		met := t.met[e.to]
+		if e.to.size() == 1 {
+			met += f.chances.letter[0][e.to[0]].met
+		}
+		c := price(n / (met + by.long))
 		f.long[e] = c
 		f.longFrom[e.from] = append(f.longFrom[e.from], longPrice{e.to, c})
 	}

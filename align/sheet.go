@@ -16,7 +16,6 @@ type Sheet struct {
 	used    []*Prices
 	extras  [symbols][]int32 // by letter before
 	long    map[stretch][]LongStep
-	none    []LongStep
 }
 
 // Form returns the form that the prices are for. It is the sheet's own: do not change it.

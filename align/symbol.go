@@ -22,9 +22,6 @@ const signs = "#abcdefghijklmnopqrstuvwxyz'-_.*"
 
 func (s symbol) String() string { return signs[s : s+1] }
 
-// isLetter reports whether s is one of a to z.
-func (s symbol) isLetter() bool { return 1 <= s && s <= 26 }
-
 func (s symbol) isVowel() bool {
 	switch s.String() {
 	case "a", "e", "i", "o", "u", "y":

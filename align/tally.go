@@ -133,6 +133,19 @@ type tally struct {
 	swapped map[stretch]float64      // how often it came out the other way round
 	swaps   [positions]ratio         // of all stretches of two
 	long    map[longEdit]float64     // edits of several letters
+	spaces  [sides]ratio             // words met: a space left out, or one too many
+}
+
+// spaceOf returns whether writing the given letter at s leaves a space out (side
+// 0) or puts one in (side 1).
+func (s spot) spaceOf(written symbol) (side int, ok bool) {
+	switch {
+	case s.letter == blank && written == edge:
+		return 0, true
+	case s.gap && written == blank:
+		return 1, true
+	}
+	return 0, false
 }
 
 func newTally() *tally {
@@ -145,6 +158,10 @@ func newTally() *tally {
 // spot counts one meeting with s; written is the letter that stands there
 // instead (the edge for none) where it went wrong.
 func (t *tally) spot(s spot, p position, weight float64, wrong bool, written symbol, k *keyboard) {
+	if side, ok := s.spaceOf(written); ok && wrong {
+		t.spaces[side].wrong += weight
+		return
+	}
 	look, r := &t.looks[s.side()][p][s.look()], t.spots[s.index()]
 	look.met += weight
 	r.met += weight
