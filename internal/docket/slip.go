@@ -77,8 +77,13 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	if level, ok := best.Word.Level(d.base.Variety()); ok {
 		v.Level = level
 	}
-	if first, second, two := strings.Cut(best.Text, " "); two {
-		v.TwoWords, v.Adjacent = true, d.adjacent(first, second)
+	v.TwoWords = strings.Contains(best.Text, " ")
+	for _, c := range found {
+		if first, second, two := strings.Cut(c.Text, " "); two {
+			v.Split = true
+			v.Adjacent = max(v.Adjacent, d.adjacent(first, second))
+			v.Little = max(v.Little, 1000*float64(max(d.use[key(first)], d.use[key(second)]))/float64(d.census.size))
+		}
 	}
 	v.Use = d.useLike(v, best.Text)
 	for _, c := range found {

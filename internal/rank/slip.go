@@ -44,7 +44,9 @@ type Evidence struct {
 	Gap       float64 // by how much its share exceeds the second's
 	Level     int     // its size level: 10 commonest, 70 rarest; 0 of a list
 	Use       int     // how often the manuscript uses it with capitals like the form's; of two words, the rarer
-	Adjacent  int     // of two words, how often they stand side by side in the manuscript
+	Split     bool    // some candidate is two words
+	Adjacent  int     // how often two words that are a candidate stand side by side in the manuscript
+	Little    float64 // how often in a thousand words the manuscript uses the commoner of two such words
 	TwoWords  bool    // it is two words
 	FirstKept bool    // it begins with the form's first letter
 	LastKept  bool    // it ends with the form's last letter
@@ -129,6 +131,8 @@ var features = []feature{
 	{"use", true, func(e *Evidence, _ Letters) float64 { return doublings(e.Use) }},
 	{"used", true, func(e *Evidence, _ Letters) float64 { return is(e.Use > 0) }},
 	{"two words", true, func(e *Evidence, _ Letters) float64 { return is(e.TwoWords) }},
+	{"split", true, func(e *Evidence, _ Letters) float64 { return is(e.Split) }},
+	{"split, little word", true, func(e *Evidence, _ Letters) float64 { return math.Log2(1 + e.Little) }},
 	{"two words, adjacent", true, func(e *Evidence, _ Letters) float64 { return doublings(e.Adjacent) }},
 	{"first letter", true, func(e *Evidence, _ Letters) float64 { return is(e.FirstKept) }},
 	{"accent", true, func(e *Evidence, _ Letters) float64 { return is(e.Accent) }},
@@ -154,6 +158,8 @@ var features = []feature{
 		return is(e.Distance == 1) * (math.Log2(float64(1+l.Length)) - 3)
 	}},
 	{"distance 2, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * is(e.Distance == 2) }},
+	{"vowels, speech", true, func(e *Evidence, _ Letters) float64 { return e.Speech * is(e.Found && e.Vowels) }},
+	{"last letter missing", true, func(e *Evidence, l Letters) float64 { return is(!e.LastKept && e.missing(l)) }},
 	{"use, capital", true, func(e *Evidence, _ Letters) float64 { return e.Capital * doublings(e.Use) }},
 }
 
