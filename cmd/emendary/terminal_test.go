@@ -194,7 +194,7 @@ func TestAnInterruptEndsWaiting(t *testing.T) {
 // An interrupt in the middle of a long listing ends it; what is out stays.
 func TestAnInterruptEndsALongListing(t *testing.T) {
 	folder := t.TempDir()
-	manuscript := writeFile(t, folder, "novel.md", writeNovel(rand.New(rand.NewPCG(3, 3)), 15_000).slips)
+	manuscript := writeFile(t, folder, "novel.md", writeNovel(rand.New(rand.NewPCG(3, 3)), 60_000).slips)
 	cmd := exec.Command("emendary", "docket", manuscript, "--format", "jsonl", "-n", "9")
 	cmd.Env = append(os.Environ(), environment(folder)...)
 	var notes bytes.Buffer
@@ -205,7 +205,7 @@ func TestAnInterruptEndsALongListing(t *testing.T) {
 	listing := bufio.NewReader(out)
 	first, err := listing.ReadString('\n')
 	require.NoError(t, err)
-	// It cannot be through: the listing is longer than a pipe holds.
+	// It cannot be through: the listing is several times what a pipe holds.
 	require.NoError(t, cmd.Process.Signal(syscall.SIGINT))
 	rest, err := io.ReadAll(listing)
 	require.NoError(t, err)
