@@ -44,8 +44,8 @@ func minimum(row []int32) int32 {
 // deleting the first i letters of the form.
 func (s *Sheet) First(row []int32) {
 	row[0] = 0
-	for i, price := range s.Deletes(0, true) {
-		row[i+1] = row[i] + price
+	for i := range s.form {
+		row[i+1] = row[i] + s.deleted(edge, i)
 	}
 }
 
@@ -61,12 +61,12 @@ func (s *Sheet) Step(row []int32, before [3][]int32, path []Letter) (least int32
 	if !first {
 		left = path[j-2]
 	}
-	prices := s.Prices(left, first, letter)
+	at := s.Spot(left, first, letter)
 	last := before[0]
 	for i := range row {
-		v := last[i] + s.Insert(prices, i)
+		v := last[i] + s.Insert(at, i)
 		if i > 0 {
-			v = min(v, last[i-1]+s.One(prices, i-1))
+			v = min(v, last[i-1]+s.One(at, i-1))
 		}
 		row[i] = v
 	}
@@ -78,16 +78,14 @@ func (s *Sheet) Step(row []int32, before [3][]int32, path []Letter) (least int32
 			}
 		}
 	}
-	for k := 1; k <= min(3, j); k++ {
-		from := before[k-1]
-		for _, e := range s.Long(path[j-k:]) {
-			row[e.I+e.M] = min(row[e.I+e.M], from[e.I]+e.Price)
+	for _, e := range s.Ending(at) {
+		if e.Yields(path) {
+			row[e.I+e.M] = min(row[e.I+e.M], before[e.N-1][e.I]+e.Price)
 		}
 	}
-	deletes := s.Deletes(letter, false)
 	least = row[0]
 	for i := 1; i <= n; i++ {
-		row[i] = min(row[i], row[i-1]+deletes[i-1])
+		row[i] = min(row[i], row[i-1]+s.Delete(at, i-1))
 		least = min(least, row[i])
 	}
 	return least

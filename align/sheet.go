@@ -1,44 +1,57 @@
 package align
 
 // Sheet is the prices of every edit of one form under fitted costs, worked out as
-// they are asked for and kept, so that a search that lays the form against many
-// words pays for each once. All prices are in grains ([Grain] bits) and above 0.
+// they are asked for and kept from form to form, so that a search that lays forms
+// against many words pays for each once. All prices are in grains ([Grain] bits) and
+// above 0.
 //
-// A Sheet serves one goroutine at a time; [Sheet.Reset] readies it for the next
-// form in the space it has.
+// A price depends on the form's letters by the one or two it is about and their
+// place, which many forms share: after some hundred forms most are known. They
+// take some megabytes. So a Sheet is best used again, by [Sheet.Reset]; it serves
+// one goroutine at a time.
 type Sheet struct {
 	costs   *Fitted
 	form    []Letter
 	symbols []symbol
-	columns [symbols * symbols]*Prices // of plain letters, by letter before and letter
-	rare    map[rareColumn]*Prices     // of all other letters
-	spare   []*Prices
-	used    []*Prices
-	extras  [symbols][]int32 // by letter before
-	long    map[stretch][]LongStep
+
+	// By letter of the form, one more where they go with the gap after it:
+	keep, extra   []*byLeft
+	replace, omit []*byBoth
+
+	// All that were asked for under these costs, by place, letter of the form (0
+	// for gaps) and the one after it.
+	keeps, extras   map[spotOfForm]*byLeft
+	replaces, omits map[spotOfForm]*byBoth
+
+	long   []LongEdit
+	ending [symbols][]LongEdit // by the last letter they yield
+	swaps  []int32
 }
 
-// Form returns the form that the prices are for. It is the sheet's own: do not change it.
-func (s *Sheet) Form() []Letter { return s.form }
-
-type rareColumn struct {
-	left   symbol
-	letter Letter
+// spotOfForm is what prices take from the form.
+type spotOfForm struct {
+	p              position
+	written, right symbol
 }
 
-// Prices are those of edits that yield one letter of a word after another one.
-// It is filled as it is asked.
-type Prices struct {
-	spot      spot
-	letter    Letter
-	one, omit []int32 // by letter of the form; 0 where not yet known
+// byLeft are prices by the letter of the word before; 0 where not yet known.
+type byLeft struct {
+	price [symbols]int32
+	least int32
 }
 
-// LongStep is an edit of several letters: it takes M letters of the form from the
-// I-th on, counted from 0.
-type LongStep struct {
-	I, M  int
-	Price int32
+// byBoth are prices by the letter of the word and the one before it.
+type byBoth struct {
+	price [symbols * symbols]int32
+	least [symbols]int32 // by letter of the word: where the one before is another
+}
+
+// LongEdit is an edit of several letters: it takes M letters of the form from the
+// I-th on, counted from 0, and yields N letters of a word.
+type LongEdit struct {
+	I, M, N int
+	Price   int32
+	to      stretch
 }
 
 // Sheet returns the prices for a form.
@@ -48,137 +61,170 @@ func (f *Fitted) Sheet(form []Letter) *Sheet {
 	return s
 }
 
+// Form returns the form that the prices are for. It is the sheet's own: do not
+// change it.
+func (s *Sheet) Form() []Letter { return s.form }
+
 // Reset readies s for another form, under the same costs or others. It keeps form.
 func (s *Sheet) Reset(costs *Fitted, form []Letter) {
-	s.costs, s.form = costs, form
+	if s.costs != costs {
+		*s = Sheet{
+			costs: costs, keeps: map[spotOfForm]*byLeft{}, extras: map[spotOfForm]*byLeft{},
+			replaces: map[spotOfForm]*byBoth{}, omits: map[spotOfForm]*byBoth{},
+		}
+	}
+	s.form = form
 	s.symbols = s.symbols[:0]
 	for _, l := range form {
 		s.symbols = append(s.symbols, symbolOf(l))
 	}
-	clear(s.columns[:])
-	clear(s.rare)
-	s.spare = append(s.spare, s.used...)
-	s.used = s.used[:0]
-	for i := range s.extras {
-		s.extras[i] = s.extras[i][:0]
-	}
-	if s.long == nil {
-		s.long, s.rare = map[stretch][]LongStep{}, map[rareColumn]*Prices{}
-	}
-	for to, steps := range s.long {
-		s.long[to] = steps[:0]
-	}
+	s.keep, s.extra, s.replace, s.omit, s.swaps = s.keep[:0], s.extra[:0], s.replace[:0], s.omit[:0], s.swaps[:0]
 	for i := range form {
-		for m := 1; m <= 3 && i+m <= len(form); m++ {
-			for _, e := range costs.longFrom[stretchOf(s.symbols[i:i+m])] {
-				s.long[e.to] = append(s.long[e.to], LongStep{i, m, e.price})
+		at := spotOfForm{positionOf(i, len(form)), s.symbols[i], s.symbol(i + 1)}
+		s.keep = append(s.keep, kept(s.keeps, at))
+		s.extra = append(s.extra, kept(s.extras, at))
+		s.replace = append(s.replace, kept(s.replaces, at))
+		if i > 0 {
+			s.swaps = append(s.swaps, costs.swap(stretch{s.symbols[i], s.symbols[i-1]}, positionOf(i-1, len(form))))
+		}
+	}
+	for i := range len(form) + 1 {
+		s.omit = append(s.omit, kept(s.omits, spotOfForm{positionOf(i, len(form)), edge, s.symbol(i)}))
+	}
+	s.findLong()
+}
+
+// kept returns the prices at a spot, from those there are or new ones.
+func kept[P any](all map[spotOfForm]*P, at spotOfForm) *P {
+	p := all[at]
+	if p == nil {
+		p = new(P)
+		all[at] = p
+	}
+	return p
+}
+
+// findLong finds the edits of several letters that the form has room for.
+func (s *Sheet) findLong() {
+	s.long = s.long[:0]
+	for i := range s.ending {
+		s.ending[i] = s.ending[i][:0]
+	}
+	for i := range s.form {
+		for m := 1; m <= 3 && i+m <= len(s.form); m++ {
+			for _, e := range s.costs.longFrom[stretchOf(s.symbols[i:i+m])] {
+				l := LongEdit{i, m, e.to.size(), e.price, e.to}
+				s.long = append(s.long, l)
+				last := e.to[l.N-1]
+				s.ending[last] = append(s.ending[last], l)
 			}
 		}
 	}
 }
 
-// Prices returns the prices of edits that yield letter where the word has left
-// before it. First says that it is the word's first letter: left does not count.
-func (s *Sheet) Prices(left Letter, first bool, letter Letter) *Prices {
-	l, c := edge, symbolOf(letter)
-	if !first {
-		l = symbolOf(left)
-	}
-	if plain := letter < 0x80 && c != other; plain {
-		slot := &s.columns[int(l)*symbols+int(c)]
-		if *slot == nil {
-			*slot = s.column(l, c, letter)
-		}
-		return *slot
-	}
-	key := rareColumn{l, letter}
-	if s.rare[key] == nil {
-		s.rare[key] = s.column(l, c, letter)
-	}
-	return s.rare[key]
+// Spot is a letter of a word with the one before it, as prices look at them.
+type Spot struct {
+	letter Letter
+	index  int // in byBoth
 }
 
-func (s *Sheet) column(left, sym symbol, letter Letter) *Prices {
-	var c *Prices
-	if n := len(s.spare); n > 0 {
-		c, s.spare = s.spare[n-1], s.spare[:n-1]
-	} else {
-		c = &Prices{}
-	}
-	s.used = append(s.used, c)
-	c.spot, c.letter = spot{left: left, letter: sym}, letter
-	c.one, c.omit = zeros(c.one, len(s.form)), zeros(c.omit, len(s.form)+1)
-	return c
-}
-
-// zeros returns n zeros, in the space of b where there is enough.
-func zeros(b []int32, n int) []int32 {
-	if cap(b) < n {
-		return make([]int32, n)
-	}
-	b = b[:n]
-	clear(b)
-	return b
-}
-
-// One returns the price of turning letter i of the form into the column's letter,
-// which is that of keeping it where they are the same.
-func (s *Sheet) One(c *Prices, i int) int32 {
-	if p := c.one[i]; p != 0 {
-		return p
-	}
-	at := c.spot
-	at.right = s.symbol(i + 1)
-	p := positionOf(i, len(s.form))
-	if s.form[i] == c.letter {
-		c.one[i] = s.costs.kept(at, p)
-	} else {
-		c.one[i] = s.costs.slipped(at, p, s.symbols[i])
-	}
-	return c.one[i]
-}
-
-// Insert returns the price of inserting the column's letter before letter i of
-// the form; len(form) is after the last.
-func (s *Sheet) Insert(c *Prices, i int) int32 {
-	if p := c.omit[i]; p != 0 {
-		return p
-	}
-	at := c.spot
-	at.right = s.symbol(i)
-	c.omit[i] = s.costs.slipped(at, positionOf(i, len(s.form)), edge)
-	return c.omit[i]
-}
-
-// Deletes returns the prices of deleting each letter of the form where the last
-// letter of the word so far is left; first says that there is none.
-func (s *Sheet) Deletes(left Letter, first bool) []int32 {
+// Spot returns the spot of letter with left before it. First says that it is the
+// word's first letter: left does not count.
+func (s *Sheet) Spot(left Letter, first bool, letter Letter) Spot {
 	l := edge
 	if !first {
 		l = symbolOf(left)
 	}
-	prices := s.extras[l]
-	if len(prices) == len(s.form) {
-		return prices
+	return Spot{letter, int(symbolOf(letter))<<5 | int(l)}
+}
+
+func (at Spot) letterSymbol() symbol { return symbol(at.index >> 5) }
+func (at Spot) left() symbol         { return symbol(at.index & 31) }
+
+// One returns the price of turning letter i of the form into the letter at a spot,
+// which is that of keeping it where they are the same.
+func (s *Sheet) One(at Spot, i int) int32 {
+	var p int32
+	if s.form[i] == at.letter {
+		p = s.keep[i].price[at.index&31]
+	} else {
+		p = s.replace[i].price[at.index]
 	}
-	for i := range s.form {
-		at := spot{gap: true, left: l, right: s.symbol(i + 1)}
-		prices = append(prices, s.costs.slipped(at, positionOf(i, len(s.form)), s.symbols[i]))
+	if p == 0 {
+		p = s.newOne(at, i)
 	}
-	s.extras[l] = prices
-	return prices
+	return p
+}
+
+func (s *Sheet) newOne(at Spot, i int) int32 {
+	p := positionOf(i, len(s.form))
+	where := spot{left: at.left(), letter: at.letterSymbol(), right: s.symbol(i + 1)}
+	if s.form[i] == at.letter {
+		price := s.costs.kept(where, p)
+		s.keep[i].price[at.left()] = price
+		return price
+	}
+	price := s.costs.slipped(where, p, s.symbols[i])
+	s.replace[i].price[at.index] = price
+	return price
+}
+
+// Insert returns the price of inserting the letter at a spot before letter i of
+// the form; len(form) is after the last.
+func (s *Sheet) Insert(at Spot, i int) int32 {
+	if p := s.omit[i].price[at.index]; p != 0 {
+		return p
+	}
+	where := spot{left: at.left(), letter: at.letterSymbol(), right: s.symbol(i)}
+	price := s.costs.slipped(where, positionOf(i, len(s.form)), edge)
+	s.omit[i].price[at.index] = price
+	return price
+}
+
+// Delete returns the price of deleting letter i of the form after the letter at
+// a spot.
+func (s *Sheet) Delete(after Spot, i int) int32 {
+	return s.deleted(after.letterSymbol(), i)
+}
+
+func (s *Sheet) deleted(left symbol, i int) int32 {
+	if p := s.extra[i].price[left]; p != 0 {
+		return p
+	}
+	where := spot{gap: true, left: left, right: s.symbol(i + 1)}
+	price := s.costs.slipped(where, positionOf(i, len(s.form)), s.symbols[i])
+	s.extra[i].price[left] = price
+	return price
 }
 
 // Swap returns the price of transposing letters i and i+1 of the form, which the
 // word has the other way round.
-func (s *Sheet) Swap(i int) int32 {
-	return s.costs.swap(stretch{s.symbols[i+1], s.symbols[i]}, positionOf(i, len(s.form)))
+func (s *Sheet) Swap(i int) int32 { return s.swaps[i] }
+
+// Ending returns the edits of several letters, transpositions aside, that may
+// yield the letter at a spot as their last one: see [LongEdit.Yields].
+func (s *Sheet) Ending(at Spot) []LongEdit { return s.ending[at.letterSymbol()] }
+
+// Long returns all edits of several letters, transpositions aside.
+func (s *Sheet) Long() []LongEdit { return s.long }
+
+// Yields reports whether e yields the last N of letters, where there are as many.
+func (e *LongEdit) Yields(letters []Letter) bool {
+	from := len(letters) - e.N
+	if from < 0 {
+		return false
+	}
+	for i, l := range letters[from:] {
+		if symbolOf(l) != e.to[i] {
+			return false
+		}
+	}
+	return true
 }
 
-// Long returns the edits of several letters that yield those letters of the word,
-// one to three of them, transpositions aside. It allocates nothing.
-func (s *Sheet) Long(to []Letter) []LongStep {
-	return s.long[stretchIn(to)]
+// Symbols returns the symbols ([Symbol]) of the letters that e yields.
+func (e *LongEdit) Symbols() [3]uint8 {
+	return [3]uint8{uint8(e.to[0]), uint8(e.to[1]), uint8(e.to[2])}
 }
 
 func (s *Sheet) symbol(i int) symbol { return at(s.symbols, i) }

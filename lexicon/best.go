@@ -32,6 +32,8 @@ func (r *Ranking) Best(dst []Match, sheet *align.Sheet, n int, limit int32) []Ma
 	defer r.scratch.Put(b)
 	b.Ranking, b.sheet, b.form, b.n = r, sheet, form, n
 	b.list, b.limit = b.list[:0], min(limit, never-1)
+	b.sheet.Least(&b.least)
+	b.losses.reset(sheet, &b.least)
 	b.quick()
 	b.branch()
 	return b.appendTo(dst)
@@ -49,8 +51,12 @@ type best struct {
 	search  search // for the quick set
 	scorer  align.Scorer
 	letters []align.Letter // of a word
-	rows    [][]int32      // by depth
+
+	least   align.Least
+	losses  losses
+	fronts  []front // by depth
 	path    []align.Letter
+	symbols [MaxLetters + 1]uint8 // of path, after an edge
 }
 
 // held is a word among the best so far.

@@ -22,6 +22,7 @@ type Lexicon struct {
 type layer struct {
 	*List
 	toLetter []align.Letter          // by label
+	symbols  []uint8                 // by label: as prices tell letters apart
 	toLabel  map[align.Letter]uint32 // the inverse
 	ascii    [128]uint32             // the inverse for ASCII, and one more; 0 where there is none
 }
@@ -79,7 +80,16 @@ func newLayer(l *List, a *align.Alphabet) *layer {
 			}
 		}
 	}
+	y.symbols = symbolsOf(y.toLetter)
 	return y
+}
+
+func symbolsOf(letters []align.Letter) []uint8 {
+	symbols := make([]uint8, len(letters))
+	for i, l := range letters {
+		symbols[i] = uint8(align.Symbol(l))
+	}
+	return symbols
 }
 
 // Variety returns the variety in use.

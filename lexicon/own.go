@@ -13,8 +13,10 @@ import (
 // minimal one: each node is reached in one way, so that floors of prices below are
 // exact.
 type own struct {
-	trie     trie
+	trie     trie // not minimal: a node for each beginning
 	toLetter []align.Letter
+	symbols  []uint8
+	ahead    []ahead   // by arc
 	words    []ownWord // by their letters
 	starts   []uint32  // by number in the trie: its first word; and where the last one's end
 	ends     []uint32  // by arc: the number of the word that ends on it
@@ -136,70 +138,86 @@ func (o *own) grow() {
 		}
 	}
 	slices.Sort(o.toLetter)
+	o.symbols = symbolsOf(o.toLetter)
 	for label, letter := range o.toLetter {
 		labels[letter] = uint32(label)
 	}
-	o.trie = trie{arcs: []uint32{lastArc, 0}, skips: []uint32{0}}
-	o.ends = []uint32{0}
-	o.trie.root = o.node(0, uint32(len(o.starts)-1), 0, labels)
+	paths := make([]ownPath, len(o.starts)-1)
+	for n := range paths {
+		paths[n].number = uint32(n)
+		for _, letter := range o.words[o.starts[n]].letters {
+			paths[n].labels = append(paths[n].labels, labels[letter])
+		}
+	}
+	o.trie, o.ends = growPaths(paths)
+	o.ahead = lookAhead(&o.trie, o.symbols)
 }
 
-// node adds the node for the words numbered from first up to last, which have
-// their first depth letters in common and more after them, and returns it.
-func (o *own) node(first, last uint32, depth int, labels map[align.Letter]uint32) uint32 {
-	if first == last {
-		return 0
-	}
-	letters := func(n uint32) []align.Letter { return o.words[o.starts[n]].letters }
-	type arc struct{ head, child, skip, end uint32 }
-	var arcs []arc
-	for n := first; n < last; {
-		letter := letters(n)[depth]
-		a := arc{head: labels[letter] << labelBit, skip: n - first}
-		if len(letters(n)) == depth+1 {
-			a.head |= endsWord
-			a.end = n
-			n++
+// ownPath is the path of an own word in a trie.
+type ownPath struct {
+	labels []uint32
+	number uint32
+}
+
+// growPaths returns the trie of paths, ascending, with a node for each beginning,
+// and by arc the number of the word that ends on it.
+func growPaths(paths []ownPath) (trie, []uint32) {
+	t, ends := trie{arcs: []uint32{lastArc, 0}, skips: []uint32{0}}, []uint32{0}
+	var node func(paths []ownPath, depth int) uint32
+	node = func(paths []ownPath, depth int) uint32 {
+		if len(paths) == 0 {
+			return 0
 		}
-		from := n
-		for n < last && letters(n)[depth] == letter {
-			n++
+		type arc struct{ head, child, skip, end uint32 }
+		var arcs []arc
+		for n := 0; n < len(paths); {
+			label := paths[n].labels[depth]
+			a := arc{head: label << labelBit, skip: uint32(n)}
+			if len(paths[n].labels) == depth+1 {
+				a.head |= endsWord
+				a.end = paths[n].number
+				n++
+			}
+			from := n
+			for n < len(paths) && paths[n].labels[depth] == label {
+				n++
+			}
+			a.child = node(paths[from:n], depth+1)
+			arcs = append(arcs, a)
 		}
-		a.child = o.node(from, n, depth+1, labels)
-		arcs = append(arcs, a)
+		arcs[len(arcs)-1].head |= lastArc
+		first := uint32(len(ends))
+		for _, a := range arcs {
+			t.arcs = append(t.arcs, a.head, a.child)
+			t.skips = append(t.skips, a.skip)
+			ends = append(ends, a.end)
+		}
+		return first
 	}
-	arcs[len(arcs)-1].head |= lastArc
-	node := uint32(len(o.ends))
-	for _, a := range arcs {
-		o.trie.arcs = append(o.trie.arcs, a.head, a.child)
-		o.trie.skips = append(o.trie.skips, a.skip)
-		o.ends = append(o.ends, a.end)
-	}
-	return node
+	t.root = node(paths, 0)
+	return t, ends
 }
 
 // price asks a prior for the prices of all own words.
 func (o *own) price(p Prior) ownPrices {
-	prices := ownPrices{words: make([]int32, len(o.words)), below: make([]int32, len(o.ends))}
+	prices := ownPrices{words: make([]int32, len(o.words))}
 	for i := range o.words {
 		w := &o.words[i]
 		prices.words[i] = p.ask(w.word, len(w.letters), w.use)
 	}
+	prices.below = make([]int32, len(o.ends))
 	for arc := range prices.below {
-		least := never
-		if child := o.trie.arcs[2*arc+1]; child != 0 {
-			for a := child; ; a++ {
-				least = min(least, prices.below[a]) // nodes stand after those they lead to
-				head := o.trie.arcs[2*a]
-				if head&endsWord != 0 {
-					least = min(least, prices.least(o, o.ends[a]))
-				}
-				if head&lastArc != 0 {
-					break
-				}
+		prices.below[arc] = never
+		for a := o.trie.arcs[2*arc+1]; a != 0; a++ {
+			least := prices.below[a] // nodes stand after those they lead to
+			if o.trie.arcs[2*a]&endsWord != 0 {
+				least = min(least, prices.least(o, o.ends[a]))
+			}
+			prices.below[arc] = min(prices.below[arc], least)
+			if o.trie.arcs[2*a]&lastArc != 0 {
+				break
 			}
 		}
-		prices.below[arc] = least
 	}
 	return prices
 }

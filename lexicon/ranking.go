@@ -2,6 +2,7 @@ package lexicon
 
 import (
 	"iter"
+	"math/bits"
 	"sync"
 
 	"emendary/align"
@@ -42,6 +43,7 @@ func (m *Match) Total() int32 { return m.Edits + m.Prior }
 type Ranking struct {
 	lexicon *Lexicon
 	weights [layers]*weights // nil where there is no list
+	ahead   [layers][]ahead  // by arc
 	own     *own
 	prices  ownPrices
 	scratch *sync.Pool // of *best
@@ -60,6 +62,11 @@ func (x *Lexicon) Ranking(p Prior, used iter.Seq2[string, int]) *Ranking {
 		lexicon: c,
 		own:     c.ownWords(used),
 		scratch: &sync.Pool{New: func() any { return new(best) }},
+	}
+	for which, y := range c.layers {
+		if y != nil {
+			r.ahead[which] = lookAhead(&y.trie, y.symbols)
+		}
 	}
 	return r.WithPrior(p)
 }
@@ -90,8 +97,7 @@ func (p Prior) ask(w Word, letters, use int) int32 {
 type weights struct {
 	prices []int32  // by grade and letters
 	kinds  []uint16 // by set of grades: sets of the same floors have the same kind
-	floors []int32  // by depth and kind
-	width  int      // kinds
+	floors []int32  // by kind and letters: see floorsOf
 	sets   *marks
 }
 
@@ -104,7 +110,7 @@ func (x *Lexicon) weigh(y *layer, which Layer, p Prior) *weights {
 	type row [PriorLetters]int32 // prices by letters
 	var rows []row               // that differ
 	numbers := map[row]int{}
-	bits := make([]uint64, len(y.grades))
+	kindOf := make([]uint64, len(y.grades)) // a bit each
 	for g := range y.grades {
 		own := (*row)(w.prices[g*PriorLetters:])
 		word := y.graded(g, which)
@@ -127,7 +133,7 @@ func (x *Lexicon) weigh(y *layer, which Layer, p Prior) *weights {
 				rows[n][i] = min(rows[n][i], own[i])
 			}
 		}
-		bits[g] = 1 << n
+		kindOf[g] = 1 << n
 	}
 	w.kinds = make([]uint16, len(y.ends))
 	kinds := map[uint64]uint16{}
@@ -136,7 +142,7 @@ func (x *Lexicon) weigh(y *layer, which Layer, p Prior) *weights {
 	for s, end := range y.ends {
 		var set uint64
 		for _, g := range y.members[from:end] {
-			set |= bits[g]
+			set |= kindOf[g]
 		}
 		from = end
 		kind, ok := kinds[set]
@@ -147,17 +153,22 @@ func (x *Lexicon) weigh(y *layer, which Layer, p Prior) *weights {
 		}
 		w.kinds[s] = kind
 	}
-	w.width = len(members)
-	w.floors = make([]int32, w.width*PriorLetters)
+	w.floors = make([]int32, len(members)*(PriorLetters+1))
 	for kind, set := range members {
-		least := never
-		for depth := PriorLetters - 1; depth >= 0; depth-- {
-			for n := range rows {
-				if set>>n&1 != 0 {
-					least = min(least, rows[n][depth])
-				}
+		floors := w.floors[kind*(PriorLetters+1):][:PriorLetters+1]
+		floors[0] = never
+		for i := range PriorLetters {
+			least := never
+			for rest := set; rest != 0; rest &= rest - 1 {
+				least = min(least, rows[bits.TrailingZeros64(rest)][i])
 			}
-			w.floors[depth*w.width+kind] = least
+			floors[i+1] = least
+		}
+		for i := 1; i <= PriorLetters; i++ {
+			floors[i] = min(floors[i], floors[i-1]+perLetter)
+		}
+		for i := PriorLetters - 1; i >= 0; i-- {
+			floors[i] = min(floors[i], floors[i+1]+perLetter)
 		}
 	}
 	return w
@@ -168,14 +179,19 @@ func (w *weights) price(g uint16, letters int) int32 {
 	return w.prices[int(g)*PriorLetters+min(letters, PriorLetters)-1]
 }
 
-// floor returns the least price of the words of more than depth letters in the
-// set of grades with that number. A set that does not exist, as in damaged data,
-// has the floor of all words.
-func (w *weights) floor(set uint16, depth int) int32 {
+// perLetter is what a word is taken to cost at least for each letter that it is
+// longer or shorter than foretold, a bit: see reach.
+const perLetter = 1 << 10
+
+// floorsOf returns the floors of the words in the set of grades with that number,
+// by their letters, PriorLetters for more; a word that has other letters than
+// foretold costs perLetter more for each. A set that does not exist, as in damaged
+// data, has the floors of all words.
+func (w *weights) floorsOf(set uint16) []int32 {
 	if int(set) >= len(w.kinds) {
 		set = 0
 	}
-	return w.floors[min(depth, PriorLetters-1)*w.width+int(w.kinds[set])]
+	return w.floors[int(w.kinds[set])*(PriorLetters+1):][:PriorLetters+1]
 }
 
 // least returns the least price of the words of so many letters in a set of

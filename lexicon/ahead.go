@@ -1,0 +1,127 @@
+package lexicon
+
+import (
+	"math/bits"
+
+	"emendary/align"
+)
+
+// ahead is what is known of the letters of the words below an arc, as sets of
+// symbols ([align.Symbol]), a bit each: those that some word has there, and those
+// that all have.
+type ahead struct {
+	some, all uint32
+}
+
+// lookAhead returns what is ahead of each arc of a trie over labels with these
+// symbols. It takes O(arcs).
+func lookAhead(t *trie, symbols []uint8) []ahead {
+	arcs := make([]ahead, len(t.skips))
+	nodes := make([]ahead, len(t.skips)) // by first arc
+	first := uint32(1)
+	for arc := uint32(1); int(arc) < len(arcs); arc++ {
+		head, child := t.arcs[2*arc], t.arcs[2*arc+1]
+		arcs[arc] = nodes[child] // nodes stand after those they lead to
+		own := uint32(1) << (symbols[head>>labelBit] & 31)
+		all := own
+		if head&endsWord == 0 {
+			all |= arcs[arc].all
+		}
+		node := &nodes[first]
+		if arc == first {
+			node.all = all
+		}
+		node.all &= all
+		node.some |= own | arcs[arc].some
+		if head&lastArc != 0 {
+			first = arc + 1
+		}
+	}
+	return arcs
+}
+
+// losses bounds what is still to be paid where what is ahead does not fit what is
+// left of the form: a letter of the form that no word has ahead is deleted or
+// replaced, a letter that all words have and the form lacks is inserted or
+// written for another. One edit may do both, so that the greater sum counts. What
+// floors have in them for the length of a word is taken off (see reach).
+type losses struct {
+	lose    [maxBest]int32 // by letter of the form: what its loss costs at least
+	symbols [maxBest]uint8 // of the form
+	form    uint32         // the same as a set
+
+	// By symbol of a letter of the word, the least price:
+	gain   [32]int32 // of its coming in
+	insert [32]int32 // of inserting it after another letter, less perLetter
+	twice  [32]int32 // likewise after the same letter
+	one    [32]int32 // of writing it for another letter
+
+	none, room [maxBest + 1]int32 // zeros, and room for what of returns
+}
+
+func (l *losses) reset(sheet *align.Sheet, least *align.Least) {
+	form := sheet.Form()
+	l.form = 0
+	for c := range l.gain {
+		l.insert[c], l.twice[c], l.one[c] = never, never, never
+	}
+	for i, letter := range form {
+		own := align.Symbol(letter)
+		l.symbols[i] = uint8(own)
+		l.form |= 1 << own
+		l.lose[i] = least.Delete[i] - perLetter
+		for c := 1; c < len(l.gain); c++ {
+			if c != own {
+				l.lose[i] = min(l.lose[i], least.One[c][i])
+				l.one[c] = min(l.one[c], least.One[c][i])
+			}
+		}
+	}
+	for c := 1; c < len(l.gain); c++ {
+		for i := range len(form) + 1 {
+			l.insert[c] = min(l.insert[c], least.Insert[c][i])
+			l.twice[c] = min(l.twice[c], least.Twice[c][i])
+		}
+		l.insert[c] -= perLetter
+		l.twice[c] -= perLetter
+		l.gain[c] = max(0, min(l.insert[c], l.twice[c], l.one[c]))
+	}
+	for _, e := range sheet.Long() {
+		price := max(0, e.Price-int32(max(e.M-e.N, e.N-e.M))*perLetter)
+		for i := e.I; i < e.I+e.M; i++ {
+			l.lose[i] = min(l.lose[i], price/int32(e.M))
+		}
+		for _, c := range e.Symbols() {
+			l.gain[c] = min(l.gain[c], price/int32(e.N))
+		}
+	}
+	for i := range form {
+		l.lose[i] = max(0, l.lose[i])
+	}
+}
+
+// of returns by cell what is still to be paid at least for words with a ahead,
+// for a form of n letters.
+func (l *losses) of(a ahead, n int) []int32 {
+	missing, wanted := l.form&^a.some, a.all
+	if missing == 0 && wanted == 0 {
+		return l.none[:n+1]
+	}
+	var lost, gained int32
+	for rest := wanted; rest != 0; rest &= rest - 1 {
+		gained += l.gain[bits.TrailingZeros32(rest)]
+	}
+	l.room[n] = gained
+	for i := n - 1; i >= 0; i-- {
+		c := l.symbols[i] & 31
+		if missing>>c&1 != 0 {
+			lost += l.lose[i]
+		}
+		if wanted>>c&1 != 0 {
+			wanted &^= 1 << c
+			gained -= l.gain[c]
+		}
+		l.room[i] = max(lost, gained)
+	}
+	return l.room[:n+1]
+}
