@@ -118,22 +118,34 @@ func BenchmarkBest(b *testing.B) {
 	x := lexicon.New(english.Base(), lexicon.BritishIse)
 	r := x.Ranking(byLevel, nil)
 	sheet := new(align.Sheet)
-	var times []time.Duration
 	var matches []lexicon.Match
-	for i := range 600 { // so that the prices are known, as after some hundred forms of a manuscript
-		sheet.Reset(costs, pairs[i*7%len(pairs)].Form)
-		matches = r.Best(matches[:0], sheet, 10, math.MaxInt32)
+	for _, search := range []struct {
+		name string
+		of   func()
+	}{
+		{"ten", func() { matches = r.Best(matches[:0], sheet, 10, math.MaxInt32) }},
+		{"near", func() { matches = r.Near(matches[:0], sheet, 10, 10<<10) }},
+	} {
+		one := func(i int) {
+			sheet.Reset(costs, pairs[i*7%len(pairs)].Form)
+			search.of()
+		}
+		b.Run(search.name, func(b *testing.B) {
+			for i := range 600 { // so that the prices are known, as after some hundred forms of a manuscript
+				one(i)
+			}
+			var times []time.Duration
+			b.ReportAllocs()
+			for i := 0; b.Loop(); i++ {
+				start := time.Now()
+				one(i)
+				times = append(times, time.Since(start))
+			}
+			slices.Sort(times)
+			b.ReportMetric(float64(times[len(times)/2].Microseconds()), "median-µs")
+			b.ReportMetric(float64(times[len(times)*99/100].Microseconds()), "p99-µs")
+		})
 	}
-	b.ReportAllocs()
-	for i := 0; b.Loop(); i++ {
-		start := time.Now()
-		sheet.Reset(costs, pairs[i*7%len(pairs)].Form)
-		matches = r.Best(matches[:0], sheet, 10, math.MaxInt32)
-		times = append(times, time.Since(start))
-	}
-	slices.Sort(times)
-	b.ReportMetric(float64(times[len(times)/2].Microseconds()), "median-µs")
-	b.ReportMetric(float64(times[len(times)*99/100].Microseconds()), "p99-µs")
 }
 
 func BenchmarkRanking(b *testing.B) {

@@ -150,7 +150,14 @@ func TestBestIsThatOfAScan(t *testing.T) {
 				limit = int32(random.IntN(40 << 10))
 			}
 			want := scanned(x, costs, p, used, form, n, limit)
-			got := r.Best(nil, costs.Sheet(x.alphabet.AppendFolded(nil, form)), n, limit)
+			sheet := costs.Sheet(x.alphabet.AppendFolded(nil, form))
+			got := r.Best(nil, sheet, n, limit)
+			if random.IntN(3) == 0 {
+				margin := int32(random.IntN(8 << 10))
+				want = scanned(x, costs, p, used, form, n, math.MaxInt32)
+				want = slices.DeleteFunc(want, func(m Match) bool { return m.Total() > want[0].Total()+margin })
+				got = r.Near(got[:0], sheet, n, margin)
+			}
 			require.Equal(t, len(want), len(got), "%q", form)
 			for i := range want {
 				require.Equal(t, want[i], got[i], "%q, %d", form, i)

@@ -70,8 +70,12 @@ func (w *walk) follow(arc uint32, depth int, number uint32) {
 	head, child := w.trie.arcs[2*arc], w.trie.arcs[2*arc+1]
 	label := head >> labelBit
 	w.path[depth-1], w.symbols[depth] = w.toLetter[label], w.symbol[label]
+	from := n // the first cell that an edit may lead to
+	for d := max(depth-3, 0); d < depth; d++ {
+		from = min(from, w.fronts[d].from)
+	}
 	r := reach{
-		limit: w.bound(), floors: w.floors(arc), lost: w.losses.of(w.aheads[arc], n), ending: never, letters: n + depth,
+		limit: w.bound(), floors: w.floors(arc), lost: w.losses.of(w.aheads[arc], n, from), ending: never, letters: n + depth,
 	}
 	if head&endsWord != 0 {
 		r.ending = w.listed(number, depth)

@@ -123,13 +123,21 @@ type chances struct {
 	insert, one int32
 }
 
+// long is an edit of several letters.
+type long struct {
+	i, n  int
+	price int32
+	to    [3]uint8 // symbols
+}
+
 // chances returns what letters may do after the front at a depth, which had reach r.
 func (b *best) chances(depth int, r *reach) chances {
 	n := len(b.form)
 	c := chances{0, -never, -never}
 	f := &b.fronts[depth]
 	for i := f.from; i < f.to; i++ {
-		rest := r.limit - r.floor(i) - f.cells[i]
+		// lost may count one letter as inserted that is the one to come.
+		rest := r.limit - r.floor(i) - f.cells[i] + b.losses.leastInsert
 		c.insert = max(c.insert, rest-r.lost[i])
 		if i < n {
 			c.next |= 1 << b.losses.symbols[i]
@@ -147,16 +155,14 @@ func (b *best) chances(depth int, r *reach) chances {
 			}
 		}
 	}
-	long := b.sheet.Long()
-	for k := range long {
-		e := &long[k]
-		to := e.Symbols()
-		for read := 0; read < e.N && read <= depth; read++ {
-			if read > 0 && to[read-1] != b.symbols[depth] || read > 1 && to[0] != b.symbols[depth-1] {
+	for k := range b.longs {
+		e := &b.longs[k]
+		for read := 0; read < e.n && read <= depth; read++ {
+			if read > 0 && e.to[read-1] != b.symbols[depth] || read > 1 && e.to[0] != b.symbols[depth-1] {
 				continue
 			}
-			if v := b.fronts[depth-read].at(e.I); v < never && v+e.Price <= r.limit {
-				c.next |= 1 << to[read]
+			if v := b.fronts[depth-read].at(e.i); v < never && v+e.price <= r.limit {
+				c.next |= 1 << e.to[read]
 			}
 		}
 	}
