@@ -13,14 +13,14 @@ import (
 // branch early.
 //
 // A grade is all that a weight may look at of a word: its level in each variety,
-// whether it is a name or an abbreviation, and whether it is barred. Attributes
+// whether it is a name, an abbreviation or nothing but that, and whether it is barred. Attributes
 // of the same grade differ in kind, note, what stands instead, or in the
 // categories and classes that come to the same. Sets of grades are numbered: set
 // s has the members from ends[s-1] (0 for the first) up to ends[s], in ascending
 // order. Set 0 has all grades of the list.
 //
-// To use them, weigh each grade once (graded gives a word of it), have the least
-// weight of each set worked out (floors), and look it up by below or listed. The automaton is minimal whatever
+// To use them, weigh each grade once (graded gives a word of it), work out the least
+// weight of each set, and look it up by below or listed (see weights). The automaton is minimal whatever
 // its words are like, so that below covers all words that share a node, whichever
 // way leads there. The words below a node are also numbered in one run: what is
 // the least in a run of listed is the least for one path alone.
@@ -44,12 +44,13 @@ type grade struct {
 	levels             [len(varieties)]uint8 // by variety, 0 where it lacks the word
 	sources            bool
 	name, abbreviation bool
+	only               bool // an abbreviation and nothing else
 	barred             bool
 }
 
 func (a *attribute) grade() grade {
 	w := a.word("", Base)
-	g := grade{sources: len(w.Sources) > 0, name: w.IsName(), abbreviation: w.abbreviation(), barred: w.Barred}
+	g := grade{sources: len(w.Sources) > 0, name: w.IsName(), abbreviation: w.abbreviation(), only: w.IsAbbreviation(), barred: w.Barred}
 	for v := range g.levels {
 		if level, ok := w.Level(Variety(v)); ok {
 			g.levels[v] = uint8(level)
@@ -152,7 +153,7 @@ func (s *gradeSets) number(set []uint64) uint16 {
 }
 
 // check makes sure that the sets have members that exist. That below and listed
-// name sets that exist is for floors to see.
+// name sets that exist is for set to see.
 func (m *marks) check() error {
 	from := uint32(0)
 	for _, end := range m.ends {
@@ -172,29 +173,15 @@ func (m *marks) check() error {
 	return nil
 }
 
-// floors are the least weights of the sets of a list by their numbers.
-type floors []int32
-
-// floors returns the least of weights, which has one for each grade, in each set;
-// math.MaxInt32 for a set without members.
-func (m *marks) floors(weights []int32) floors {
-	f := make(floors, len(m.ends))
+// set returns the grades of set s. A set that does not exist, as in damaged data,
+// has those of all words.
+func (m *marks) set(s uint16) []uint16 {
+	if int(s) >= len(m.ends) {
+		s = 0
+	}
 	from := uint32(0)
-	for s, end := range m.ends {
-		least := int32(math.MaxInt32)
-		for _, g := range m.members[from:end] {
-			least = min(least, weights[g])
-		}
-		f[s], from = least, end
+	if s > 0 {
+		from = m.ends[s-1]
 	}
-	return f
-}
-
-// of returns the floor of set s. A set that does not exist, as in damaged data,
-// has the floor of all words.
-func (f floors) of(s uint16) int32 {
-	if int(s) < len(f) {
-		return f[s]
-	}
-	return f[0]
+	return m.members[from:m.ends[s]]
 }

@@ -61,8 +61,14 @@ func TestFloorsAreTheLeastOfWhatIsBelow(t *testing.T) {
 		for g := range weights {
 			weights[g] = int32(random.IntN(1000))
 		}
-		f := l.floors(weights)
-		assert.Equal(t, slices.Min(weights), f.of(0))
+		floor := func(s uint16) int32 {
+			least := int32(math.MaxInt32)
+			for _, g := range l.set(s) {
+				least = min(least, weights[g])
+			}
+			return least
+		}
+		assert.Equal(t, slices.Min(weights), floor(0))
 		least := make([]int32, len(l.trie.skips)) // by the first arc of a node
 		for i := range least {
 			least[i] = math.MaxInt32
@@ -72,7 +78,7 @@ func TestFloorsAreTheLeastOfWhatIsBelow(t *testing.T) {
 			for a := range l.indexes(uint32(n)) {
 				own = min(own, weights[l.gradeOf[a]])
 			}
-			require.Equal(t, own, f.of(l.listed[n]))
+			require.Equal(t, own, floor(l.listed[n]))
 			for node, i := l.trie.root, 0; i < len(labels); i++ {
 				least[node] = min(least[node], own)
 				arc, ok := l.trie.arc(node, labels[i])
@@ -81,7 +87,7 @@ func TestFloorsAreTheLeastOfWhatIsBelow(t *testing.T) {
 			}
 		}
 		for i, s := range l.below {
-			require.Equal(t, least[l.trie.arcs[2*i+1]], f.of(s))
+			require.Equal(t, least[l.trie.arcs[2*i+1]], floor(s))
 		}
 	}
 }
@@ -101,6 +107,7 @@ func TestAttributesOfAGradeAreAlike(t *testing.T) {
 		assert.Equal(t, own.IsName(), graded.IsName())
 		assert.Equal(t, own.Barred, graded.Barred)
 		assert.Equal(t, own.abbreviation(), graded.abbreviation())
+		assert.Equal(t, own.IsAbbreviation(), graded.IsAbbreviation())
 	}
 }
 
@@ -118,11 +125,13 @@ func TestSetsLeftOverHaveEveryGrade(t *testing.T) {
 		}
 	}
 	require.NoError(t, m.check())
-	assert.Equal(t, int32(0), m.floors(make([]int32, 17)).of(0))
+	assert.Len(t, m.set(0), 17)
 }
 
-func TestFloorOfASetThatDoesNotExistIsThatOfAll(t *testing.T) {
-	assert.Equal(t, int32(7), floors{7, 9}.of(2))
+func TestASetThatDoesNotExistIsThatOfAll(t *testing.T) {
+	m := marks{ends: []uint32{2, 3}, members: []uint16{7, 9, 9}}
+	assert.Equal(t, []uint16{7, 9}, m.set(2))
+	assert.Equal(t, []uint16{9}, m.set(1))
 }
 
 func TestReversedAutomatonHasTheWordsFromTheirEnds(t *testing.T) {

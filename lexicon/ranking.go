@@ -138,13 +138,11 @@ func (x *Lexicon) weigh(y *layer, which Layer, p Prior) *weights {
 	w.kinds = make([]uint16, len(y.ends))
 	kinds := map[uint64]uint16{}
 	var members []uint64
-	from := uint32(0)
-	for s, end := range y.ends {
+	for s := range y.ends {
 		var set uint64
-		for _, g := range y.members[from:end] {
+		for _, g := range y.set(uint16(s)) {
 			set |= kindOf[g]
 		}
-		from = end
 		kind, ok := kinds[set]
 		if !ok {
 			kind = uint16(len(members))
@@ -197,15 +195,8 @@ func (w *weights) floorsOf(set uint16) []int32 {
 // least returns the least price of the words of so many letters in a set of
 // grades.
 func (w *weights) least(set uint16, letters int) int32 {
-	if int(set) >= len(w.sets.ends) {
-		return 0
-	}
-	from := uint32(0)
-	if set > 0 {
-		from = w.sets.ends[set-1]
-	}
 	least := never
-	for _, g := range w.sets.members[from:w.sets.ends[set]] {
+	for _, g := range w.sets.set(set) {
 		least = min(least, w.price(g, letters))
 	}
 	return least

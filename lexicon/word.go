@@ -110,6 +110,16 @@ func (w Word) IsName() bool {
 	return len(w.Sources) > 0
 }
 
+// IsAbbreviation reports a word that every source has as an abbreviation.
+func (w Word) IsAbbreviation() bool {
+	for _, s := range w.Sources {
+		if s.Class != "abbreviations" {
+			return false
+		}
+	}
+	return len(w.Sources) > 0
+}
+
 // sourceVarieties returns the varieties that have a word with such sources.
 func sourceVarieties(sources []Source) varietySet {
 	if len(sources) == 0 {

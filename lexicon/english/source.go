@@ -11,5 +11,5 @@ const (
 	Words   = 137446 // written forms
 
 	// SHA256 is the checksum of english.lexicon.
-	SHA256 = "65af8ba8415e5020b9f9f57b81ba295727b03dbcfc02ee76baf089e39e738de9"
+	SHA256 = "935abdd3cf513a091c76e4006b8dc54e072ae1704964125d555219c27d882f03"
 )
