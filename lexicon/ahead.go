@@ -6,7 +6,7 @@ import (
 	"emendary/align"
 )
 
-// ahead is what is known of the letters of the words below an arc, as sets of
+// ahead is what is known of the letters of the words below a node, as sets of
 // symbols ([align.Symbol]), a bit each: those that some word has there, and those
 // that all have; and how many letters the shortest and the longest has there.
 type ahead struct {
@@ -14,34 +14,32 @@ type ahead struct {
 	shortest, longest uint8
 }
 
-// lookAhead returns what is ahead of each arc of a trie over labels with these
-// symbols. It takes O(arcs).
+// lookAhead returns what is ahead at each node of a trie, by its first arc, over
+// labels with these symbols. It takes O(arcs).
 func lookAhead(t *trie, symbols []uint8) []ahead {
-	arcs := make([]ahead, len(t.skips))
-	nodes := make([]ahead, len(t.skips)) // by first arc
+	nodes := make([]ahead, len(t.skips))
 	first := uint32(1)
-	for arc := uint32(1); int(arc) < len(arcs); arc++ {
-		head, child := t.arcs[2*arc], t.arcs[2*arc+1]
-		arcs[arc] = nodes[child] // nodes stand after those they lead to
+	for arc := uint32(1); int(arc) < len(nodes); arc++ {
+		head, child := t.arcs[2*arc], &nodes[t.arcs[2*arc+1]] // nodes stand after those they lead to
 		own := uint32(1) << (symbols[head>>labelBit] & 31)
 		all, shortest := own, uint8(1)
 		if head&endsWord == 0 {
-			all |= arcs[arc].all
-			shortest += arcs[arc].shortest
+			all |= child.all
+			shortest += child.shortest
 		}
 		node := &nodes[first]
 		if arc == first {
 			node.all, node.shortest = all, shortest
 		}
-		node.shortest = min(node.shortest, shortest)
-		node.longest = max(node.longest, 1+arcs[arc].longest)
 		node.all &= all
-		node.some |= own | arcs[arc].some
+		node.some |= own | child.some
+		node.shortest = min(node.shortest, shortest)
+		node.longest = max(node.longest, 1+child.longest)
 		if head&lastArc != 0 {
 			first = arc + 1
 		}
 	}
-	return arcs
+	return nodes
 }
 
 // losses bounds what is still to be paid where what is ahead does not fit what is
@@ -136,9 +134,9 @@ func (l *losses) reset(sheet *align.Sheet, least *align.Least) {
 	}
 }
 
-// of returns by cell what is still to be paid at least for words with a ahead,
+// of returns by cell what is still to be paid at least for words with that ahead,
 // for a form of n letters, from cell from on.
-func (l *losses) of(a ahead, n, from int) []int32 {
+func (l *losses) of(a *ahead, n, from int) []int32 {
 	missing, wanted := l.form&^a.some, a.all
 	var lost, parts, gained int32
 	for rest := wanted; rest != 0; rest &= rest - 1 {

@@ -35,7 +35,7 @@ type walk struct {
 	trie     *trie
 	toLetter []align.Letter // by label
 	symbol   []uint8        // by label
-	aheads   []ahead        // by arc
+	aheads   []ahead        // by node
 	layer    *layer         // nil for own words
 	weights  *weights
 	same     [PriorLetters + 1]int32 // room for floors that do not differ
@@ -75,7 +75,7 @@ func (w *walk) follow(arc uint32, depth int, number uint32) {
 		from = min(from, w.fronts[d].from)
 	}
 	r := reach{
-		limit: w.bound(), floors: w.floors(arc), lost: w.losses.of(w.aheads[arc], n, from), ending: never, letters: n + depth,
+		limit: w.bound(), floors: w.floors(arc), lost: w.losses.of(&w.aheads[child], n, from), ending: never, letters: n + depth,
 	}
 	if head&endsWord != 0 {
 		r.ending = w.listed(number, depth)
@@ -92,7 +92,7 @@ func (w *walk) follow(arc uint32, depth int, number uint32) {
 	}
 	c := w.chances(depth, &r)
 	if c.next != 0 || c.insert > -perLetter || c.one > 0 {
-		c.next |= w.aheads[arc].all // what is still to be paid counts these in
+		c.next |= w.aheads[child].all // what is still to be paid counts these in
 		w.node(child, depth, number, c)
 	}
 }

@@ -14,7 +14,7 @@
 //     asked about), and [Lexicon.Attested] the variety that a manuscript is written
 //     in.
 //   - [Ranking] is a lexicon under a [Prior]; [Ranking.Best] gives the n words that
-//     cost least by edits and prior together, each a [Match].
+//     cost least by edits and prior together, [Ranking.Near] those near the best.
 //
 // The embedded English base lexicon is package emendary/lexicon/english.
 //

@@ -1,11 +1,13 @@
 package lexicon_test
 
 import (
+	"context"
 	"fmt"
 	"log"
 	"maps"
 	"strings"
 
+	"emendary/align"
 	"emendary/lexicon"
 	"emendary/lexicon/english"
 )
@@ -91,4 +93,23 @@ func ExampleList_AppendBinary() {
 	}
 	fmt.Println(lexicon.New(again, lexicon.AnyVariety).Find("Harbour").Status)
 	// Output: known
+}
+
+func ExampleRanking_Best() {
+	list, _ := lexicon.Load(strings.NewReader("harbour\nharbours\nharder\nlantern\n"), "words")
+	x := lexicon.New(list, lexicon.AnyVariety)
+	var pairs []align.Pair
+	for _, p := range [][2]string{{"clamer", "clamour"}, {"labors", "labours"}, {"adn", "and"}} {
+		pairs = append(pairs, align.Pair{Form: x.Alphabet().Letters(p[0]), Word: x.Alphabet().Letters(p[1]), Weight: 1})
+	}
+	costs, _ := align.Fit(context.Background(), pairs, align.Origin{}, nil)
+
+	tenBits := func(lexicon.Word, int, int) (int32, bool) { return 10 << 10, true }
+	r := x.Ranking(tenBits, nil)
+	for _, m := range r.Best(nil, costs.Sheet(x.Alphabet().Letters("harber")), 2, 1<<20) {
+		fmt.Println(m.Word.Text)
+	}
+	// Output:
+	// harbour
+	// harder
 }

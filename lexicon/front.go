@@ -157,11 +157,14 @@ func (b *best) chances(depth int, r *reach) chances {
 	}
 	for k := range b.longs {
 		e := &b.longs[k]
-		for read := 0; read < e.n && read <= depth; read++ {
-			if read > 0 && e.to[read-1] != b.symbols[depth] || read > 1 && e.to[0] != b.symbols[depth-1] {
+		if v := b.fronts[depth].at(e.i); v+e.price <= r.limit {
+			c.next |= 1 << e.to[0]
+		}
+		for read := 1; read < min(e.n, depth+1); read++ {
+			if e.to[read-1] != b.symbols[depth] || read > 1 && e.to[0] != b.symbols[depth-1] {
 				continue
 			}
-			if v := b.fronts[depth-read].at(e.i); v < never && v+e.price <= r.limit {
+			if v := b.fronts[depth-read].at(e.i); v+e.price <= r.limit {
 				c.next |= 1 << e.to[read]
 			}
 		}

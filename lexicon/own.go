@@ -16,7 +16,7 @@ type own struct {
 	trie     trie // not minimal: a node for each beginning
 	toLetter []align.Letter
 	symbols  []uint8
-	ahead    []ahead   // by arc
+	ahead    []ahead   // by node
 	words    []ownWord // by their letters
 	starts   []uint32  // by number in the trie: its first word; and where the last one's end
 	ends     []uint32  // by arc: the number of the word that ends on it

@@ -65,7 +65,7 @@ func (x *Lexicon) Ranking(p Prior, used iter.Seq2[string, int]) *Ranking {
 	}
 	for which, y := range c.layers {
 		if y != nil {
-			r.ahead[which] = lookAhead(&y.trie, y.symbols)
+			r.ahead[which] = y.ahead()
 		}
 	}
 	return r.WithPrior(p)
