@@ -54,7 +54,7 @@ type Ranking struct {
 // any number above 0 that p is to see for each; texts that are no known word are
 // passed over. It may be nil.
 //
-// It takes about a millisecond, and another millisecond for every thousand words
+// It takes some two milliseconds, and another two for every thousand words
 // used.
 func (x *Lexicon) Ranking(p Prior, used iter.Seq2[string, int]) *Ranking {
 	c := x.clone()
