@@ -38,12 +38,16 @@ func (r *Ranking) Near(dst []Match, sheet *align.Sheet, n int, margin int32) []M
 }
 
 func (r *Ranking) best(dst []Match, sheet *align.Sheet, n int, limit, margin int32) []Match {
+	b := r.scratch.Get().(*best)
+	defer r.scratch.Put(b)
+	return b.appendBest(dst, r, sheet, n, limit, margin)
+}
+
+func (b *best) appendBest(dst []Match, r *Ranking, sheet *align.Sheet, n int, limit, margin int32) []Match {
 	form := sheet.Form()
 	if n <= 0 || len(form) > maxBest {
 		return dst
 	}
-	b := r.scratch.Get().(*best)
-	defer r.scratch.Put(b)
 	b.Ranking, b.sheet, b.form, b.n = r, sheet, form, n
 	b.list, b.limit, b.margin = b.list[:0], min(limit, never-1), margin
 	b.sheet.Least(&b.least)

@@ -70,7 +70,7 @@ func cheapest(words []lexicon.Match, sheet *align.Sheet, limit int32) map[string
 // most.
 func TestBestOfTheBaseIsThatOfAScan(t *testing.T) {
 	pairs := misspelt(t)
-	costs, err := align.Fit(context.Background(), pairs, align.Origin{}, nil)
+	costs, err := align.Fit(context.Background(), pairs[:800], align.Origin{}, nil)
 	require.NoError(t, err)
 	x := lexicon.New(english.Base(), lexicon.AnyVariety)
 	r := x.Ranking(byLevel, nil)
@@ -109,24 +109,6 @@ func TestBestOfTheBaseIsThatOfAScan(t *testing.T) {
 		maps.DeleteFunc(want, func(_ string, m lexicon.Match) bool { return m.Total() == last.Total() && m.Word.Text > last.Word.Text })
 		require.Equal(t, want, best, "%c", form)
 	}
-}
-
-// Once the prices of some forms are known, a search allocates nothing.
-func TestBestAllocatesNothing(t *testing.T) {
-	pairs := misspelt(t)[:400]
-	costs, err := align.Fit(context.Background(), pairs, align.Origin{}, nil)
-	require.NoError(t, err)
-	r := lexicon.New(english.Base(), lexicon.American).Ranking(byLevel, nil)
-	sheet := new(align.Sheet)
-	var matches []lexicon.Match
-	search := func() {
-		for _, p := range pairs[:20] {
-			sheet.Reset(costs, p.Form)
-			matches = r.Near(matches[:0], sheet, 10, 8<<10)
-		}
-	}
-	search()
-	require.Less(t, testing.AllocsPerRun(5, search), 1.0)
 }
 
 func BenchmarkBest(b *testing.B) {

@@ -113,7 +113,7 @@ func randomPrior(random *rand.Rand, v Variety) Prior {
 func TestBestIsThatOfAScan(t *testing.T) {
 	costs := fitted(t, listedPairs(t, 7))
 	random := rand.New(rand.NewPCG(21, 22))
-	for range 300 {
+	for range 150 {
 		v := Variety(random.IntN(len(varieties)))
 		x := New(gradedList(t, random), v)
 		for which := Foreign; which <= Book; which++ {
@@ -164,4 +164,33 @@ func TestBestIsThatOfAScan(t *testing.T) {
 			}
 		}
 	}
+}
+
+// Once the prices of some forms are known, a search allocates nothing.
+func TestBestAllocatesNothing(t *testing.T) {
+	pairs := listedPairs(t, 20)
+	costs := fitted(t, pairs)
+	var words []Word
+	var forms [][]align.Letter
+	for _, p := range pairs {
+		words = append(words, Word{Text: p[1]})
+	}
+	list, err := NewList("intended", words)
+	require.NoError(t, err)
+	x := New(list, AnyVariety)
+	for _, p := range pairs[:20] {
+		forms = append(forms, x.alphabet.AppendFolded(nil, p[0]))
+	}
+	r := x.Ranking(func(Word, int, int) (int32, bool) { return 9 << 10, true }, nil)
+	b, sheet := new(best), new(align.Sheet)
+	var matches []Match
+	search := func() {
+		for _, form := range forms {
+			sheet.Reset(costs, form)
+			matches = b.appendBest(matches[:0], r, sheet, 10, never, never)
+		}
+	}
+	search()
+	require.Len(t, matches, 10)
+	require.Zero(t, testing.AllocsPerRun(3, search))
 }
