@@ -39,7 +39,7 @@ import (
 // is left out, so that files differ only where costs do.
 const costsHead = "emendary costs 1"
 
-// writing names sides and positions in a file.
+// sideNames and positionNames are what a file calls sides and positions.
 var (
 	sideNames     = [sides]string{"letter", "gap"}
 	positionNames = [positions]string{"start", "middle", "end"}

@@ -30,7 +30,6 @@ type Fitted struct {
 	kinds    [sides][positions][kinds]float64 // probabilities of the kinds where something goes wrong
 	swaps    [positions]float64               // probabilities of a transposition
 	chances  *chances
-	author   *chances                // of one author's own slips, or nil
 	long     map[longEdit]int32      // in grains
 	longFrom map[stretch][]longPrice // the same, by the letters of the form
 }
@@ -64,17 +63,15 @@ type chances struct {
 	left   [sides][symbols][symbols]ratio // letter before, letter
 	spots  []ratio                        // by index
 	// What was written, likewise; the rows of the finer levels are found by index.
-	letterSlips  [sides][symbols][symbols]float64
-	leftRow      [sides][symbols][symbols]uint16
-	spotRow      []uint16
-	rows         [][symbols]float64 // row 0 is empty
-	met, swapped map[stretch]float64
+	letterSlips [sides][symbols][symbols]float64
+	leftRow     [sides][symbols][symbols]uint16
+	spotRow     []uint16
+	rows        [][symbols]float64 // row 0 is empty
 }
 
 func chancesOf(t *tally) *chances {
 	c := &chances{
 		spots: make([]ratio, 1<<16), spotRow: make([]uint16, 1<<16), rows: make([][symbols]float64, 1, 1+2*len(t.slips)),
-		met: t.met, swapped: t.swapped,
 	}
 	add := func(r *ratio, q ratio) { r.met, r.wrong = r.met+q.met, r.wrong+q.wrong }
 	for i, r := range t.spots {
@@ -112,10 +109,6 @@ func (f *Fitted) wrong(s spot, p position) float64 {
 	q = f.chances.letter[side][s.letter].blend(q, by[0])
 	q = f.chances.left[side][s.left][s.letter].blend(q, by[1])
 	q = f.chances.spots[s.index()].blend(q, by[2])
-	if f.author != nil {
-		q = f.author.letter[side][s.letter].blend(q, authorMet)
-		q = f.author.spots[s.index()].blend(q, authorMet)
-	}
 	return q
 }
 
@@ -128,18 +121,8 @@ func (f *Fitted) written(s spot, p position, letter symbol) float64 {
 	q = ratio{f.chances.letter[side][s.letter].wrong, f.chances.letterSlips[side][s.letter][letter]}.blend(q, by[0])
 	q = ratio{f.chances.left[side][s.left][s.letter].wrong, f.chances.rows[f.chances.leftRow[side][s.left][s.letter]][letter]}.blend(q, by[1])
 	q = ratio{f.chances.spots[s.index()].wrong, f.chances.rows[f.chances.spotRow[s.index()]][letter]}.blend(q, by[2])
-	if f.author != nil {
-		q = ratio{f.author.letter[side][s.letter].wrong, f.author.letterSlips[side][s.letter][letter]}.blend(q, authorWrong)
-		q = ratio{f.author.spots[s.index()].wrong, f.author.rows[f.author.spotRow[s.index()]][letter]}.blend(q, authorWrong)
-	}
 	return q
 }
-
-// How many meetings and slips the base costs count for against one author's own.
-const (
-	authorMet   = 60
-	authorWrong = 6
-)
 
 // price turns a probability into grains; it is at least one grain, so that no
 // path is free, and at most what no alignment of words comes to.
@@ -160,11 +143,7 @@ func (f *Fitted) slipped(s spot, p position, letter symbol) int32 {
 
 // swap prices the transposition of the letters to, as the word has them.
 func (f *Fitted) swap(to stretch, p position) int32 {
-	q := ratio{f.chances.met[to], f.chances.swapped[to]}.blend(f.swaps[p], f.smooth.swap)
-	if f.author != nil {
-		q = ratio{f.author.met[to], f.author.swapped[to]}.blend(q, authorMet)
-	}
-	return price(q)
+	return price(ratio{f.tally.met[to], f.tally.swapped[to]}.blend(f.swaps[p], f.smooth.swap))
 }
 
 // newFitted works out the probabilities that a tally gives.

@@ -54,8 +54,8 @@ func (s *Sheet) Least(l *Least) {
 		l.One[c], l.Insert[c], l.Twice[c] = one, insert, twice
 	}
 	for _, e := range s.long {
-		if e.M != e.N {
-			l.Shift = min(l.Shift, e.Price/int32(max(e.M-e.N, e.N-e.M)))
+		if shift := e.Shift(); shift > 0 {
+			l.Shift = min(l.Shift, e.Price/int32(shift))
 		}
 	}
 }

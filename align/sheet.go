@@ -222,6 +222,9 @@ func (e *LongEdit) Yields(letters []Letter) bool {
 	return true
 }
 
+// Shift returns by how many letters e makes a word longer or shorter than the form.
+func (e *LongEdit) Shift() int { return max(e.M-e.N, e.N-e.M) }
+
 // Symbols returns the symbols ([Symbol]) of the letters that e yields.
 func (e *LongEdit) Symbols() [3]uint8 {
 	return [3]uint8{uint8(e.to[0]), uint8(e.to[1]), uint8(e.to[2])}

@@ -94,7 +94,7 @@ func (l *losses) reset(sheet *align.Sheet, least *align.Least) {
 		l.gain[c] = max(0, min(l.insert[c], l.twice[c], l.one[c]))
 	}
 	for _, e := range sheet.Long() {
-		price := max(0, e.Price-int32(max(e.M-e.N, e.N-e.M))*perLetter)
+		price := max(0, e.Price-int32(e.Shift())*perLetter)
 		for i := e.I; i < e.I+e.M; i++ {
 			l.lose[i] = min(l.lose[i], price/int32(e.M))
 		}
@@ -127,7 +127,7 @@ func (l *losses) reset(sheet *align.Sheet, least *align.Least) {
 		}
 	}
 	for _, e := range sheet.Long() {
-		price := max(0, e.Price-int32(max(e.M-e.N, e.N-e.M))*perLetter)
+		price := max(0, e.Price-int32(e.Shift())*perLetter)
 		for i := e.I; i < e.I+e.M; i++ {
 			l.part[i] = min(l.part[i], price/int32(2*e.M))
 		}
