@@ -13,17 +13,18 @@ import (
 // branch early.
 //
 // A grade is all that a weight may look at of a word: its level in each variety,
-// whether it is a name, an abbreviation or nothing but that, and whether it is barred. Attributes
-// of the same grade differ in kind, note, what stands instead, or in the
-// categories and classes that come to the same. Sets of grades are numbered: set
-// s has the members from ends[s-1] (0 for the first) up to ends[s], in ascending
-// order. Set 0 has all grades of the list.
+// whether it is a name, an abbreviation or nothing but that, and whether it is
+// barred. Attributes of the same grade differ in kind, note, what stands instead,
+// or in the categories and classes that come to the same. Sets of grades are
+// numbered: set s has the members from ends[s-1] (0 for the first) up to ends[s],
+// in ascending order. Set 0 has all grades of the list.
 //
-// To use them, weigh each grade once (graded gives a word of it), work out the least
-// weight of each set, and look it up by below or listed (see weights). The automaton is minimal whatever
-// its words are like, so that below covers all words that share a node, whichever
-// way leads there. The words below a node are also numbered in one run: what is
-// the least in a run of listed is the least for one path alone.
+// To use them, weigh each grade once (graded gives a word of it), work out the
+// least weight of each set, and look it up by below or listed (see weights). The
+// automaton is minimal whatever its words are like, so that below covers all words
+// that share a node, whichever way leads there. The words below a node are also
+// numbered in one run: what is the least in a run of listed is the least for one
+// path alone.
 type marks struct {
 	gradeOf []uint16 // by attribute
 	grades  []int    // by grade: its first attribute

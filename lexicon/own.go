@@ -107,16 +107,23 @@ func (x *Lexicon) known(letters []align.Letter, yield func(entry)) {
 		if !ok {
 			continue
 		}
-		r := y.record(number)
-		for range r.number() {
-			e := entry{Layer(which), number, r.number(), r.text()}
-			if r.short || e.attribute >= len(y.attributes) {
-				break
-			}
-			a := &y.attributes[e.attribute]
-			if !a.barred && a.varieties.has(x.variety) && (!hidden || x.stands(e.text, e.which)) {
-				yield(e)
-			}
+		x.knownForms(Layer(which), number, hidden, yield)
+	}
+}
+
+// knownForms yields the known written forms of a word of a layer. hidden says that
+// a higher layer may have a say in it.
+func (x *Lexicon) knownForms(which Layer, number uint32, hidden bool, yield func(entry)) {
+	y := x.layers[which]
+	r := y.record(number)
+	for range r.number() {
+		e := entry{which, number, r.number(), r.text()}
+		if r.short || e.attribute >= len(y.attributes) {
+			return
+		}
+		a := &y.attributes[e.attribute]
+		if !a.barred && a.varieties.has(x.variety) && (!hidden || x.stands(e.text, which)) {
+			yield(e)
 		}
 	}
 }

@@ -178,7 +178,7 @@ func (w *weights) price(g uint16, letters int) int32 {
 }
 
 // perLetter is what a word is taken to cost at least for each letter that it is
-// longer or shorter than foretold, a bit: see reach.
+// longer or shorter than foretold, half a bit: see reach.
 const perLetter = 1 << 9
 
 // floorsOf returns the floors of the words in the set of grades with that number,

@@ -87,22 +87,12 @@ func (x *Lexicon) gather(near []Near, s *search, y *layer, which Layer) []Near {
 				s.letters = append(s.letters, y.toLetter[label])
 			}
 			hidden := covered && x.above(which, s.letters)
-			r := y.record(h.number)
-			for range r.number() {
-				a := r.number()
-				text := r.text()
-				if r.short || a >= len(y.attributes) {
-					break
-				}
-				attribute := &y.attributes[a]
-				if attribute.barred || !attribute.varieties.has(x.variety) || hidden && !x.stands(text, which) {
-					continue
-				}
+			x.knownForms(which, h.number, hidden, func(e entry) {
 				n := len(near)
 				near = slices.Grow(near, 1)[:n+1]
 				letters := append(room.of(near[n].Letters, len(s.letters)), s.letters...)
-				near[n] = Near{Word: attribute.word(text, which), Letters: letters, Distance: d}
-			}
+				near[n] = Near{Word: x.word(e), Letters: letters, Distance: d}
+			})
 		}
 	}
 	return near

@@ -69,7 +69,7 @@ func (m Model) Prior(word lexicon.Word, v lexicon.Variety, count, size int) floa
 	p := math.Exp2(-lexiconBits(word, v))
 	p = (float64(count) + m.Smoothing*p) / (float64(size) + m.Smoothing)
 	bits := -math.Log2(p)
-	if abbreviation(word) {
+	if word.IsAbbreviation() {
 		bits += m.Abbreviation
 	}
 	return bits
@@ -89,15 +89,6 @@ func lexiconBits(word lexicon.Word, v lexicon.Variety) float64 {
 		}
 	}
 	return levelBits[len(levelBits)-1].bits
-}
-
-func abbreviation(word lexicon.Word) bool {
-	for _, s := range word.Sources {
-		if s.Class != "abbreviations" {
-			return false
-		}
-	}
-	return len(word.Sources) > 0
 }
 
 // Shares turns the bits of all candidates of a form into their shares: the

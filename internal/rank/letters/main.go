@@ -9,7 +9,6 @@ import (
 	"os"
 	"path/filepath"
 
-	"emendary/lexicon"
 	"emendary/lexicon/english"
 )
 
@@ -30,7 +29,7 @@ func generate(out string) error {
 		case w.IsName():
 			names.add(w.Text)
 			named++
-		case !abbreviated(w):
+		case !w.IsAbbreviation(): // those are not spelled as words are
 			words.add(w.Text)
 			spelled++
 		}
@@ -45,17 +44,6 @@ func generate(out string) error {
 		}
 	}
 	return nil
-}
-
-// abbreviated reports whether w is listed as an abbreviation only: those are not
-// spelled as words are.
-func abbreviated(w lexicon.Word) bool {
-	for _, s := range w.Sources {
-		if s.Class != "abbreviations" {
-			return false
-		}
-	}
-	return true
 }
 
 func source(words, names int) []byte {
