@@ -34,12 +34,7 @@ type weighed struct {
 func (m *Model) weigh() []tea.Cmd {
 	w := &m.weighing
 	if !w.begun {
-		w.begun, w.slips = true, make(map[*docket.Entry]float64)
-		for _, e := range m.docket.Entries {
-			if e.Open() && e.Kind != docket.WordInContext {
-				w.left = append(w.left, e)
-			}
-		}
+		w.begun, w.slips, w.left = true, make(map[*docket.Entry]float64), m.docket.Due()
 	}
 	var cmds []tea.Cmd
 	for len(w.left) > 0 && m.running < runtime.GOMAXPROCS(0) {

@@ -89,7 +89,7 @@ func (p *program) docket(ctx context.Context, d *desk, manuscript, format string
 	if order != docket.BySlip {
 		s.Docket.Reorder(order, nil)
 	}
-	open := openEntries(s.Docket)
+	open := s.Docket.Due()
 	if len(open) == 0 {
 		p.notef("%s: nothing is open", manuscript)
 	}
@@ -132,7 +132,7 @@ func (p *program) docket(ctx context.Context, d *desk, manuscript, format string
 	m.clear()
 	s.Docket.TakeSlips(slips)
 	s.Docket.Reorder(order, nil)
-	for _, e := range openEntries(s.Docket) {
+	for _, e := range s.Docket.Due() {
 		if err := list(all[e]); err != nil {
 			return err
 		}
@@ -152,15 +152,4 @@ func (w weighedEntry) listed(d *docket.Docket) listed {
 		Form: w.entry.Form, Kind: w.entry.Kind, Slip: rounded(w.slip),
 		Candidates: w.candidates, Places: listPlaces(d, w.entry),
 	}
-}
-
-// openEntries returns what is to be ruled on, in the docket's order.
-func openEntries(d *docket.Docket) []*docket.Entry {
-	var open []*docket.Entry
-	for _, e := range d.Entries {
-		if e.Open() && e.Kind != docket.WordInContext {
-			open = append(open, e)
-		}
-	}
-	return open
 }

@@ -32,9 +32,9 @@ func ReadTruth(r io.Reader, name string) (Truth, error) {
 		if n == 1 && form == "form" {
 			return nil
 		}
-		k := key(form)
+		k := docket.Key(form)
 		for _, word := range strings.Split(intended, ",") {
-			if word = key(strings.TrimSpace(word)); word != "" && !slices.Contains(truth[k], word) {
+			if word = docket.Key(strings.TrimSpace(word)); word != "" && !slices.Contains(truth[k], word) {
 				truth[k] = append(truth[k], word)
 			}
 		}
@@ -51,7 +51,7 @@ func ReadForms(r io.Reader, name string) (map[string]bool, error) {
 	forms := map[string]bool{}
 	err := eachLine(r, name, func(_ int, line string) error {
 		form, _, _ := strings.Cut(line, "\t")
-		forms[key(form)] = true
+		forms[docket.Key(form)] = true
 		return nil
 	})
 	return forms, err
@@ -78,11 +78,6 @@ func eachLine(r io.Reader, name string, do func(n int, line string) error) error
 		return fmt.Errorf("%s: line %d: %w", name, n+1, err)
 	}
 	return nil
-}
-
-// key is what spellings of one form have in common.
-func key(form string) string {
-	return strings.ToLower(strings.ReplaceAll(form, "’", "'"))
 }
 
 // Manuscript is how a docket deals with the errors planted in its manuscript.
@@ -123,12 +118,10 @@ type Judged struct {
 // aside: their candidates, and whether they were planted. They come in the order
 // of review.
 func Judge(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]bool) (judged []Judged, left int, err error) {
-	for _, e := range d.Entries {
-		switch {
-		case !e.Open() || e.Kind == docket.WordInContext:
-		case aside[key(e.Form)]:
+	for _, e := range d.Due() {
+		if aside[docket.Key(e.Form)] {
 			left++
-		default:
+		} else {
 			judged = append(judged, Judged{Entry: e, Planted: planted(e, truth)})
 		}
 	}
@@ -155,17 +148,17 @@ func Judge(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]
 // planted returns the key under which truth has e: its form, as it stands
 // somewhere, or a member of a compound.
 func planted(e *docket.Entry, truth Truth) string {
-	if k := key(e.Form); truth[k] != nil {
+	if k := docket.Key(e.Form); truth[k] != nil {
 		return k
 	}
 	for _, o := range e.Occurrences {
 		for _, text := range []string{o.Text, o.Lead + o.Text + o.Tail} {
-			if k := key(text); truth[k] != nil {
+			if k := docket.Key(text); truth[k] != nil {
 				return k
 			}
 		}
 	}
-	for _, member := range strings.Split(key(e.Form), "-") {
+	for _, member := range strings.Split(docket.Key(e.Form), "-") {
 		if truth[member] != nil {
 			return member
 		}
@@ -182,11 +175,13 @@ func AssayManuscript(ctx context.Context, d *docket.Docket, truth Truth, aside m
 		return Manuscript{}, err
 	}
 	m := Manuscript{N: len(truth), Words: d.Size(), Entries: len(judged), SetAside: left}
+	exact, provisional := make([]float64, len(judged)), make([]float64, len(judged))
 	right := map[string]bool{} // by key of the planted forms found: all its entries come right
-	for _, j := range judged {
+	for i, j := range judged {
+		exact[i], provisional[i] = d.SlipGiven(j.Entry, j.Candidates), d.Slip(j.Entry)
 		if j.Planted == "" {
 			m.FalseAlarms++
-			if d.SlipGiven(j.Entry, j.Candidates) >= 0.5 {
+			if exact[i] >= 0.5 {
 				m.LikelyFalseAlarms++
 			}
 			continue
@@ -216,8 +211,8 @@ func AssayManuscript(ctx context.Context, d *docket.Docket, truth Truth, aside m
 	thousands := float64(max(m.Words, 1)) / 1000
 	m.FalseAlarms /= thousands
 	m.LikelyFalseAlarms /= thousands
-	m.AveragePrecision = inOrder(judged, len(m.Missed), func(j Judged) float64 { return d.SlipGiven(j.Entry, j.Candidates) })
-	m.Provisional = inOrder(judged, len(m.Missed), func(j Judged) float64 { return d.Slip(j.Entry) })
+	m.AveragePrecision = inOrder(judged, exact, len(m.Missed))
+	m.Provisional = inOrder(judged, provisional, len(m.Missed))
 	return m, nil
 }
 
@@ -227,24 +222,25 @@ func firstIsRight(j Judged, intended []string) bool {
 	if len(j.Candidates) == 0 {
 		return false
 	}
-	got := key(j.Candidates[0].Text)
+	got := docket.Key(j.Candidates[0].Text)
 	for _, word := range intended {
-		if got == word || got == strings.Replace(key(j.Entry.Form), j.Planted, word, 1) {
+		if got == word || got == strings.Replace(docket.Key(j.Entry.Form), j.Planted, word, 1) {
 			return true
 		}
 	}
 	return false
 }
 
-// inOrder returns the average precision of the order by slip, most likely first.
-func inOrder(judged []Judged, missed int, slip func(Judged) float64) float64 {
+// inOrder returns the average precision of the order by their probabilities of
+// being a slip, most likely first.
+func inOrder(judged []Judged, slips []float64, missed int) float64 {
 	type ranked struct {
 		slip    float64
 		planted bool
 	}
 	order := make([]ranked, len(judged))
 	for i, j := range judged {
-		order[i] = ranked{slip(j), j.Planted != ""}
+		order[i] = ranked{slips[i], j.Planted != ""}
 	}
 	slices.SortStableFunc(order, func(a, b ranked) int { return -cmp.Compare(a.slip, b.slip) })
 	relevant := make([]bool, len(order))

@@ -72,7 +72,7 @@ func (c *census) counts() iter.Seq2[string, int] {
 // entries makes the docket's entries, by first place. The words of a passage are
 // in no other entry, unless it is unfolded.
 func (d *Docket) entries() []*Entry {
-	verdicts := d.verdicts(d.base)
+	verdicts := d.verdicts()
 	var out []*Entry
 	folded := map[place]bool{}
 	for _, r := range d.passages(d.unknownForms(verdicts)) {
@@ -88,7 +88,7 @@ func (d *Docket) entries() []*Entry {
 	for f, v := range verdicts {
 		for _, p := range f.places {
 			if w := d.word(p); asked(w) && !folded[p] {
-				groups[key(f.text)] = append(groups[key(f.text)], &pending{d.occurrence(p), w.Traits, v})
+				groups[Key(f.text)] = append(groups[Key(f.text)], &pending{d.occurrence(p), w.Traits, v})
 			}
 		}
 	}

@@ -63,7 +63,7 @@ func (s search) candidates(ctx context.Context, form string, kind Kind, instead 
 	// Of words that differ in capitals or apostrophes alone, the likeliest is enough.
 	found := map[string]weighed{}
 	add := func(w weighed) {
-		k := key(w.Text)
+		k := Key(w.Text)
 		if old, ok := found[k]; w.Text != form && (!ok || w.bits < old.bits) {
 			found[k] = w
 		}
@@ -122,7 +122,7 @@ func (s search) words(form string, kind Kind, add func(weighed)) {
 // weigh prices word as a candidate that stands as text.
 func (s search) weigh(form string, word lexicon.Word, distance int, kind Kind, text string) weighed {
 	v := s.lex.Variety()
-	bits := s.model.Edit*float64(distance) + s.model.Prior(word, v, s.use[key(word.Text)], s.size)
+	bits := s.model.Edit*float64(distance) + s.model.Prior(word, v, s.use[Key(word.Text)], s.size)
 	bits += s.model.Letter*float64(unshared(form, word.Text)) + s.first(form, word.Text)
 	if capitalsOf(form) == lower && capitalsOf(word.Text) != lower {
 		bits += s.model.Capital
@@ -148,8 +148,8 @@ func (s search) weigh(form string, word lexicon.Word, distance int, kind Kind, t
 
 // first is what a first letter that differs costs.
 func (s search) first(form, word string) float64 {
-	a, _ := utf8.DecodeRuneInString(key(form))
-	b, _ := utf8.DecodeRuneInString(key(word))
+	a, _ := utf8.DecodeRuneInString(Key(form))
+	b, _ := utf8.DecodeRuneInString(Key(word))
 	if a == b {
 		return 0
 	}
@@ -159,10 +159,10 @@ func (s search) first(form, word string) float64 {
 // unshared counts the letters that one of two words has and the other lacks.
 func unshared(a, b string) int {
 	left := map[rune]int{}
-	for _, r := range key(a) {
+	for _, r := range Key(a) {
 		left[r]++
 	}
-	for _, r := range key(b) {
+	for _, r := range Key(b) {
 		left[r]--
 	}
 	n := 0
@@ -188,7 +188,7 @@ func (s search) compounds(form string, kind Kind, add func(weighed)) {
 	}
 	bad := -1
 	for i, member := range parts {
-		if !known(s.lex, member) && !prefixes[key(member)] {
+		if !known(s.lex, member) && !prefixes[Key(member)] {
 			if bad >= 0 {
 				return
 			}
@@ -223,7 +223,7 @@ func (s search) splits(form string, kind Kind, add func(weighed)) {
 			continue
 		}
 		w := s.weigh(form, second.Words[0], 1, kind, left+" "+right)
-		w.bits += s.model.Prior(first.Words[0], s.lex.Variety(), s.use[key(left)], s.size)
+		w.bits += s.model.Prior(first.Words[0], s.lex.Variety(), s.use[Key(left)], s.size)
 		w.Remark = "two words"
 		add(w)
 	}
@@ -252,7 +252,7 @@ func (s search) named(form string, instead []string, found map[string]weighed) {
 		if f := s.lex.Find(text); len(f.Words) > 0 {
 			c.Word = f.Words[0]
 		}
-		found[key(c.Text)] = weighed{c, best - lead}
+		found[Key(c.Text)] = weighed{c, best - lead}
 	}
 }
 

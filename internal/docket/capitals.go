@@ -95,9 +95,9 @@ const (
 	curly    = "’"
 )
 
-// key is what two spellings of one form have in common: apostrophes and case
+// Key is what two spellings of one form have in common: apostrophes and case
 // apart, they are the same.
-func key(form string) string { return strings.ToLower(plainApostrophe(form)) }
+func Key(form string) string { return strings.ToLower(plainApostrophe(form)) }
 
 func plainApostrophe(s string) string { return strings.ReplaceAll(s, curly, straight) }
 

@@ -64,7 +64,7 @@ func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, rulings []le
 	d.words = d.partWords()
 	d.lex.Store(lex)
 	for text, f := range c.forms {
-		d.use[key(text)] += len(f.places)
+		d.use[Key(text)] += len(f.places)
 	}
 	d.takePassageRulings(ledger.Effective(rulings))
 	for _, e := range d.entries() {
@@ -78,12 +78,24 @@ func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, rulings []le
 func (d *Docket) list(e *Entry) {
 	d.Entries = append(d.Entries, e)
 	d.byForm[e.Form] = e
-	k := key(e.Form)
+	k := Key(e.Form)
 	d.byKey[k] = append(d.byKey[k], e)
 }
 
 // Lexicon returns the lexicon in use: it grows as words are added.
 func (d *Docket) Lexicon() *lexicon.Lexicon { return d.lex.Load() }
+
+// Due returns the entries that are to be ruled on, in the order of review: the open
+// ones but for listed words that somebody asked for.
+func (d *Docket) Due() []*Entry {
+	var due []*Entry
+	for _, e := range d.Entries {
+		if e.Open() && e.Kind != WordInContext {
+			due = append(due, e)
+		}
+	}
+	return due
+}
 
 // Size returns how many running words the manuscript has.
 func (d *Docket) Size() int { return d.census.size }
@@ -110,10 +122,10 @@ func (d *Docket) Find(text string) *Entry {
 			return e
 		}
 	}
-	if es := d.byKey[key(text)]; len(es) > 0 {
+	if es := d.byKey[Key(text)]; len(es) > 0 {
 		return es[0]
 	}
-	for _, other := range d.spellings(key(text)) {
+	for _, other := range d.spellings(Key(text)) {
 		if e := d.inContext(other); e != nil {
 			return e
 		}
@@ -128,7 +140,7 @@ func (d *Docket) spellings(k string) []*form {
 	}
 	var out []*form
 	for text, f := range d.census.forms {
-		if key(text) == k {
+		if Key(text) == k {
 			out = append(out, f)
 		}
 	}
@@ -139,7 +151,7 @@ func (d *Docket) spellings(k string) []*form {
 // inContext makes an entry of those places of f that no entry has.
 func (d *Docket) inContext(f *form) *Entry {
 	taken := map[place]bool{}
-	for _, e := range d.byKey[key(f.text)] {
+	for _, e := range d.byKey[Key(f.text)] {
 		for _, o := range e.Occurrences {
 			taken[place{int32(o.Paragraph), int32(o.Word)}] = true
 		}
@@ -173,7 +185,7 @@ func (d *Docket) Forms() []FormCount {
 		out = append(out, FormCount{e.Form, len(e.Occurrences), true})
 	}
 	for text, f := range d.census.forms {
-		if len(d.byKey[key(text)]) == 0 {
+		if len(d.byKey[Key(text)]) == 0 {
 			out = append(out, FormCount{text, len(f.places), false})
 		}
 	}
@@ -184,7 +196,7 @@ func (d *Docket) Forms() []FormCount {
 			}
 			return 1
 		}
-		return cmp.Or(cmp.Compare(key(a.Form), key(b.Form)), cmp.Compare(a.Form, b.Form))
+		return cmp.Or(cmp.Compare(Key(a.Form), Key(b.Form)), cmp.Compare(a.Form, b.Form))
 	})
 	return out
 }

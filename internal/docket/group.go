@@ -173,7 +173,7 @@ func clusters(names []*Entry) []*cluster {
 	}
 	var hashes []uint64
 	for i, e := range names {
-		root[i], letters[i] = i, []rune(key(e.Form))
+		root[i], letters[i] = i, []rune(Key(e.Form))
 		hashes = leftovers(hashes[:0], letters[i])
 		for _, h := range hashes {
 			for _, j := range left[h] {

@@ -25,19 +25,19 @@ const leastStem = 4
 // Related returns the open entries built on e's form, with what each becomes
 // were text accepted for e; text may be empty. O(entries).
 func (d *Docket) Related(e *Entry, text string) []Related {
-	stem := key(e.Form)
+	stem := Key(e.Form)
 	if len(stem) < leastStem || e.several() {
 		return nil
 	}
 	lex := d.Lexicon()
 	var out []Related
 	for _, other := range d.Entries {
-		if other == e || !other.Open() || other.several() || !builtOn(key(other.Form), stem) {
+		if other == e || !other.Open() || other.several() || !builtOn(Key(other.Form), stem) {
 			continue
 		}
 		r := Related{Entry: other}
 		if text != "" {
-			r.Text = like(other.Form, strings.Replace(key(other.Form), stem, text, 1))
+			r.Text = like(other.Form, strings.Replace(Key(other.Form), stem, text, 1))
 			r.Known = known(lex, r.Text) || allKnown(r.Text, func(m string) bool { return known(lex, m) })
 		}
 		out = append(out, r)

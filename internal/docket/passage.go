@@ -297,10 +297,10 @@ func (d *Docket) unknownForms(verdicts map[*form]verdict) map[place]string {
 }
 
 // verdicts judges all forms; those that need no entry are not in it.
-func (d *Docket) verdicts(lex *lexicon.Lexicon) map[*form]verdict {
+func (d *Docket) verdicts() map[*form]verdict {
 	out := map[*form]verdict{}
 	for _, f := range d.census.forms {
-		if v := judge(lex, f, d.ours); v.kind != "" {
+		if v := judge(d.base, f, d.ours); v.kind != "" {
 			out[f] = v
 		}
 	}

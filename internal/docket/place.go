@@ -67,7 +67,7 @@ func (d *Docket) again(e *Entry, r *ledger.Ruling) (found []int, lost []ledger.O
 		start, end := d.extent(o)
 		before, after := d.context(o.Paragraph, start, end)
 		for old, was := range r.Occurrences {
-			if key(was.Text) != key(o.Text) {
+			if Key(was.Text) != Key(o.Text) {
 				continue
 			}
 			n := d.shared(was.Before, before, true) + d.shared(was.After, after, false)

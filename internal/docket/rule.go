@@ -56,7 +56,7 @@ type matching struct {
 // manuscript has the form only without: entries fold over endings.
 func (d *Docket) withoutEnding(l Line) Line {
 	base, ending := manuscript.Base(l.Form)
-	if ending == "" || d.use[key(l.Form)] > 0 || d.use[key(base)] == 0 {
+	if ending == "" || d.use[Key(l.Form)] > 0 || d.use[Key(base)] == 0 {
 		return l
 	}
 	l.Form, l.Word = base, strings.TrimSuffix(plainApostrophe(l.Word), ending)
@@ -83,7 +83,7 @@ func (m *matching) sort(l *Line) {
 		return
 	}
 	m.exact[l.Form] = l
-	m.folded[key(l.Form)] = append(m.folded[key(l.Form)], l)
+	m.folded[Key(l.Form)] = append(m.folded[Key(l.Form)], l)
 	m.order = append(m.order, l)
 }
 
@@ -133,7 +133,7 @@ func (m *matching) claimPlaces(l *Line) {
 
 // entriesOf returns the entries whose form a line may be on.
 func (m *matching) entriesOf(l *Line) []*Entry {
-	if es := m.d.byKey[key(l.Form)]; len(es) > 0 {
+	if es := m.d.byKey[Key(l.Form)]; len(es) > 0 {
 		return slices.Clone(es)
 	}
 	if e := m.d.Find(l.Form); e != nil {
@@ -171,7 +171,7 @@ func (m *matching) best(e *Entry, o Occurrence) *Line {
 	if l := m.exact[e.Form]; l != nil {
 		return l
 	}
-	return m.folded[key(e.Form)][0]
+	return m.folded[Key(e.Form)][0]
 }
 
 // unfit says why an act is not for e; "" where it is.

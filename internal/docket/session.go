@@ -34,7 +34,7 @@ const (
 	settingVariety = "variety"
 	settingHouse   = "house"
 	settingSeries  = "series"
-	settingWith    = "with" // as languages writes it
+	settingWith    = "with" // as writeLanguages writes it
 )
 
 // Session is a manuscript on the desk: its docket with the ledger and the lists
@@ -203,7 +203,7 @@ func listed(rulings []ledger.Ruling) map[string]bool {
 	out := map[string]bool{}
 	for _, r := range ledger.Effective(rulings) {
 		if r.Act == ledger.Add {
-			out[key(r.Form)] = true
+			out[Key(r.Form)] = true
 		}
 	}
 	return out

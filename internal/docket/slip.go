@@ -24,7 +24,7 @@ const (
 // candidates. The first call looks at all entries, some milliseconds for a novel,
 // the others at nothing but e. It is safe for concurrent use and never changes.
 func (d *Docket) Slip(e *Entry) float64 {
-	if p, ok := judged(e); ok {
+	if p, ok := e.Judged(); ok {
 		return p
 	}
 	return rank.SlipWeights().Slip(d.Evidence(e))
@@ -34,14 +34,15 @@ func (d *Docket) Slip(e *Entry) float64 {
 // candidates are known: at least the two best of them, best first; none where
 // there are none. It is safe for concurrent use.
 func (d *Docket) SlipGiven(e *Entry, found []Candidate) float64 {
-	if p, ok := judged(e); ok {
+	if p, ok := e.Judged(); ok {
 		return p
 	}
 	return rank.SlipWeights().Slip(d.EvidenceGiven(e, found))
 }
 
-// judged returns the probability of entries that the model has no say in.
-func judged(e *Entry) (float64, bool) {
+// Judged returns the probability that e is a slip where a rule or a list has said
+// so and the model has no say in it; false for all other entries.
+func (e *Entry) Judged() (float64, bool) {
 	switch {
 	case e.Kind == BarredWord, e.Kind == UnknownForm && e.Why != "":
 		return slipOfRule, true
@@ -82,24 +83,24 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 		if first, second, two := strings.Cut(c.Text, " "); two {
 			v.Split = true
 			v.Adjacent = max(v.Adjacent, d.adjacent(first, second))
-			v.Little = max(v.Little, 1000*float64(max(d.use[key(first)], d.use[key(second)]))/float64(d.census.size))
+			v.Little = max(v.Little, 1000*float64(max(d.use[Key(first)], d.use[Key(second)]))/float64(d.census.size))
 		}
 	}
 	v.Use = d.useLike(v, best.Text)
 	for _, c := range found {
-		v.Accent = v.Accent || bare(key(e.Form)) == bare(key(c.Text))
+		v.Accent = v.Accent || bare(Key(e.Form)) == bare(Key(c.Text))
 	}
-	v.Doubled = single(key(e.Form)) == single(key(best.Text))
-	v.Vowels = consonants(key(e.Form)) == consonants(key(best.Text))
-	v.Order = inOrder(key(e.Form)) == inOrder(key(best.Text))
-	v.FirstKept, v.LastKept = sameEnds(key(e.Form), key(best.Text))
+	v.Doubled = single(Key(e.Form)) == single(Key(best.Text))
+	v.Vowels = consonants(Key(e.Form)) == consonants(Key(best.Text))
+	v.Order = inOrder(Key(e.Form)) == inOrder(Key(best.Text))
+	v.FirstKept, v.LastKept = sameEnds(Key(e.Form), Key(best.Text))
 	return v
 }
 
 // useLike returns how often the manuscript uses a word with capitals like those
 // of an entry: of several words, the rarest.
 func (d *Docket) useLike(v rank.Evidence, text string) int {
-	words := strings.Fields(key(text))
+	words := strings.Fields(Key(text))
 	if len(words) > 1 {
 		v.Capital = 0
 	}
@@ -226,8 +227,8 @@ func (d *Docket) evidence(e *Entry, s *survey) rank.Evidence {
 	v.Parts = len(parts)
 	v.Mixed = v.Mixed || capitalsOf(e.Form) == all
 	v.Dialect = s.crowd.dialect
-	v.Coined = derived(d.base, key(e.Form), freePrefixes, freeEndings)
-	v.Derived = derived(d.base, key(e.Form), nil, otherEndings)
+	v.Coined = derived(d.base, Key(e.Form), freePrefixes, freeEndings)
+	v.Derived = derived(d.base, Key(e.Form), nil, otherEndings)
 	return v
 }
 
@@ -247,7 +248,7 @@ func titled(p *manuscript.Paragraph, at int) bool {
 // cutShort reports whether an apostrophe stands before or after the word that is
 // no possessive (perceiv’d): it may close a quotation as well.
 func cutShort(o *Occurrence) bool {
-	return strings.HasSuffix(o.Lead, straight) || strings.HasSuffix(o.Lead, curly) || o.Tail == straight || o.Tail == curly || key(o.Tail) == "'d"
+	return strings.HasSuffix(o.Lead, straight) || strings.HasSuffix(o.Lead, curly) || o.Tail == straight || o.Tail == curly || Key(o.Tail) == "'d"
 }
 
 // freePrefixes and freeEndings make words of words so freely that no list has

@@ -81,7 +81,7 @@ func TestNeighboursEqualAComparisonOfAllPairs(t *testing.T) {
 	d := desk(t, b.String()).Docket
 	ours := map[string]bool{}
 	for _, e := range d.laid {
-		ours[key(e.Form)] = true
+		ours[Key(e.Form)] = true
 	}
 	fold := func(s string) []align.Letter { return d.base.Alphabet().Letters(s) }
 	got := make([]rank.Evidence, len(d.laid))
@@ -91,7 +91,7 @@ func TestNeighboursEqualAComparisonOfAllPairs(t *testing.T) {
 	for i, e := range d.laid {
 		want := rank.Evidence{}
 		for k, u := range uses {
-			if e.Kind == Join || len([]rune(key(e.Form))) < leastStem || align.Restricted(fold(key(e.Form)), fold(k)) != 1 {
+			if e.Kind == Join || len([]rune(Key(e.Form))) < leastStem || align.Restricted(fold(Key(e.Form)), fold(k)) != 1 {
 				continue
 			}
 			met++

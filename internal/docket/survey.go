@@ -36,7 +36,7 @@ func (d *Docket) surveyed() *survey {
 	d.surveying.Do(func() {
 		s := &survey{evidence: make(map[*Entry]rank.Evidence, len(d.laid)), uses: make(map[string]uses, len(d.use)), crowd: d.crowd()}
 		for text, f := range d.census.forms {
-			k := key(text)
+			k := Key(text)
 			u := s.uses[k]
 			u.all += len(f.places)
 			if capitalsOf(text) != lower {
@@ -141,7 +141,7 @@ func (d *Docket) neighbours(found []rank.Evidence, forms map[string]uses) {
 	last := make(map[uint64]int32, 8*len(d.laid))
 	var hashes []uint64
 	for i, e := range d.laid {
-		k := key(e.Form)
+		k := Key(e.Form)
 		ours[k] = true
 		entries[i] = entry{letters: []rune(k)}
 		if len(entries[i].letters) < leastStem || e.Kind == Join {

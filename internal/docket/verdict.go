@@ -24,7 +24,7 @@ func judge(lex *lexicon.Lexicon, f *form, ours map[string]bool) verdict {
 	finding := lex.Find(f.text)
 	switch finding.Status {
 	case lexicon.Known:
-		if finding.Words[0].Layer > lexicon.Base && ours[key(f.text)] {
+		if finding.Words[0].Layer > lexicon.Base && ours[Key(f.text)] {
 			return verdict{kind: UnknownForm}
 		}
 		return verdict{}
@@ -46,7 +46,7 @@ func judgeMembers(lex *lexicon.Lexicon, text string) verdict {
 	}
 	result := verdict{}
 	for _, member := range parts {
-		if prefixes[key(member)] {
+		if prefixes[Key(member)] {
 			continue
 		}
 		finding := lex.Find(member)

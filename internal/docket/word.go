@@ -73,7 +73,7 @@ func suspended(text string) (lead, rest, tail string) {
 
 func clitic(base, tail string) (string, string) {
 	i := strings.LastIndexAny(base, straight+curly)
-	if i > 0 && clitics[key(base[i:])] {
+	if i > 0 && clitics[Key(base[i:])] {
 		return base[:i], base[i:] + tail
 	}
 	return base, tail

@@ -202,10 +202,9 @@ func (w Weights) Slip(e Evidence) float64 {
 	if e.Searched {
 		weights = w.Exact
 	}
-	l := LettersOf(e.Form)
 	var sum float64
-	for i, weight := range weights {
-		sum += weight * features[i].value(&e, l)
+	for i, value := range SlipValues(e) {
+		sum += weights[i] * value
 	}
 	return 1 / (1 + math.Exp(-sum))
 }

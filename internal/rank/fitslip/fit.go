@@ -211,7 +211,7 @@ func examples(ctx context.Context, path, truthFile string, aside map[string]bool
 	}
 	var out []example
 	for _, j := range judged {
-		if j.Entry.Kind == docket.BarredWord || j.Entry.Kind == docket.UnknownForm && j.Entry.Why != "" {
+		if _, ok := j.Entry.Judged(); ok {
 			continue
 		}
 		out = append(out, example{
