@@ -71,7 +71,14 @@ func (d *Docket) passages(unknown map[place]string) []run {
 			ruled[p] = true
 		}
 	}
+	strange := make([]int, len(d.Document.Paragraphs)) // unknown words
+	for p := range unknown {
+		strange[p.paragraph]++
+	}
 	for i := range d.Document.Paragraphs {
+		if bitsFar*float64(strange[i]) < passageBits {
+			continue // nothing else speaks for a passage
+		}
 		if len(d.weighWords(i, unknown, ruled, func(string) bool { return false }).runs(i)) == 0 {
 			continue // not even if no word is near a listed one
 		}
