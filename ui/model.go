@@ -129,6 +129,9 @@ func New(ctx context.Context, session *docket.Session, opt Options) Model {
 		passage: passage.New(sheet), alignment: alignment.New(sheet), concordance: concordance.New(sheet),
 		related: related.New(sheet), page: page.New(sheet),
 	}
+	if m.docket.InBits() {
+		m.alignment.InBits()
+	}
 	m.searching, m.stop = context.WithCancel(ctx)
 	return m
 }

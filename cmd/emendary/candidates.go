@@ -29,7 +29,10 @@ func newCandidates(p *program) *cobra.Command {
 		Use:   "candidates [WORD…]",
 		Short: "list the words that a form may stand for",
 		Long: `List the words that each form may stand for, best first. Forms are given as
-arguments, or one a line on standard input.
+arguments, or one a line on standard input. Cost is that of the edits, in bits:
+−log₂ of the probability that somebody who means the word writes the form. How
+common the word is counts too, and both together give each word its share of the
+belief.
 
 With --within K, list every word within K edits instead, nearest first: cost is
 then the number of edits, and there is no share. An edit inserts, deletes or
@@ -41,15 +44,22 @@ substitutes a letter, or transposes two neighbours.`,
 			if err := cmp.Or(notNegative("-n", most), notNegative("--within", within)); err != nil {
 				return err
 			}
-			find := ranked(most)
-			if cmd.Flags().Changed("within") {
-				limit := -1
-				if cmd.Flags().Changed("number") {
-					limit = most
-				}
-				find = nearby(within, limit)
+			lex, err := w.load()
+			if err != nil {
+				return err
 			}
-			return p.candidates(cmd.Context(), &w, args, format.value, find)
+			if !cmd.Flags().Changed("within") {
+				find, err := ranked(lex, w.costs, most)
+				if err != nil {
+					return err
+				}
+				return p.candidates(cmd.Context(), lex, args, format.value, find)
+			}
+			limit := -1
+			if cmd.Flags().Changed("number") {
+				limit = most
+			}
+			return p.candidates(cmd.Context(), lex, args, format.value, nearby(lex, within, limit))
 		},
 	}
 	w.flags(cmd)
@@ -59,19 +69,24 @@ substitutes a letter, or transposes two neighbours.`,
 }
 
 // finder finds what is listed under a form.
-type finder func(ctx context.Context, lex *lexicon.Lexicon, form string) ([]listedCandidate, error)
+type finder func(ctx context.Context, form string) ([]listedCandidate, error)
 
 // ranked finds the most likely candidates.
-func ranked(most int) finder {
-	return func(ctx context.Context, lex *lexicon.Lexicon, form string) ([]listedCandidate, error) {
-		found, err := docket.CandidatesFor(ctx, lex, form, most)
-		return listCandidates(found), err
+func ranked(lex *lexicon.Lexicon, costs string, most int) (finder, error) {
+	priced, err := docket.Costs(costs)
+	if err != nil {
+		return nil, err
 	}
+	search := docket.NewSearch(lex, priced)
+	return func(ctx context.Context, form string) ([]listedCandidate, error) {
+		found, err := search.Candidates(ctx, form, most)
+		return listCandidates(found), err
+	}, nil
 }
 
 // nearby finds all words within k edits; at most limit if that isn't below 0.
-func nearby(k, limit int) finder {
-	return func(_ context.Context, lex *lexicon.Lexicon, form string) ([]listedCandidate, error) {
+func nearby(lex *lexicon.Lexicon, k, limit int) finder {
+	return func(_ context.Context, form string) ([]listedCandidate, error) {
 		near := lex.Within(form, k)
 		if limit >= 0 {
 			near = near[:min(limit, len(near))]
@@ -84,11 +99,7 @@ func nearby(k, limit int) finder {
 	}
 }
 
-func (p *program) candidates(ctx context.Context, w *words, args []string, format string, find finder) error {
-	lex, err := w.load()
-	if err != nil {
-		return err
-	}
+func (p *program) candidates(ctx context.Context, lex *lexicon.Lexicon, args []string, format string, find finder) error {
 	forms := withoutError(args)
 	if len(args) == 0 {
 		if p.inIsTerminal {
@@ -101,7 +112,7 @@ func (p *program) candidates(ctx context.Context, w *words, args []string, forma
 		if len(form) > longestForm || !utf8.ValidString(form) {
 			return listed{}, fmt.Errorf("candidates: %.40q is no word; give words in UTF-8, of %d bytes at most", form, longestForm)
 		}
-		found, err := find(ctx, lex, form)
+		found, err := find(ctx, form)
 		return listed{Form: form, Status: lex.Find(form).Status.String(), Candidates: found}, err
 	}, func(l listed) error {
 		if err := lister.write(l); err != nil {

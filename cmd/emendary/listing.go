@@ -206,12 +206,15 @@ func (l *wordLister) block(e listed) {
 	if len(e.Candidates) == 0 {
 		fmt.Fprintln(l.w, "  no candidates")
 	}
-	width := 0
+	width, decimals := 0, 0
 	for _, c := range e.Candidates {
+		if c.Cost != math.Trunc(c.Cost) {
+			decimals = 1 // bits
+		}
 		width = max(width, text.Width(shown(c.Word)))
 	}
 	for _, c := range e.Candidates {
-		line := "  " + text.Pad(shown(c.Word), width) + text.PadLeft(number(c.Cost), 6) + text.PadLeft(c.share("%s"), 8) + "  " + shown(c.remark)
+		line := "  " + text.Pad(shown(c.Word), width) + text.PadLeft(strconv.FormatFloat(c.Cost, 'f', decimals, 64), 6) + text.PadLeft(c.share("%s"), 8) + "  " + shown(c.remark)
 		fmt.Fprintln(l.w, strings.TrimRight(line, " "))
 	}
 }

@@ -17,6 +17,7 @@ type words struct {
 	lexicon, house, series string
 	variety                choice
 	with                   languages
+	costs                  string
 }
 
 // languages is the flag that names word lists of other languages.
@@ -43,6 +44,7 @@ func (w *words) flags(cmd *cobra.Command) {
 	f.StringVar(&w.house, "house", "", "the house's `LIST` of words, by name or file")
 	f.StringVar(&w.series, "series", "", "the series' `LIST` of words, by name or file")
 	f.Var(&w.with, "with", "know the words of another language too, `LANG=FILE`, one a line; may be repeated")
+	f.StringVar(&w.costs, "costs", "", "price edits as in `COSTS`: english, unit, or a file that fit wrote")
 	_ = cmd.RegisterFlagCompletionFunc("variety", cobra.FixedCompletions(w.variety.allowed, cobra.ShellCompDirectiveNoFileComp))
 }
 
@@ -89,7 +91,7 @@ func (p *program) open(ctx context.Context, d *desk, manuscript string, toRead b
 func (d *desk) options(manuscript string, toRead bool, progress func(done, total int)) docket.Options {
 	return docket.Options{
 		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: progress,
-		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series, With: d.with,
+		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series, With: d.with, Costs: d.costs,
 	}
 }
 

@@ -2,24 +2,42 @@ package docket
 
 import "emendary/align"
 
-// Align aligns form with text, case folded, under unit costs. The letters
+// Align aligns form with text, case folded, under the costs in use. The letters
 // returned are as written. See alignment for words beyond all measure.
 func (d *Docket) Align(form, text string) (formLetters, textLetters []align.Letter, a align.Alignment) {
 	alphabet := d.base.Alphabet()
 	formLetters, textLetters = alphabet.Letters(form), alphabet.Letters(text)
-	return formLetters, textLetters, alignment(alphabet.Fold(formLetters), alphabet.Fold(textLetters))
+	return formLetters, textLetters, alignment(alphabet.Fold(formLetters), alphabet.Fold(textLetters), d.prices())
 }
+
+// InBits reports whether costs are in bits; else they count edits.
+func (d *Docket) InBits() bool { return d.costs != nil }
+
+// prices returns the costs in use.
+func (d *Docket) prices() align.Costs {
+	if d.costs == nil {
+		return align.Unit{}
+	}
+	return d.costs
+}
+
+// fittedCells bounds the table that is filled under fitted costs, where a cell
+// takes some hundred times as long.
+const fittedCells = 1 << 13
 
 // mostCells bounds the table that an alignment fills: two words of a thousand
 // letters.
 const mostCells = 1 << 20
 
-// alignment is align.Align under unit costs where the table it fills is within
-// bounds. Of longer words, what they begin and end with alike agrees, and what is
+// alignment is align.Align under costs where the table it fills is within bounds,
+// under unit costs where it is larger. Of still longer words, what they begin and end with alike agrees, and what is
 // between is aligned, or replaced as a whole where that is still too long.
-func alignment(form, word []align.Letter) align.Alignment {
+func alignment(form, word []align.Letter, costs align.Costs) align.Alignment {
+	if cells(form, word) > fittedCells {
+		costs = align.Unit{}
+	}
 	if cells(form, word) <= mostCells {
-		return align.Align(form, word, align.Unit{})
+		return align.Align(form, word, costs)
 	}
 	head := common(form, word)
 	tail := 0

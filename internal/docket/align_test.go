@@ -29,7 +29,7 @@ func TestAlignmentOfWordsBeyondMeasure(t *testing.T) {
 	for _, tt := range tests {
 		t.Run(tt.name, func(t *testing.T) {
 			form, word := alphabet.Letters(tt.form), alphabet.Letters(tt.word)
-			a := alignment(form, word)
+			a := alignment(form, word, align.Unit{})
 			assert.InDelta(t, tt.cost, a.Cost, 0)
 			got, err := a.Apply(form)
 			require.NoError(t, err)

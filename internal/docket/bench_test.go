@@ -52,7 +52,7 @@ func build(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon) 
 	if err != nil {
 		return nil, err
 	}
-	return lay(doc, c, lex, nil), nil
+	return lay(doc, c, lex, english.Costs(), nil), nil
 }
 
 func BenchmarkDocketOfANovel(b *testing.B) {

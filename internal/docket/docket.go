@@ -7,9 +7,9 @@ import (
 	"sync/atomic"
 	"time"
 
+	"emendary/align"
 	"emendary/internal/ledger"
 	"emendary/internal/manuscript"
-	"emendary/internal/rank"
 	"emendary/lexicon"
 )
 
@@ -24,9 +24,9 @@ type Docket struct {
 	Unplaced []Unplaced // rulings whose places could not be found again
 
 	census *census
-	use    map[string]int   // count of each form by key
-	base   *lexicon.Lexicon // decides what is on the docket: all layers but the book's
-	model  rank.Model
+	use    map[string]int                  // count of each form by key
+	base   *lexicon.Lexicon                // decides what is on the docket: all layers but the book's
+	costs  *align.Fitted                   // of edits; nil for unit costs
 	lex    atomic.Pointer[lexicon.Lexicon] // base and what this book's rulings added
 
 	words    []int // of each part
@@ -41,6 +41,8 @@ type Docket struct {
 	byKey    map[string][]*Entry      // by key
 	log      []ledger.Ruling          // all rulings recorded, undos included
 
+	searching sync.Mutex // guards searcher
+	searcher  *Search
 	surveying sync.Once
 	survey    *survey // made when first asked for
 	who       string
@@ -55,9 +57,9 @@ type Unplaced struct {
 
 // lay lays out the docket of a census under lex. Of rulings it takes the words
 // that they put on lists and the passages they are on; Record takes the rest.
-func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, rulings []ledger.Ruling) *Docket {
+func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, costs *align.Fitted, rulings []ledger.Ruling) *Docket {
 	d := &Docket{
-		Document: doc, census: c, base: lex, model: rank.Default(), now: time.Now,
+		Document: doc, census: c, base: lex, costs: costs, now: time.Now,
 		use: map[string]int{}, byForm: map[string]*Entry{}, byKey: map[string][]*Entry{},
 		order: ByPlace, exact: map[*Entry]float64{}, ours: listed(rulings),
 	}

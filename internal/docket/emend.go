@@ -70,7 +70,7 @@ func (d *Docket) emendation(e *Entry, i int, text string) manuscript.Emendation 
 		return out
 	}
 	prefix := ""
-	a := alignment(alphabet.Fold(old), alphabet.Fold(corrected))
+	a := alignment(alphabet.Fold(old), alphabet.Fold(corrected), align.Unit{})
 	for _, edit := range a.Edits {
 		to := corrected[edit.J : edit.J+len(edit.To)]
 		switch {

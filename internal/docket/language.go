@@ -64,7 +64,7 @@ func foreignWords(base *lexicon.Lexicon, languages []Language) (*lexicon.List, e
 	var words []lexicon.Word
 	var names []string
 	for _, l := range languages {
-		read, err := fromFile(l.File, lexicon.ReadWords)
+		read, err := fromFile(l.File, wantWords, lexicon.ReadWords)
 		if err != nil {
 			return nil, err
 		}

@@ -21,6 +21,7 @@ type Options struct {
 	Variety    string     // flag value; "" means what the ledger remembers, else what the manuscript attests
 	House      string     // list by name or file; "" means what the ledger remembers
 	Series     string     // likewise
+	Costs      string     // name or file of edit costs; "" means what the ledger remembers, else the default
 	With       []Language // whose words are known too; none means what the ledger remembers
 	Encoding   string
 	Who        string
@@ -34,6 +35,7 @@ const (
 	settingVariety = "variety"
 	settingHouse   = "house"
 	settingSeries  = "series"
+	settingCosts   = "costs"
 	settingWith    = "with" // as writeLanguages writes it
 )
 
@@ -85,6 +87,10 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 		return nil, err
 	}
 	s.Base, s.paths = base, paths
+	costs, err := Costs(s.Options.Costs)
+	if err != nil {
+		return nil, err
+	}
 	if opt.ToRead {
 		s.Ledger, err = ledger.OpenToRead(opt.Ledger)
 	} else {
@@ -110,7 +116,7 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 		return nil, err
 	}
 	lex = s.choose(lex, c)
-	s.Docket = lay(doc, c, lex, rulings)
+	s.Docket = lay(doc, c, lex, costs, rulings)
 	s.Docket.who, s.Docket.now = opt.Who, opt.Now
 	s.Docket.Record(rulings...)
 	s.keep(rulings)
@@ -135,7 +141,7 @@ func (s *Session) Lists() []string {
 func (s *Session) settings() map[string]*string {
 	return map[string]*string{
 		settingVariety: &s.Options.Variety, settingHouse: &s.Options.House, settingSeries: &s.Options.Series,
-		settingWith: &s.with,
+		settingCosts: &s.Options.Costs, settingWith: &s.with,
 	}
 }
 
@@ -156,6 +162,9 @@ func (s *Session) recall(ctx context.Context) (kept map[string]string, err error
 	}
 	defer func() { err = errors.Join(err, l.Close()) }()
 	kept = map[string]string{}
+	if s.Options.Costs, err = findCosts(s.Options.Costs); err != nil {
+		return nil, err
+	}
 	if s.with, err = writeLanguages(s.Options.With); err != nil {
 		return nil, err
 	}

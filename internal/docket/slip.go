@@ -69,7 +69,12 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 		return v
 	}
 	best := found[0]
-	v.Found, v.Best, v.Distance, v.Cost = true, best.Text, best.Distance, best.Cost
+	v.Found, v.Best, v.Distance = true, best.Text, best.Distance
+	v.Cost = best.Cost
+	if d.costs == nil {
+		v.Cost *= rank.Default().Edit
+	}
+	v.Bits = v.Cost + best.Prior
 	v.Share, v.Gap = best.Share, best.Share
 	if len(found) > 1 {
 		v.Gap -= found[1].Share

@@ -55,17 +55,20 @@ func Words(file, house, series string, with []Language) (lex *lexicon.Lexicon, b
 	return lex, base, paths, nil
 }
 
-func load(path string) (*lexicon.List, error) { return fromFile(path, lexicon.Load) }
+func load(path string) (*lexicon.List, error) { return fromFile(path, wantWords, lexicon.Load) }
 
-// fromFile reads a word list's file.
-func fromFile[T any](path string, read func(io.Reader, string) (T, error)) (none T, err error) {
+// wantWords says what to name where a word list can't be opened.
+const wantWords = "name a word list, one word a line"
+
+// fromFile reads a file; want says what to name where it can't be opened.
+func fromFile[T any](path, want string, read func(io.Reader, string) (T, error)) (none T, err error) {
 	f, err := os.Open(path)
 	var named *fs.PathError
 	if errors.As(err, &named) {
 		err = named.Err
 	}
 	if err != nil {
-		return none, fmt.Errorf("%s: %w; name a word list, one word a line", path, err)
+		return none, fmt.Errorf("%s: %w; %s", path, err, want)
 	}
 	defer f.Close()
 	return read(f, path)

@@ -66,18 +66,36 @@ func TestPriorPrefersWhatIsCommonAndWhatTheManuscriptUses(t *testing.T) {
 	}
 	m := Default()
 	bits := func(text string, count int) float64 {
-		return m.Prior(word(text), lexicon.BritishIse, count, 100_000)
+		return m.Prior(word(text), lexicon.BritishIse, len(text), false, count, 100_000)
 	}
 	assert.Less(t, bits("house", 0), bits("abbey", 0), "level 10 before a rarer level")
 	assert.Less(t, bits("abbey", 40), bits("house", 0), "what the manuscript uses before what it does not")
 	assert.Less(t, bits("abbey", 40), bits("abbey", 2))
 	listed := lexicon.Word{Text: "Pellimoor", Layer: lexicon.Book}
-	assert.Less(t, m.Prior(listed, lexicon.BritishIse, 0, 100_000), bits("abbey", 0), "a listed word counts as a common one")
+	assert.Less(t, m.Prior(listed, lexicon.BritishIse, 9, true, 0, 100_000), bits("dispensary", 0), "a listed word counts as a common one")
 }
 
-func TestAnEditIsWorthAboutTheSpanOfLevels(t *testing.T) {
+func TestPriorPrefersNamesForFormsWithACapital(t *testing.T) {
 	m := Default()
-	span := levelBits[len(levelBits)-1].bits - levelBits[0].bits
-	assert.Less(t, m.Edit, span, "a transposition")
-	assert.Less(t, span, m.Edit+2*m.Letter, "a substitution")
+	name := lexicon.Word{Text: "Thames", Sources: []lexicon.Source{{Category: "english", Class: "upper", Level: 50}}}
+	plain := lexicon.Word{Text: "themes", Sources: []lexicon.Source{{Category: "english", Class: "words", Level: 50}}}
+	bits := func(w lexicon.Word, capital bool) float64 {
+		return m.Prior(w, lexicon.BritishIse, 6, capital, 0, 0)
+	}
+	assert.Less(t, bits(name, true), bits(plain, true))
+	assert.Less(t, bits(plain, false), bits(name, false))
+}
+
+// The table is fitted by program: what holds for running English (Zipf 1935, from
+// memory: the commoner, the shorter) has to hold in it.
+func TestTheTableOfPriorsFallsWithLengthAndLevel(t *testing.T) {
+	p := table()
+	require.Len(t, p.bits, 8)
+	for level, row := range p.bits {
+		require.Len(t, row, 14)
+		assert.IsNonDecreasing(t, row, level)
+		assert.Greater(t, row[4], p.bits[10][4]-1e-9, "level %d: no level is commoner than the first", level)
+	}
+	assert.InDelta(t, p.at(20, 5), p.at(15, 5), 0, "between two levels: the rarer one's")
+	assert.InDelta(t, p.at(70, 14), p.at(95, 40), 0, "beyond both ends: the last")
 }

@@ -39,7 +39,8 @@ type Evidence struct {
 	Found     bool    // there is a candidate
 	Distance  int     // of the best, restricted Damerau–Levenshtein
 	Best      string  // its text
-	Cost      float64 // of its edits
+	Cost      float64 // of its edits, in bits
+	Bits      float64 // of edits and prior together
 	Share     float64 // its share
 	Gap       float64 // by how much its share exceeds the second's
 	Level     int     // its size level: 10 commonest, 70 rarest; 0 of a list
@@ -124,7 +125,13 @@ var features = []feature{
 	{"none found", true, func(e *Evidence, _ Letters) float64 { return is(!e.Found) }},
 	{"distance 2", true, func(e *Evidence, _ Letters) float64 { return is(e.Distance == 2) }},
 	{"distance 3", true, func(e *Evidence, _ Letters) float64 { return is(e.Distance >= 3) }},
-	{"cost", true, func(e *Evidence, _ Letters) float64 { return e.Cost / 4 }},
+	{"cost", true, func(e *Evidence, _ Letters) float64 { return e.Cost / 8 }},
+	{"slip over coinage", true, func(e *Evidence, l Letters) float64 {
+		if !e.Found {
+			return 0
+		}
+		return min(max((l.Bits-e.Bits)/8, -3), 3)
+	}},
 	{"share", true, func(e *Evidence, _ Letters) float64 { return e.Share }},
 	{"gap", true, func(e *Evidence, _ Letters) float64 { return e.Gap }},
 	{"level", true, func(e *Evidence, _ Letters) float64 { return float64(e.Level) / 35 }},

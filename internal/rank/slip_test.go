@@ -47,7 +47,7 @@ func TestWeightsOfOtherFeaturesAreRefused(t *testing.T) {
 func TestSlipFollowsTheEvidence(t *testing.T) {
 	slip := Evidence{
 		Form: "harbuor", Count: 1, Parts: 1, NearUse: 12, Searched: true, Found: true,
-		Distance: 1, Cost: 1, Share: 0.95, Gap: 0.9, Level: 20, Use: 12, FirstKept: true,
+		Distance: 1, Cost: 5, Bits: 17, Share: 0.95, Gap: 0.9, Level: 20, Use: 12, FirstKept: true,
 	}
 	with := func(change func(*Evidence)) Evidence {
 		e := slip
@@ -62,7 +62,7 @@ func TestSlipFollowsTheEvidence(t *testing.T) {
 		{"many occurrences", with(func(e *Evidence) { e.Count, e.Parts = 40, 9 })},
 		{"an apostrophe", with(func(e *Evidence) { e.Elided = 1 })},
 		{"a rarer best candidate", with(func(e *Evidence) { e.Level, e.Use, e.NearUse = 70, 0, 0 })},
-		{"a best candidate far away", with(func(e *Evidence) { e.Distance, e.NearUse = 3, 0 })},
+		{"a best candidate far away", with(func(e *Evidence) { e.Distance, e.Cost, e.Bits, e.NearUse = 3, 28, 40, 0 })},
 		{"company", with(func(e *Evidence) { e.Company = 5 })},
 		{"another variety", with(func(e *Evidence) { e.Variety = true })},
 	}

@@ -55,6 +55,7 @@ type Model struct {
 	rows          []Row
 	grid          align.Grid
 	note          string
+	inBits        bool // costs are in bits, not in edits
 	stet          bool // the form was let stand: spelt out until the cursor moves
 	cursor        int
 	width, height int
@@ -62,6 +63,9 @@ type Model struct {
 
 // New returns an empty alignment.
 func New(sheet style.Sheet) Model { return Model{Keys: Keys(), sheet: sheet} }
+
+// InBits says that costs are in bits.
+func (m *Model) InBits() { m.inBits = true }
 
 // SetSize sets the columns and lines to draw in.
 func (m *Model) SetSize(width, height int) { m.width, m.height = width, height }

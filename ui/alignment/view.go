@@ -177,7 +177,7 @@ func (m Model) heads(p plan, from, to int) string {
 		b.WriteString(text.Pad(m.head(i, m.sheet.Head), p.widths[i]))
 	}
 	if slices.ContainsFunc(m.rows, func(r Row) bool { return r.Priced }) {
-		b.WriteString(m.sheet.Quiet.Render("  cost  share"))
+		b.WriteString(m.sheet.Quiet.Render(text.PadLeft(m.unit(), 6) + "  share"))
 	}
 	return b.String()
 }
@@ -211,7 +211,7 @@ func (m Model) row(r int, p plan) string {
 	b.WriteString(cursor + text.Pad(word, p.word+lead-3))
 	b.WriteString(m.cells(r, p))
 	if row.Priced {
-		b.WriteString(text.PadLeft(price(row.Cost), 6) + text.PadLeft(share(row.Share), 7))
+		b.WriteString(text.PadLeft(m.price(row.Cost), 6) + text.PadLeft(share(row.Share), 7))
 	} else {
 		b.WriteString(strings.Repeat(" ", tail))
 	}
@@ -221,9 +221,20 @@ func (m Model) row(r int, p plan) string {
 	return b.String()
 }
 
-func price(cost float64) string {
-	if math.IsInf(cost, 0) || math.IsNaN(cost) {
+// unit heads the column of costs.
+func (m Model) unit() string {
+	if m.inBits {
+		return "bits"
+	}
+	return "cost"
+}
+
+func (m Model) price(cost float64) string {
+	switch {
+	case math.IsInf(cost, 0) || math.IsNaN(cost):
 		return ""
+	case m.inBits:
+		return strconv.FormatFloat(cost, 'f', 1, 64)
 	}
 	return strconv.FormatFloat(math.Round(10*cost)/10, 'f', -1, 64)
 }
