@@ -7,10 +7,9 @@ import (
 	"context"
 	"fmt"
 	"io"
-	"runtime"
+	"maps"
 	"slices"
 	"strings"
-	"sync"
 
 	"emendary/internal/docket"
 )
@@ -80,14 +79,15 @@ func eachLine(r io.Reader, name string, do func(n int, line string) error) error
 	return nil
 }
 
-// Manuscript is how a docket deals with the errors planted in its manuscript.
+// Manuscript is how a docket deals with the errors planted in its manuscript. What
+// it counts of candidates is of planted forms, in place: a form is as right as the
+// worst of its entries, and one without an entry has no candidates.
 type Manuscript struct {
-	N                int     `json:"n"`                 // planted forms
+	Accuracy
 	Words            int     `json:"words"`             // running words
 	Entries          int     `json:"entries"`           // open entries, those set aside left out
 	SetAside         int     `json:"set_aside"`         // entries left out as the book's own slips
 	Found            float64 `json:"found"`             // fraction of planted forms that have an entry
-	Top1             float64 `json:"top1"`              // fraction of planted forms whose first candidate is right
 	AveragePrecision float64 `json:"average_precision"` // of the order by the probability of a slip
 	Provisional      float64 `json:"average_precision_provisional"`
 
@@ -96,15 +96,7 @@ type Manuscript struct {
 	FalseAlarms       float64 `json:"false_alarms_per_1000"`
 	LikelyFalseAlarms float64 `json:"likely_false_alarms_per_1000"`
 
-	Missed []string `json:"missed,omitempty"` // planted forms without an entry
-	Wrong  []Wrong  `json:"wrong,omitempty"`  // planted forms whose first candidate is wrong
-}
-
-// Wrong is a planted form whose first candidate is not what was intended.
-type Wrong struct {
-	Form      string   `json:"form"`
-	Candidate string   `json:"candidate"` // "" where there was none
-	Intended  []string `json:"intended"`
+	Missed []Miss `json:"missed,omitzero"` // planted forms without an entry, by alphabet; not nil
 }
 
 // Judged is an open entry with what an assay needs of it.
@@ -116,8 +108,8 @@ type Judged struct {
 
 // Judge looks at all open entries of d on all cores, but for those of forms set
 // aside: their candidates, and whether they were planted. They come in the order
-// of review.
-func Judge(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]bool) (judged []Judged, left int, err error) {
+// of review. progress, where it is not nil, hears of each.
+func Judge(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]bool, progress func(done, total int)) (judged []Judged, left int, err error) {
 	for _, e := range d.Due() {
 		if aside[docket.Key(e.Form)] {
 			left++
@@ -125,24 +117,11 @@ func Judge(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]
 			judged = append(judged, Judged{Entry: e, Planted: planted(e, truth)})
 		}
 	}
-	workers := runtime.GOMAXPROCS(0)
-	errs := make([]error, workers)
-	var wait sync.WaitGroup
-	for w := range workers {
-		wait.Go(func() {
-			for i := w; i < len(judged) && errs[w] == nil; i += workers {
-				j := &judged[i]
-				j.Candidates, errs[w] = d.Candidates(ctx, j.Entry, 10)
-			}
-		})
-	}
-	wait.Wait()
-	for _, err := range errs {
-		if err != nil {
-			return nil, 0, err
-		}
-	}
-	return judged, left, nil
+	err = onAllCores(ctx, len(judged), course{progress, 0, len(judged)}.at, func(ctx context.Context, i int) (err error) {
+		judged[i].Candidates, err = d.Candidates(ctx, judged[i].Entry, Depth)
+		return err
+	})
+	return judged, left, err
 }
 
 // planted returns the key under which truth has e: its form, as it stands
@@ -168,15 +147,25 @@ func planted(e *docket.Entry, truth Truth) string {
 
 // AssayManuscript measures a docket on the truth of what was planted in its
 // manuscript. Entries of the forms set aside, the book's own slips, count neither
-// way. The order is by the probability of a slip, equal ones by place.
-func AssayManuscript(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]bool) (Manuscript, error) {
-	judged, left, err := Judge(ctx, d, truth, aside)
+// way, and planted forms among them are left out. The order is by the probability
+// of a slip, equal ones by place. progress, where it is not nil, hears of each entry.
+func AssayManuscript(ctx context.Context, d *docket.Docket, truth Truth, aside map[string]bool, progress func(done, total int)) (Manuscript, error) {
+	reasons := map[Reason]int{SetAside: 0}
+	counts := Truth{}
+	for k, intended := range truth {
+		if aside[k] {
+			reasons[SetAside]++
+		} else {
+			counts[k] = intended
+		}
+	}
+	judged, left, err := Judge(ctx, d, counts, aside, progress)
 	if err != nil {
 		return Manuscript{}, err
 	}
-	m := Manuscript{N: len(truth), Words: d.Size(), Entries: len(judged), SetAside: left}
+	m := Manuscript{Words: d.Size(), Entries: len(judged), SetAside: left}
 	exact, provisional := make([]float64, len(judged)), make([]float64, len(judged))
-	right := map[string]bool{} // by key of the planted forms found: all its entries come right
+	worst := map[string]Miss{} // of the entries of a planted form
 	for i, j := range judged {
 		exact[i], provisional[i] = d.SlipGiven(j.Entry, j.Candidates), d.Slip(j.Entry)
 		if j.Planted == "" {
@@ -186,28 +175,28 @@ func AssayManuscript(ctx context.Context, d *docket.Docket, truth Truth, aside m
 			}
 			continue
 		}
-		ok := firstIsRight(j, truth[j.Planted])
-		was, seen := right[j.Planted]
-		right[j.Planted] = ok && (was || !seen)
-		if !ok {
-			w := Wrong{Form: j.Entry.Form, Intended: truth[j.Planted]}
-			if len(j.Candidates) > 0 {
-				w.Candidate = j.Candidates[0].Text
-			}
-			m.Wrong = append(m.Wrong, w)
+		intended := counts[j.Planted]
+		now := Miss{j.Entry.Form, intended, rank(j.Candidates, j.right(intended)), texts(j.Candidates)}
+		if w, seen := worst[j.Planted]; !seen || now.worse(w) {
+			worst[j.Planted] = now
 		}
 	}
-	for k := range truth {
-		if _, found := right[k]; !found {
-			m.Missed = append(m.Missed, k)
-		}
-		if right[k] {
-			m.Top1++
+	var ranks []int
+	misses := []Miss{}
+	m.Missed = []Miss{}
+	for _, k := range slices.Sorted(maps.Keys(counts)) {
+		w, found := worst[k]
+		ranks = append(ranks, w.Rank)
+		switch {
+		case !found:
+			m.Missed = append(m.Missed, Miss{k, counts[k], 0, []string{}})
+		case w.Rank != 1:
+			misses = append(misses, w)
 		}
 	}
-	slices.Sort(m.Missed)
-	n := float64(max(len(truth), 1))
-	m.Found, m.Top1 = float64(len(right))/n, m.Top1/n
+	m.Accuracy = accuracy(ranks, reasons)
+	m.Misses = misses
+	m.Found = float64(len(worst)) / float64(max(len(counts), 1))
 	thousands := float64(max(m.Words, 1)) / 1000
 	m.FalseAlarms /= thousands
 	m.LikelyFalseAlarms /= thousands
@@ -216,19 +205,15 @@ func AssayManuscript(ctx context.Context, d *docket.Docket, truth Truth, aside m
 	return m, nil
 }
 
-// firstIsRight reports whether the first candidate is one of the intended words;
-// in a compound, the compound with one of them in it.
-func firstIsRight(j Judged, intended []string) bool {
-	if len(j.Candidates) == 0 {
-		return false
-	}
-	got := docket.Key(j.Candidates[0].Text)
+// right returns the words that are right in place of j's form: the intended ones,
+// or, for a compound of which the planted form is a member, the compound with one of
+// them in it.
+func (j Judged) right(intended []string) []string {
+	words := slices.Clone(intended)
 	for _, word := range intended {
-		if got == word || got == strings.Replace(docket.Key(j.Entry.Form), j.Planted, word, 1) {
-			return true
-		}
+		words = append(words, strings.Replace(docket.Key(j.Entry.Form), j.Planted, word, 1))
 	}
-	return false
+	return words
 }
 
 // inOrder returns the average precision of the order by their probabilities of

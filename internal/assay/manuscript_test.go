@@ -97,7 +97,7 @@ func assayed(t *testing.T, truth Truth, aside map[string]bool) Manuscript {
 	s, err := docket.Start(context.Background(), docket.Options{Manuscript: path, ToRead: true})
 	require.NoError(t, err)
 	defer s.Close()
-	m, err := AssayManuscript(context.Background(), s.Docket, truth, aside)
+	m, err := AssayManuscript(context.Background(), s.Docket, truth, aside, nil)
 	require.NoError(t, err)
 	return m
 }
@@ -112,9 +112,13 @@ func TestManuscriptIsMeasured(t *testing.T) {
 	assert.Equal(t, 1, m.SetAside)
 	assert.InDelta(t, 5.0/6, m.Found, 1e-12)
 	assert.InDelta(t, 4.0/6, m.Top1, 1e-12)
-	assert.Equal(t, []string{"quiet"}, m.Missed, "a listed word has no entry")
-	require.Len(t, m.Wrong, 1)
-	assert.Equal(t, "flumbwick", m.Wrong[0].Form)
+	assert.InDelta(t, 4.0/6, m.Top10, 1e-12)
+	assert.InDelta(t, 4.0/6, m.MRR, 1e-12)
+	assert.Equal(t, []Miss{{"quiet", []string{"quite"}, 0, []string{}}}, m.Missed, "a listed word has no entry")
+	require.Len(t, m.Misses, 1)
+	assert.Equal(t, "flumbwick", m.Misses[0].Form)
+	assert.Equal(t, []string{"candle"}, m.Misses[0].Intended)
+	assert.Zero(t, m.Misses[0].Rank)
 	// Of 8 entries, Brannock, Snargle and alot were not planted.
 	assert.Equal(t, 8, m.Entries)
 	assert.InDelta(t, 3*1000/float64(m.Words), m.FalseAlarms, 1e-9)
@@ -124,15 +128,43 @@ func TestManuscriptIsMeasured(t *testing.T) {
 	assert.Greater(t, m.Provisional, 0.4)
 }
 
+func TestPlantedFormsSetAsideCountNeitherWay(t *testing.T) {
+	truth := Truth{"harbuor": {"harbour"}, "severly": {"severely"}}
+	m := assayed(t, truth, map[string]bool{"severly": true})
+	assert.Equal(t, [3]int{1, 1, 1}, [3]int{m.N, m.LeftOut, m.SetAside})
+	assert.Equal(t, map[Reason]int{SetAside: 1}, m.Reasons)
+	assert.InDelta(t, 1, m.Found, 0)
+	assert.Len(t, truth, 2, "the truth stays as it was")
+}
+
+// The member of a compound that was planted is right within the compound.
+func TestWhatIsRightInPlace(t *testing.T) {
+	compound := Judged{Entry: &docket.Entry{Form: "Half-whte"}, Planted: "whte"}
+	assert.Equal(t, []string{"white", "half-white"}, compound.right([]string{"white"}))
+	word := Judged{Entry: &docket.Entry{Form: "whte"}, Planted: "whte"}
+	assert.Equal(t, []string{"white", "white"}, word.right([]string{"white"}))
+}
+
+// A planted form is as right as the worst of its entries.
+func TestMissesTellWhichIsWorse(t *testing.T) {
+	for _, tt := range []struct {
+		rank, than int
+		want       bool
+	}{{1, 1, false}, {2, 1, true}, {1, 2, false}, {0, 10, true}, {10, 0, false}, {0, 0, false}} {
+		assert.Equal(t, tt.want, Miss{Rank: tt.rank}.worse(Miss{Rank: tt.than}), "%d, %d", tt.rank, tt.than)
+	}
+}
+
 func TestManuscriptInJSON(t *testing.T) {
 	data, err := json.Marshal(assayed(t, Truth{"harbuor": {"harbour"}}, nil))
 	require.NoError(t, err)
 	var got map[string]any
 	require.NoError(t, json.Unmarshal(data, &got))
-	for _, name := range []string{"n", "found", "top1", "average_precision", "false_alarms_per_1000"} {
+	for _, name := range []string{"n", "left_out", "reasons", "found", "top1", "top3", "top5", "top10", "mrr", "average_precision", "false_alarms_per_1000"} {
 		assert.Contains(t, got, name)
 	}
 	assert.InDelta(t, 1, got["found"], 0)
+	assert.InDelta(t, 0, got["left_out"], 0)
 }
 
 func TestAssayStopsWithItsContext(t *testing.T) {
@@ -143,6 +175,6 @@ func TestAssayStopsWithItsContext(t *testing.T) {
 	defer s.Close()
 	ctx, cancel := context.WithCancel(context.Background())
 	cancel()
-	_, err = AssayManuscript(ctx, s.Docket, Truth{"harbuor": {"harbour"}}, nil)
+	_, err = AssayManuscript(ctx, s.Docket, Truth{"harbuor": {"harbour"}}, nil, nil)
 	assert.ErrorIs(t, err, context.Canceled)
 }

@@ -36,6 +36,18 @@ func judge(lex *lexicon.Lexicon, f *form, ours map[string]bool) verdict {
 	return judgeMembers(lex, f.text)
 }
 
+// Knows reports whether text, of one or more words, would raise no question in a
+// manuscript: each of its words is known, or a compound of known ones.
+func Knows(lex *lexicon.Lexicon, text string) bool {
+	words := strings.Fields(text)
+	for _, word := range words {
+		if judge(lex, &form{text: word}, nil).kind != "" {
+			return false
+		}
+	}
+	return len(words) > 0
+}
+
 // judgeMembers looks a compound up by its members: it needs no entry where all
 // are known, else an entry of the kind that its first unknown member needs.
 func judgeMembers(lex *lexicon.Lexicon, text string) verdict {

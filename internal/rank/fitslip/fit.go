@@ -205,7 +205,7 @@ func examples(ctx context.Context, path, truthFile string, aside map[string]bool
 	if err != nil {
 		return nil, err
 	}
-	judged, _, err := assay.Judge(ctx, s.Docket, truth, aside)
+	judged, _, err := assay.Judge(ctx, s.Docket, truth, aside, nil)
 	if err != nil {
 		return nil, err
 	}
