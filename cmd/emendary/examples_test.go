@@ -25,8 +25,10 @@ func commands() []*cobra.Command {
 }
 
 // Each line of each example runs as it stands, in a folder that has the demo as
-// manuscript.md.
+// manuscript.md, and some labelled misspellings.
 func TestExamplesRun(t *testing.T) {
+	list := strings.SplitAfter(readFile(t, root+"/testdata/wikipedia-misspellings.tsv"), "\n")
+	pairs := strings.Join(list[:40], "")
 	for _, c := range commands() {
 		t.Run(c.CommandPath(), func(t *testing.T) {
 			t.Parallel()
@@ -35,6 +37,8 @@ func TestExamplesRun(t *testing.T) {
 				require.Contains(t, line, c.CommandPath())
 				folder := t.TempDir()
 				require.NoError(t, copyFile(demo+"/manuscript.md", folder+"/manuscript.md"))
+				writeFile(t, folder, "pairs.tsv", pairs)
+				writeFile(t, folder, "planted.tsv", "lantrn\tlantern\n")
 				cmd := exec.Command("sh", "-c", strings.TrimSpace(line))
 				if c.Name() == "review" {
 					term := startOn(t, cmd, folder)

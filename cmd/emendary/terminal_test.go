@@ -135,6 +135,7 @@ func TestNoCommandAsksTheTerminalAnything(t *testing.T) {
 		{"rule m.md", "ctrl-d", "form\truling\tword\nharber\taccept\tharbour\n\x04", 0},
 		{"apply m.md", "0 emendations, 1 entry still open", "", 0},
 		{"report figures m.md", "words", "", 0},
+		{"assay pairs.tsv --folds 2", "mean reciprocal rank", "", 0},
 		{"version", "base lexicon", "", 0},
 		{"completion bash", "bash completion", "", 0},
 		{"reveiw m.md", "did you mean review?", "", 2},
@@ -143,6 +144,7 @@ func TestNoCommandAsksTheTerminalAnything(t *testing.T) {
 		t.Run(c.args, func(t *testing.T) {
 			folder := t.TempDir()
 			writeFile(t, folder, "m.md", small)
+			writeFile(t, folder, "pairs.tsv", "harber\tharbour\nlantrn\tlantern\nquuay\tquay\nstrom\tstorm\n")
 			term := onTerminal(t, folder, strings.Fields(c.args)...)
 			term.until(c.want)
 			term.typeKeys(c.keys)
@@ -189,6 +191,20 @@ func TestAnInterruptEndsWaiting(t *testing.T) {
 			assert.NoFileExists(t, filepath.Join(folder, "m.md.ledger"))
 		})
 	}
+}
+
+// An assay shows how far it has come, and an interrupt ends it without a figure.
+func TestAnInterruptEndsAnAssay(t *testing.T) {
+	pairs, err := filepath.Abs(filepath.Join(root, "testdata", "wikipedia-misspellings.tsv"))
+	require.NoError(t, err)
+	many := strings.Repeat(readFile(t, pairs), 20) // more than can be through by then
+	folder := t.TempDir()
+	writeFile(t, folder, "pairs.tsv", many)
+	term := onTerminal(t, folder, "assay", "pairs.tsv")
+	term.until("measuring")
+	require.NoError(t, term.cmd.Process.Signal(syscall.SIGINT))
+	assert.Equal(t, 130, term.ends(), term.text())
+	assert.NotContains(t, term.text(), "pairs.tsv")
 }
 
 // An interrupt in the middle of a long listing ends it; what is out stays.
