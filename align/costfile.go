@@ -94,10 +94,7 @@ func (f *Fitted) WriteTo(w io.Writer) (int64, error) {
 			line("stretch", s.String(), figure(t.met[s]), figure(t.swapped[s]))
 		}
 	}
-	long := slices.SortedFunc(maps.Keys(t.long), func(a, b longEdit) int {
-		return cmp.Or(slices.Compare(a.to[:], b.to[:]), slices.Compare(a.from[:], b.from[:]))
-	})
-	for _, e := range long {
+	for _, e := range t.longEdits() {
 		line("long", e.from.String(), e.to.String(), figure(t.long[e]))
 	}
 	n, err := io.WriteString(w, b.String())
@@ -136,6 +133,13 @@ func (t stretch) String() string {
 		b.WriteString(s.String())
 	}
 	return b.String()
+}
+
+// longEdits returns the edits of several letters in the order of a file.
+func (t *tally) longEdits() []longEdit {
+	return slices.SortedFunc(maps.Keys(t.long), func(a, b longEdit) int {
+		return cmp.Or(slices.Compare(a.to[:], b.to[:]), slices.Compare(a.from[:], b.from[:]))
+	})
 }
 
 func sorted(m map[stretch]float64) []stretch {

@@ -1,6 +1,10 @@
 package align
 
-import "math"
+import (
+	"maps"
+	"math"
+	"slices"
+)
 
 // Grain is the unit that fitted costs are whole multiples of, in bits: sums of
 // them are exact, in any order.
@@ -74,14 +78,14 @@ func chancesOf(t *tally) *chances {
 		spots: make([]ratio, 1<<16), spotRow: make([]uint16, 1<<16), rows: make([][symbols]float64, 1, 1+2*len(t.slips)),
 	}
 	add := func(r *ratio, q ratio) { r.met, r.wrong = r.met+q.met, r.wrong+q.wrong }
-	for i, r := range t.spots {
-		s := spotAt(i)
+	for _, i := range slices.Sorted(maps.Keys(t.spots)) { // sums are the same again in the same order
+		s, r := spotAt(i), t.spots[i]
 		add(&c.letter[s.side()][s.letter], r)
 		add(&c.left[s.side()][s.left][s.letter], r)
 		c.spots[i] = r
 	}
-	for i, written := range t.slips {
-		s := spotAt(i)
+	for _, i := range slices.Sorted(maps.Keys(t.slips)) {
+		s, written := spotAt(i), t.slips[i]
 		c.spotRow[i] = uint16(len(c.rows))
 		c.rows = append(c.rows, written)
 		row := &c.leftRow[s.side()][s.left][s.letter]
@@ -163,8 +167,8 @@ func newFitted(t *tally, k keyboard, by smoothing) *Fitted {
 	for p := range positions {
 		f.swaps[p] = t.swaps[p].blend(0.002, 100)
 	}
-	for e, n := range t.long {
-		met := t.met[e.to]
+	for _, e := range t.longEdits() {
+		n, met := t.long[e], t.met[e.to]
 		if e.to.size() == 1 {
 			met += f.chances.letter[0][e.to[0]].met
 		}

@@ -173,3 +173,39 @@ func TestFitStopsWhenAskedAndWantsPairs(t *testing.T) {
 	_, err = align.Fit(ctx, fittedPairs(t), align.Origin{}, nil)
 	assert.ErrorIs(t, err, context.Canceled)
 }
+
+// Also of pairs so long and unlike that their probability is no number above 0.
+func TestBitsAreThoseOfAllAlignmentsTogether(t *testing.T) {
+	costs := someCosts(t)
+	tests := []struct{ name, form, word string }{
+		{"one letter", "a", "e"},
+		{"one slip", "recieve", "receive"},
+		{"many slips", "fisikle", "physical"},
+		{"unlike and long", strings.Repeat("q", 200), strings.Repeat("z", 190)},
+		{"half unlike", strings.Repeat("q", 120) + strings.Repeat("e", 130), strings.Repeat("z", 120) + strings.Repeat("e", 130)},
+	}
+	for _, tt := range tests {
+		t.Run(tt.name, func(t *testing.T) {
+			got := costs.Bits([]align.Pair{{Form: letters(tt.form), Word: letters(tt.word), Weight: 2}})
+			cheapest := align.Align(letters(tt.form), letters(tt.word), costs).Cost
+			assert.LessOrEqual(t, got, cheapest, "one alignment is as likely as all at the most")
+			assert.Greater(t, got, cheapest/2-8)
+		})
+	}
+	assert.Zero(t, costs.Bits(nil))
+}
+
+func TestFitMakesPairsLikelier(t *testing.T) {
+	pairs := fittedPairs(t)[:400]
+	costs, err := align.Fit(context.Background(), pairs, align.Origin{}, nil)
+	require.NoError(t, err)
+	assert.Less(t, costs.Bits(pairs), align.Unfitted().Bits(pairs))
+	again, err := align.Fit(context.Background(), pairs, align.Origin{}, nil)
+	require.NoError(t, err)
+	var file, second bytes.Buffer
+	_, err = costs.WriteTo(&file)
+	require.NoError(t, err)
+	_, err = again.WriteTo(&second)
+	require.NoError(t, err)
+	assert.Equal(t, file.String(), second.String(), "the same pairs give the same costs")
+}

@@ -90,3 +90,19 @@ func TestReadmeListsEveryCommand(t *testing.T) {
 		}
 	}
 }
+
+// The embedded costs are, byte for byte, what the command beside them writes.
+func TestEmbeddedCostsAreWhatTheirCommandWrites(t *testing.T) {
+	const folder = root + "/lexicon/english"
+	_, rest, ok := strings.Cut(readFile(t, folder+"/costs.go"), "\n//go:generate go run emendary/cmd/emendary ")
+	require.True(t, ok, "no command in costs.go")
+	line, _, _ := strings.Cut(rest, "\n")
+	out := filepath.Join(t.TempDir(), "english.costs")
+	line = strings.Replace(line, "-o english.costs", "-o "+out, 1)
+	require.Contains(t, line, out)
+	cmd := exec.Command("sh", "-c", "emendary "+line)
+	cmd.Dir = folder
+	said, err := cmd.CombinedOutput()
+	require.NoError(t, err, "%s", said)
+	assert.True(t, readFile(t, folder+"/english.costs") == readFile(t, out), "english.costs differs from what fit writes; go generate -run fit ./lexicon/english")
+}

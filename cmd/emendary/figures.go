@@ -20,10 +20,26 @@ func (f figures) pairs(head string, a assay.Accuracy) {
 	fmt.Fprintf(f.w, "%s\n\n", shown(head))
 	f.count("counted", a.N)
 	f.count("left out", a.LeftOut)
-	f.reasons(a)
+	f.reasons(a.Reasons)
 	fmt.Fprintln(f.w)
 	f.accuracy(a)
 	f.misses(a.Misses, nil)
+}
+
+// fitting writes what costs were fitted to: pairs read and left out; and how many
+// bits a pair takes before and after.
+func (f figures) fitting(head string, read int, leftOut map[assay.Reason]int, before, after float64) {
+	fmt.Fprintf(f.w, "%s\n\n", shown(head))
+	left := 0
+	for _, n := range leftOut {
+		left += n
+	}
+	f.count("pairs read", read)
+	f.count("left out", left)
+	f.reasons(leftOut)
+	fmt.Fprintln(f.w)
+	f.figure("bits a pair, before fitting", before, 2)
+	f.figure("bits a pair, after", after, 2)
 }
 
 // manuscript writes how a manuscript was dealt with.
@@ -31,7 +47,7 @@ func (f figures) manuscript(name string, m assay.Manuscript) {
 	fmt.Fprintf(f.w, "%s: %s, %s\n\n", shown(name), counted(m.Words, "word", "words"), counted(m.Entries, "entry", "entries"))
 	f.count("planted forms", m.N)
 	f.count("left out", m.LeftOut)
-	f.reasons(m.Accuracy)
+	f.reasons(m.Reasons)
 	if m.SetAside > 0 {
 		f.count("entries set aside", m.SetAside)
 	}
@@ -55,9 +71,9 @@ func (f figures) accuracy(a assay.Accuracy) {
 }
 
 // reasons writes why some were left out.
-func (f figures) reasons(a assay.Accuracy) {
+func (f figures) reasons(counts map[assay.Reason]int) {
 	for _, why := range assay.Reasons() {
-		if n := a.Reasons[why]; n > 0 {
+		if n := counts[why]; n > 0 {
 			f.count("  "+string(why), n)
 		}
 	}

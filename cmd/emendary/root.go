@@ -50,7 +50,7 @@ Begin here:
 	root.SetFlagErrorFunc(flagError)
 	root.CompletionOptions.DisableDefaultCmd = true
 	root.AddCommand(newReview(p), newDocket(p), newCandidates(p), newAlign(p), newRule(p),
-		newApply(p), newReport(p), newAssay(p), newVersion(p), newCompletion(p))
+		newApply(p), newReport(p), newAssay(p), newFit(p), newVersion(p), newCompletion(p))
 	root.SetHelpCommand(newHelp())
 	for _, c := range root.Commands() {
 		c.DisableFlagsInUseLine = true

@@ -45,7 +45,7 @@ func AssayFolds(ctx context.Context, pairs []Pair, lex *lexicon.Lexicon, k int, 
 				others = append(others, p)
 			}
 		}
-		fit := ToFit(others)
+		fit, _ := ToFit(others)
 		if len(fit) == 0 {
 			return fmt.Errorf("%d folds leave no pairs to fit costs to beside those of one fold; give more pairs, or measure without folds", k)
 		}

@@ -139,7 +139,8 @@ func TestFoldsAreMeasuredAsOneByOne(t *testing.T) {
 				others = append(others, p)
 			}
 		}
-		costs, err := align.Fit(ctx, ToFit(others), align.Origin{}, nil)
+		fit, _ := ToFit(others)
+		costs, err := align.Fit(ctx, fit, align.Origin{}, nil)
 		require.NoError(t, err)
 		searches[fold] = docket.NewSearch(lex, costs)
 	}

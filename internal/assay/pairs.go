@@ -73,23 +73,31 @@ func heads(p Pair) bool {
 }
 
 // ToFit returns pairs as costs are fitted to them: folded, each word that may be
-// meant in its turn, all words of a pair together with the weight of one. Those
-// with an empty side, or that differ in capitals or apostrophes alone, have
-// nothing to tell and are left out.
-func ToFit(pairs []Pair) []align.Pair {
+// meant in its turn, all words of a pair together with the weight of one. Pairs
+// with an empty side, or that differ in capitals or apostrophes alone, have nothing
+// to tell: they are left out, and counted by the reason.
+func ToFit(pairs []Pair) (fit []align.Pair, leftOut map[Reason]int) {
 	var alphabet align.Alphabet
 	fold := func(text string) []align.Letter { return alphabet.AppendFolded(nil, key(text)) }
-	out := make([]align.Pair, 0, len(pairs))
+	fit, leftOut = make([]align.Pair, 0, len(pairs)), map[Reason]int{}
 	for _, p := range pairs {
-		form := fold(p.Form)
+		form, before := fold(p.Form), len(fit)
 		if len(form) == 0 {
+			leftOut[NoForm]++
+			continue
+		}
+		if len(p.Intended) == 0 {
+			leftOut[NoIntended]++
 			continue
 		}
 		for _, intended := range p.Intended {
-			if word := fold(intended); len(word) > 0 && !slices.Equal(form, word) {
-				out = append(out, align.Pair{Form: form, Word: word, Weight: 1 / float64(len(p.Intended))})
+			if word := fold(intended); !slices.Equal(form, word) {
+				fit = append(fit, align.Pair{Form: form, Word: word, Weight: 1 / float64(len(p.Intended))})
 			}
 		}
+		if len(fit) == before {
+			leftOut[SameWord]++
+		}
 	}
-	return out
+	return fit, leftOut
 }

@@ -68,7 +68,9 @@ func FuzzPairsHoldWhatFittingTakes(f *testing.F) {
 			return
 		}
 		assert.NotEmpty(t, pairs)
-		for _, p := range ToFit(pairs) {
+		fit, leftOut := ToFit(pairs)
+		assert.LessOrEqual(t, leftOut[NoForm]+leftOut[NoIntended]+leftOut[SameWord], len(pairs))
+		for _, p := range fit {
 			assert.NotEmpty(t, p.Form)
 			assert.NotEmpty(t, p.Word)
 			assert.NotEqual(t, p.Form, p.Word)
@@ -87,20 +89,28 @@ func TestPairsToFit(t *testing.T) {
 		name string
 		pair Pair
 		want []align.Pair
+		why  Reason
 	}{
-		{"one word", Pair{"Teh", []string{"The"}}, []align.Pair{pair("teh", "the", 1)}},
-		{"words share the weight", Pair{"wether", []string{"weather", "whether"}}, []align.Pair{pair("wether", "weather", 0.5), pair("wether", "whether", 0.5)}},
-		{"two words", Pair{"alot", []string{"a lot"}}, []align.Pair{pair("alot", "a lot", 1)}},
-		{"apostrophes", Pair{"dont", []string{"don’t"}}, []align.Pair{pair("dont", "don't", 1)}},
-		{"capitals alone", Pair{"america", []string{"America"}}, []align.Pair{}},
-		{"apostrophes alone", Pair{"don't", []string{"don’t"}}, []align.Pair{}},
-		{"accents encoded otherwise", Pair{"cre\u0300che", []string{"cr\u00e8che"}}, []align.Pair{}},
-		{"no form", Pair{"", []string{"the"}}, []align.Pair{}},
-		{"no word", Pair{"teh", nil}, []align.Pair{}},
+		{"one word", Pair{"Teh", []string{"The"}}, []align.Pair{pair("teh", "the", 1)}, ""},
+		{"words share the weight", Pair{"wether", []string{"weather", "whether"}}, []align.Pair{pair("wether", "weather", 0.5), pair("wether", "whether", 0.5)}, ""},
+		{"two words", Pair{"alot", []string{"a lot"}}, []align.Pair{pair("alot", "a lot", 1)}, ""},
+		{"apostrophes", Pair{"dont", []string{"don’t"}}, []align.Pair{pair("dont", "don't", 1)}, ""},
+		{"one of two words the same", Pair{"america", []string{"America", "Americas"}}, []align.Pair{pair("america", "americas", 0.5)}, ""},
+		{"capitals alone", Pair{"america", []string{"America"}}, []align.Pair{}, SameWord},
+		{"apostrophes alone", Pair{"don't", []string{"don’t"}}, []align.Pair{}, SameWord},
+		{"accents encoded otherwise", Pair{"cre\u0300che", []string{"cr\u00e8che"}}, []align.Pair{}, SameWord},
+		{"no form", Pair{"", []string{"the"}}, []align.Pair{}, NoForm},
+		{"no word", Pair{"teh", nil}, []align.Pair{}, NoIntended},
 	}
 	for _, tt := range tests {
 		t.Run(tt.name, func(t *testing.T) {
-			assert.Equal(t, tt.want, ToFit([]Pair{tt.pair}))
+			got, leftOut := ToFit([]Pair{tt.pair})
+			assert.Equal(t, tt.want, got)
+			want := map[Reason]int{}
+			if tt.why != "" {
+				want[tt.why] = 1
+			}
+			assert.Equal(t, want, leftOut)
 		})
 	}
 }

@@ -9,6 +9,10 @@ import (
 	"emendary/align"
 )
 
+// To fit the costs anew after align has changed, in this folder: go generate -run fit.
+//
+//go:generate go run emendary/cmd/emendary fit ../../testdata/wikipedia-misspellings.tsv -o english.costs --force --source "Wikipedia, Lists of common misspellings, in its form for machines, by its contributors (testdata/README.md)" --licence "CC BY-SA 3.0" --date 2026-12-01
+
 //go:embed english.costs
 var costsText []byte
 
