@@ -2,10 +2,8 @@ package align
 
 import (
 	"bufio"
-	"cmp"
 	"fmt"
 	"io"
-	"maps"
 	"slices"
 	"strconv"
 	"strings"
@@ -63,15 +61,15 @@ func (f *Fitted) WriteTo(w io.Writer) (int64, error) {
 	for _, r := range f.keys.rows {
 		line("keys", figure(r.shift), r.keys)
 	}
-	t := f.tally
+	c := f.counts
 	for side, name := range sideNames {
 		for p, at := range positionNames {
-			for look, r := range t.looks[side][p] {
+			for look, r := range c.looks[side][p] {
 				if r.met >= least {
 					line("look", name, at, strconv.Itoa(look), figure(r.met), figure(r.wrong))
 				}
 			}
-			for k, n := range t.kinds[side][p] {
+			for k, n := range c.kinds[side][p] {
 				if n >= least {
 					line("kind", name, at, kindNames[k], figure(n))
 				}
@@ -79,23 +77,23 @@ func (f *Fitted) WriteTo(w io.Writer) (int64, error) {
 		}
 	}
 	for side, name := range sideNames {
-		line("space", name, figure(t.spaces[side].met), figure(t.spaces[side].wrong))
+		line("space", name, figure(c.spaces[side].met), figure(c.spaces[side].wrong))
 	}
 	for p, at := range positionNames {
-		line("swaps", at, figure(t.swaps[p].met), figure(t.swaps[p].wrong))
+		line("swaps", at, figure(c.swaps[p].met), figure(c.swaps[p].wrong))
 	}
-	for _, i := range slices.Sorted(maps.Keys(t.spots)) {
-		if fields := t.spotFields(spotAt(i)); fields != nil {
-			line(fields...)
+	for i, s := range c.spots {
+		if s.met >= least {
+			line(s.fields(c.slipsOf(i, i+1))...)
 		}
 	}
-	for _, s := range sorted(t.met) {
-		if t.met[s] >= least {
-			line("stretch", s.String(), figure(t.met[s]), figure(t.swapped[s]))
+	for _, s := range c.stretches {
+		if s.met >= least {
+			line("stretch", s.of.String(), figure(s.met), figure(s.wrong))
 		}
 	}
-	for _, e := range t.longEdits() {
-		line("long", e.from.String(), e.to.String(), figure(t.long[e]))
+	for _, e := range c.long {
+		line("long", e.from.String(), e.to.String(), figure(e.n))
 	}
 	n, err := io.WriteString(w, b.String())
 	return int64(n), err
@@ -110,18 +108,16 @@ func figure(x float64) string {
 	return strings.TrimSuffix(strings.TrimRight(s, "0"), ".")
 }
 
-func (t *tally) spotFields(s spot) []string {
-	r := t.spots[s.index()]
-	if r.met < least {
-		return nil
-	}
+// fields are those of a spot with the slips there.
+func (r spotCount) fields(slips []slipCount) []string {
+	s := spotAt(int(r.at))
 	fields := []string{"letter", s.left.String(), s.letter.String(), s.right.String(), figure(r.met)}
 	if s.gap {
 		fields = []string{"gap", s.left.String(), s.right.String(), figure(r.met)}
 	}
-	for w, n := range t.slips[s.index()] {
-		if n >= least {
-			fields = append(fields, symbol(w).String(), figure(n))
+	for _, slip := range slips {
+		if slip.n >= least {
+			fields = append(fields, slip.written.String(), figure(slip.n))
 		}
 	}
 	return fields
@@ -133,17 +129,6 @@ func (t stretch) String() string {
 		b.WriteString(s.String())
 	}
 	return b.String()
-}
-
-// longEdits returns the edits of several letters in the order of a file.
-func (t *tally) longEdits() []longEdit {
-	return slices.SortedFunc(maps.Keys(t.long), func(a, b longEdit) int {
-		return cmp.Or(slices.Compare(a.to[:], b.to[:]), slices.Compare(a.from[:], b.from[:]))
-	})
-}
-
-func sorted(m map[stretch]float64) []stretch {
-	return slices.SortedFunc(maps.Keys(m), func(a, b stretch) int { return slices.Compare(a[:], b[:]) })
 }
 
 // fields are the numbers of a smoothing in the order of a file.
@@ -180,7 +165,7 @@ func ReadCosts(r io.Reader, name string) (*Fitted, error) {
 	if n == 0 || len(in.t.spots) == 0 {
 		return nil, fmt.Errorf("%s: it has no costs; fit some", name)
 	}
-	f := newFitted(in.t, newKeyboard(in.rows), in.smooth)
+	f := newFitted(in.t.rest(), newKeyboard(in.rows), in.smooth)
 	f.Origin = in.origin
 	return f, nil
 }
@@ -293,7 +278,9 @@ func (p *parser) stretch(s string) stretch {
 		return t
 	}
 	for i := range len(s) {
-		t[i] = p.symbol(s[i : i+1])
+		if t[i] = p.symbol(s[i : i+1]); t[i] == edge {
+			p.fail("%.30q is not one to three letters", s)
+		}
 	}
 	return t
 }

@@ -42,13 +42,14 @@ func Fit(ctx context.Context, pairs []Pair, origin Origin, progress func(done, t
 	if len(pairs) == 0 {
 		return nil, errors.New("no pairs to fit costs to; give misspelling and intended word, a pair a line")
 	}
-	f := Unfitted()
+	f, t := Unfitted(), guess()
 	total := roundsOfLetters + roundsOfLong
 	for round := range total {
 		if round == roundsOfLetters {
-			f = f.withLong(harvest(f, pairs))
+			t.long = harvest(f, pairs)
+			f = newFitted(t.rest(), f.keys, smooth)
 		}
-		t := newTally()
+		t = newTally()
 		for _, p := range pairs {
 			if err := ctx.Err(); err != nil {
 				return nil, err
@@ -57,7 +58,7 @@ func Fit(ctx context.Context, pairs []Pair, origin Origin, progress func(done, t
 			t.spaces[0].met += p.Weight
 			t.spaces[1].met += p.Weight
 		}
-		f = newFitted(t.prune(), f.keys, smooth)
+		f = newFitted(t.prune().rest(), f.keys, smooth)
 		if progress != nil {
 			progress(round+1, total)
 		}
@@ -68,7 +69,7 @@ func Fit(ctx context.Context, pairs []Pair, origin Origin, progress func(done, t
 }
 
 // Unfitted returns the costs that a fitting begins with, before any pair is seen.
-func Unfitted() *Fitted { return newFitted(guess(), newKeyboard(qwerty), smooth) }
+func Unfitted() *Fitted { return newFitted(guess().rest(), newKeyboard(qwerty), smooth) }
 
 // Bits returns how many bits a pair takes in the mean: −log₂ of the probability that
 // who means the word writes the form, by all their alignments together. That is what
@@ -131,7 +132,7 @@ func (f *Fitted) ways(form, word []Letter, lift float64) []way {
 				try(2, 2)
 			}
 			for m := 1; m <= 3 && i+m <= len(form); m++ {
-				for _, e := range f.longFrom[stretchOf(symbols[i:i+m])] {
+				for _, e := range f.longFrom(stretchOf(symbols[i : i+m])) {
 					if n := e.to.size(); j+n <= len(word) && stretchIn(word[j:j+n]) == e.to {
 						try(m, n)
 					}
@@ -244,13 +245,6 @@ func letterKey(letters []Letter) string {
 		b[i] = rune(l)
 	}
 	return string(b)
-}
-
-// withLong returns f with edits of several letters as often as counted.
-func (f *Fitted) withLong(counts map[longEdit]float64) *Fitted {
-	t := *f.tally
-	t.long = counts
-	return newFitted(&t, f.keys, f.smooth)
 }
 
 // misread are letters that print and handwriting make look like others (from

@@ -1,7 +1,7 @@
 package align
 
 import (
-	"maps"
+	"cmp"
 	"math"
 	"slices"
 )
@@ -28,14 +28,13 @@ const Grain = 1.0 / 1024
 type Fitted struct {
 	Origin Origin
 
-	tally    *tally
-	keys     keyboard
-	smooth   smoothing
-	kinds    [sides][positions][kinds]float64 // probabilities of the kinds where something goes wrong
-	swaps    [positions]float64               // probabilities of a transposition
-	chances  *chances
-	long     map[longEdit]int32      // in grains
-	longFrom map[stretch][]longPrice // the same, by the letters of the form
+	counts  *counts
+	keys    keyboard
+	smooth  smoothing
+	kinds   [sides][positions][kinds]float64 // probabilities of the kinds where something goes wrong
+	swaps   [positions]float64               // probabilities of a transposition
+	chances *chances
+	long    []longPrice // by the letters of the form, then of the word
 }
 
 // Origin says where costs come from.
@@ -54,51 +53,10 @@ type smoothing struct {
 	swap, long     float64
 }
 
-// longPrice is the price of an edit of several letters.
+// longPrice is the price of an edit of several letters, in grains.
 type longPrice struct {
-	to    stretch
+	longEdit
 	price int32
-}
-
-// chances are the counts of a tally by spot, and summed over neighbours, laid out
-// to be looked up fast.
-type chances struct {
-	letter [sides][symbols]ratio
-	left   [sides][symbols][symbols]ratio // letter before, letter
-	spots  []ratio                        // by index
-	// What was written, likewise; the rows of the finer levels are found by index.
-	letterSlips [sides][symbols][symbols]float64
-	leftRow     [sides][symbols][symbols]uint16
-	spotRow     []uint16
-	rows        [][symbols]float64 // row 0 is empty
-}
-
-func chancesOf(t *tally) *chances {
-	c := &chances{
-		spots: make([]ratio, 1<<16), spotRow: make([]uint16, 1<<16), rows: make([][symbols]float64, 1, 1+2*len(t.slips)),
-	}
-	add := func(r *ratio, q ratio) { r.met, r.wrong = r.met+q.met, r.wrong+q.wrong }
-	for _, i := range slices.Sorted(maps.Keys(t.spots)) { // sums are the same again in the same order
-		s, r := spotAt(i), t.spots[i]
-		add(&c.letter[s.side()][s.letter], r)
-		add(&c.left[s.side()][s.left][s.letter], r)
-		c.spots[i] = r
-	}
-	for _, i := range slices.Sorted(maps.Keys(t.slips)) {
-		s, written := spotAt(i), t.slips[i]
-		c.spotRow[i] = uint16(len(c.rows))
-		c.rows = append(c.rows, written)
-		row := &c.leftRow[s.side()][s.left][s.letter]
-		if *row == 0 {
-			*row = uint16(len(c.rows))
-			c.rows = append(c.rows, [symbols]float64{})
-		}
-		for w, n := range written {
-			c.letterSlips[s.side()][s.letter][w] += n
-			c.rows[*row][w] += n
-		}
-	}
-	return c
 }
 
 // blend is a ratio smoothed towards p, which counts for strength meetings.
@@ -109,23 +67,31 @@ func (r ratio) blend(p, strength float64) float64 {
 // wrong returns the probability that something goes wrong at s.
 func (f *Fitted) wrong(s spot, p position) float64 {
 	side, by := s.side(), &f.smooth.wrong
-	q := f.tally.looks[side][p][s.look()].blend(0.03, 30)
+	here := ratio{}
+	number, _, _ := f.find(s)
+	if number >= 0 {
+		here = f.counts.spots[number].ratio
+	}
+	q := f.counts.looks[side][p][s.look()].blend(0.03, 30)
 	q = f.chances.letter[side][s.letter].blend(q, by[0])
-	q = f.chances.left[side][s.left][s.letter].blend(q, by[1])
-	q = f.chances.spots[s.index()].blend(q, by[2])
-	return q
+	q = f.chances.group[s.index()/symbols].blend(q, by[1])
+	return here.blend(q, by[2])
 }
 
 // written returns the probability of that letter (the edge for none) being
 // written at s where something goes wrong.
 func (f *Fitted) written(s spot, p position, letter symbol) float64 {
 	side, by := s.side(), &f.smooth.written
+	here := ratio{}
+	number, first, next := f.find(s)
+	if number >= 0 {
+		here = ratio{f.counts.spots[number].wrong, written(f.counts.slipsOf(number, number+1), letter)}
+	}
 	kind, share := f.keys.kindOf(s, letter)
 	q := f.kinds[side][p][kind] * share
 	q = ratio{f.chances.letter[side][s.letter].wrong, f.chances.letterSlips[side][s.letter][letter]}.blend(q, by[0])
-	q = ratio{f.chances.left[side][s.left][s.letter].wrong, f.chances.rows[f.chances.leftRow[side][s.left][s.letter]][letter]}.blend(q, by[1])
-	q = ratio{f.chances.spots[s.index()].wrong, f.chances.rows[f.chances.spotRow[s.index()]][letter]}.blend(q, by[2])
-	return q
+	q = ratio{f.chances.group[s.index()/symbols].wrong, written(f.counts.slipsOf(first, next), letter)}.blend(q, by[1])
+	return here.blend(q, by[2])
 }
 
 // price turns a probability into grains; it is at least one grain, so that no
@@ -140,43 +106,53 @@ func (f *Fitted) kept(s spot, p position) int32 { return price(1 - f.wrong(s, p)
 
 func (f *Fitted) slipped(s spot, p position, letter symbol) int32 {
 	if side, ok := s.spaceOf(letter); ok {
-		return price(f.tally.spaces[side].blend(0.005, 200))
+		return price(f.counts.spaces[side].blend(0.005, 200))
 	}
 	return price(f.wrong(s, p) * f.written(s, p, letter))
 }
 
 // swap prices the transposition of the letters to, as the word has them.
 func (f *Fitted) swap(to stretch, p position) int32 {
-	return price(ratio{f.tally.met[to], f.tally.swapped[to]}.blend(f.swaps[p], f.smooth.swap))
+	return price(f.counts.stretch(to).blend(f.swaps[p], f.smooth.swap))
 }
 
-// newFitted works out the probabilities that a tally gives.
-func newFitted(t *tally, k keyboard, by smoothing) *Fitted {
-	f := &Fitted{tally: t, keys: k, smooth: by, chances: chancesOf(t), long: map[longEdit]int32{}, longFrom: map[stretch][]longPrice{}}
+// newFitted works out the probabilities that counts give.
+func newFitted(c *counts, k keyboard, by smoothing) *Fitted {
+	f := &Fitted{counts: c, keys: k, smooth: by, chances: chancesOf(c)}
 	for side := range sides {
 		for p := range positions {
 			all := 0.0
-			for _, n := range t.kinds[side][p] {
+			for _, n := range c.kinds[side][p] {
 				all += n
 			}
-			for kind, n := range t.kinds[side][p] {
+			for kind, n := range c.kinds[side][p] {
 				f.kinds[side][p][kind] = (n + 1) / (all + kinds)
 			}
 		}
 	}
 	for p := range positions {
-		f.swaps[p] = t.swaps[p].blend(0.002, 100)
+		f.swaps[p] = c.swaps[p].blend(0.002, 100)
 	}
-	for _, e := range t.longEdits() {
-		n, met := t.long[e], t.met[e.to]
+	f.long = make([]longPrice, len(c.long))
+	for i, e := range c.long {
+		met := c.stretch(e.to).met
 		if e.to.size() == 1 {
 			met += f.chances.letter[0][e.to[0]].met
 		}
-		c := price(n / (met + by.long))
-		f.long[e] = c
-		f.longFrom[e.from] = append(f.longFrom[e.from], longPrice{e.to, c})
+		f.long[i] = longPrice{e.longEdit, price(e.n / (met + by.long))}
 	}
+	slices.SortFunc(f.long, func(a, b longPrice) int { return cmp.Or(a.from.compare(b.from), a.to.compare(b.to)) })
 	return f
+}
+
+// longFrom returns the edits of those letters of a form as several or into several.
+func (f *Fitted) longFrom(from stretch) []longPrice {
+	first, _ := slices.BinarySearchFunc(f.long, from, func(e longPrice, from stretch) int { return e.from.compare(from) })
+	last := first
+	for last < len(f.long) && f.long[last].from == from {
+		last++
+	}
+	return f.long[first:last]
 }
 
 // Span implements [Costs].
@@ -199,8 +175,11 @@ func (f *Fitted) Cost(form []Letter, i, m int, word []Letter, j, n int) float64 
 	case m == 2 && n == 2 && swapped(form[i:i+2], word[j:j+2]):
 		grains = f.swap(stretchIn(word[j:j+2]), p)
 	default:
-		if long, ok := f.long[longEdit{stretchIn(form[i : i+m]), stretchIn(word[j : j+n])}]; ok {
-			grains = long
+		to := stretchIn(word[j : j+n])
+		for _, e := range f.longFrom(stretchIn(form[i : i+m])) {
+			if e.to == to {
+				grains = e.price
+			}
 		}
 	}
 	if grains < 0 {

@@ -155,6 +155,7 @@ func TestReadCostsRefusesWhatIsNone(t *testing.T) {
 		{"no number", "emendary costs 1\nletter\ta\tb\tc\tmany\n", `x: line 2: "many" is no count; fit the costs anew`},
 		{"below nothing", "emendary costs 1\nlong\tab\tc\t-1\n", `x: line 2: "-1" is no count; fit the costs anew`},
 		{"no letter", "emendary costs 1\ngap\ta\té\t1\n", `x: line 2: "é" is no letter; letters are written as one of #abcdefghijklmnopqrstuvwxyz'-_.*; fit the costs anew`},
+		{"the edge as a letter", "emendary costs 1\nlong\ta\t#a\t1\n", `x: line 2: "#a" is not one to three letters; fit the costs anew`},
 		{"too many letters", "emendary costs 1\nstretch\tabcd\t1\t0\n", `x: line 2: "abcd" is not one to three letters; fit the costs anew`},
 	}
 	for _, tt := range tests {
@@ -208,4 +209,52 @@ func TestFitMakesPairsLikelier(t *testing.T) {
 	_, err = again.WriteTo(&second)
 	require.NoError(t, err)
 	assert.Equal(t, file.String(), second.String(), "the same pairs give the same costs")
+}
+
+// Compiled costs are those of the file, to the last bit.
+func TestCompiledCostsAreThoseOfTheFile(t *testing.T) {
+	var file bytes.Buffer
+	_, err := someCosts(t).WriteTo(&file)
+	require.NoError(t, err)
+	read, err := align.ReadCosts(&file, "some.costs")
+	require.NoError(t, err)
+	compiled, err := read.AppendBinary(nil)
+	require.NoError(t, err)
+	opened, err := align.OpenCosts("some", string(compiled))
+	require.NoError(t, err)
+	require.Equal(t, read, opened)
+}
+
+func TestOpenCostsRefusesWhatIsNone(t *testing.T) {
+	compiled, err := someCosts(t).AppendBinary(nil)
+	require.NoError(t, err)
+	whole := string(compiled)
+	for n := range len(whole) {
+		_, err := align.OpenCosts("x", whole[:n])
+		require.ErrorContains(t, err, "x: no compiled costs: ", "the first %d bytes", n)
+	}
+	_, err = align.OpenCosts("x", whole+"a")
+	assert.EqualError(t, err, "x: no compiled costs: it ends too soon or too late; compile them anew")
+	_, err = align.OpenCosts("x", "emendary costs 1\n")
+	assert.EqualError(t, err, "x: no compiled costs: other first bytes than expected; compile them anew")
+}
+
+// Damaged costs are refused or priced; nothing else happens to them.
+func FuzzOpenCosts(f *testing.F) {
+	costs, err := align.Fit(context.Background(), []align.Pair{{Form: letters("teh"), Word: letters("the"), Weight: 1}}, align.Origin{Source: "a list"}, nil)
+	require.NoError(f, err)
+	compiled, err := costs.AppendBinary(nil)
+	require.NoError(f, err)
+	f.Add(string(compiled))
+	f.Add(string(compiled[:len(compiled)/2]))
+	f.Add("costs\x01\xff\xff")
+	f.Fuzz(func(t *testing.T, data string) {
+		costs, err := align.OpenCosts("x", data)
+		if err != nil {
+			assert.ErrorContains(t, err, "compile them anew")
+			return
+		}
+		align.Align(letters("cleer"), letters("clear"), costs)
+		costs.Sheet(letters("modem"))
+	})
 }

@@ -112,7 +112,7 @@ func (s *Sheet) findLong() {
 	}
 	for i := range s.form {
 		for m := 1; m <= 3 && i+m <= len(s.form); m++ {
-			for _, e := range s.costs.longFrom[stretchOf(s.symbols[i:i+m])] {
+			for _, e := range s.costs.longFrom(stretchOf(s.symbols[i : i+m])) {
 				l := LongEdit{i, m, e.to.size(), e.price, e.to}
 				s.long = append(s.long, l)
 				last := e.to[l.N-1]

@@ -113,17 +113,20 @@ var qwerty = []keyRow{{0, "qwertyuiop"}, {0.25, "asdfghjkl"}, {0.75, "zxcvbnm"}}
 func newKeyboard(rows []keyRow) keyboard {
 	const reach = 1.3 * 1.3
 	k := keyboard{rows: rows}
-	type spot struct{ x, y float64 }
-	spots := map[symbol]spot{}
+	type key struct {
+		there bool
+		x, y  float64
+	}
+	var at [symbols]key
 	for y, row := range rows {
 		for x, c := range row.keys {
-			spots[symbolOf(Letter(c))] = spot{row.shift + float64(x), float64(y)}
+			at[symbolOf(Letter(c))] = key{true, row.shift + float64(x), float64(y)}
 		}
 	}
-	for a, p := range spots {
-		for b, q := range spots {
+	for a, p := range at {
+		for b, q := range at {
 			dx, dy := p.x-q.x, p.y-q.y
-			k.near[a][b] = a != b && dx*dx+dy*dy < reach
+			k.near[a][b] = a != b && p.there && q.there && dx*dx+dy*dy < reach
 		}
 	}
 	return k

@@ -123,17 +123,23 @@ type longEdit struct{ from, to stretch }
 // ratio is how often something went wrong of the times it was met.
 type ratio struct{ met, wrong float64 }
 
-// tally is the counts. They need not be whole: an edit counts by its probability.
+// general is what is counted apart from letters.
+type general struct {
+	looks  [sides][positions][looks]ratio
+	kinds  [sides][positions][kinds]float64
+	swaps  [positions]ratio // of all stretches of two
+	spaces [sides]ratio     // words met: a space left out, or one too many
+}
+
+// tally is what is being counted. Counts need not be whole: an edit counts by its
+// probability.
 type tally struct {
-	looks   [sides][positions][looks]ratio
-	kinds   [sides][positions][kinds]float64
+	general
 	spots   map[int]ratio            // by index
 	slips   map[int][symbols]float64 // what was written at a spot that went wrong, by index
 	met     map[stretch]float64      // how often a stretch of the word was met
 	swapped map[stretch]float64      // how often it came out the other way round
-	swaps   [positions]ratio         // of all stretches of two
 	long    map[longEdit]float64     // edits of several letters
-	spaces  [sides]ratio             // words met: a space left out, or one too many
 }
 
 // spaceOf returns whether writing the given letter at s leaves a space out (side
