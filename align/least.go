@@ -11,7 +11,8 @@ type Least struct {
 	Twice  [symbols][]int32 // … and where it is the same
 	Delete []int32
 
-	Shift int32 // below all prices of edits that lengthen or shorten, for each letter
+	Lengthen int32 // below all prices of edits that make the word longer than the form, for each letter
+	Shorten  int32 // likewise shorter
 }
 
 // Symbol is a letter as prices tell letters apart.
@@ -21,7 +22,7 @@ func Symbol(l Letter) int { return int(symbolOf(l)) }
 func (s *Sheet) Least(l *Least) {
 	n := len(s.form)
 	l.Delete = l.Delete[:0]
-	l.Shift = math.MaxInt32
+	l.Lengthen, l.Shorten = math.MaxInt32, math.MaxInt32
 	for i := range n {
 		p := s.extra[i]
 		if p.least == 0 {
@@ -31,7 +32,7 @@ func (s *Sheet) Least(l *Least) {
 			}
 		}
 		l.Delete = append(l.Delete, p.least)
-		l.Shift = min(l.Shift, p.least)
+		l.Shorten = min(l.Shorten, p.least)
 	}
 	for c := symbol(1); c < symbols; c++ {
 		one, insert, twice := l.One[c][:0], l.Insert[c][:0], l.Twice[c][:0]
@@ -42,7 +43,7 @@ func (s *Sheet) Least(l *Least) {
 			}
 			insert = append(insert, p.least[c])
 			twice = append(twice, s.Insert(Spot{index: int(c)<<5 | int(c)}, i))
-			l.Shift = min(l.Shift, insert[i], twice[i])
+			l.Lengthen = min(l.Lengthen, insert[i], twice[i])
 			if i < n {
 				q := s.replace[i]
 				if q.least[c] == 0 {
@@ -54,8 +55,11 @@ func (s *Sheet) Least(l *Least) {
 		l.One[c], l.Insert[c], l.Twice[c] = one, insert, twice
 	}
 	for _, e := range s.long {
-		if shift := e.Shift(); shift > 0 {
-			l.Shift = min(l.Shift, e.Price/int32(shift))
+		switch {
+		case e.N > e.M:
+			l.Lengthen = min(l.Lengthen, e.Price/int32(e.N-e.M))
+		case e.N < e.M:
+			l.Shorten = min(l.Shorten, e.Price/int32(e.M-e.N))
 		}
 	}
 }
@@ -81,4 +85,45 @@ func (s *Sheet) leastOne(c symbol, i int) int32 {
 		}
 	}
 	return least
+}
+
+const (
+	// ReachBits and Reaches are the steps in which [Sheet.InsertsAtMost] and
+	// [Sheet.OnesAtMost] tell prices apart: half a bit each, up to 32 bits.
+	ReachBits = 9
+	Reaches   = 64
+)
+
+// InsertsAtMost returns a set of symbols ([Symbol]), a bit each, with all those whose
+// insertion before letter i of the form, after a letter with symbol left, costs at
+// most price; and maybe some that cost up to half a bit more.
+func (s *Sheet) InsertsAtMost(left uint8, i int, price int32) uint32 {
+	return s.omit[i].atMost(left, price, func(at Spot) int32 { return s.Insert(at, i) })
+}
+
+// OnesAtMost is the same for the symbols of letters that letter i of the form may be
+// written for: other letters than that one.
+func (s *Sheet) OnesAtMost(left uint8, i int, price int32) uint32 {
+	return s.replace[i].atMost(left, price, func(at Spot) int32 { return s.One(at, i) })
+}
+
+func (b *byBoth) atMost(left uint8, price int32, of func(Spot) int32) uint32 {
+	step := price >> ReachBits
+	switch {
+	case step < 0:
+		return 0
+	case step >= Reaches:
+		return math.MaxUint32
+	}
+	sets := b.reach[left&(symbols-1)]
+	if sets == nil {
+		sets = new([Reaches]uint32)
+		for c := symbol(1); c < symbols; c++ {
+			for n := of(Spot{-1, int(c)<<5 | int(left)}) >> ReachBits; n < Reaches; n++ {
+				sets[n] |= 1 << c
+			}
+		}
+		b.reach[left&(symbols-1)] = sets
+	}
+	return sets[step]
 }

@@ -43,7 +43,8 @@ type byLeft struct {
 // byBoth are prices by the letter of the word and the one before it.
 type byBoth struct {
 	price [symbols * symbols]int32
-	least [symbols]int32 // by letter of the word: where the one before is another
+	least [symbols]int32            // by letter of the word: where the one before is another
+	reach [symbols]*[Reaches]uint32 // by the letter before: see atMost
 }
 
 // LongEdit is an edit of several letters: it takes M letters of the form from the
@@ -138,20 +139,24 @@ func (s *Sheet) Spot(left Letter, first bool, letter Letter) Spot {
 	return Spot{letter, int(symbolOf(letter))<<5 | int(l)}
 }
 
+// SpotOf is Sheet.Spot for callers that know the symbols ([Symbol]) of letter and the
+// one before it, 0 for none.
+func SpotOf(letter Letter, symbol, left uint8) Spot {
+	return Spot{letter, int(symbol&31)<<5 | int(left&31)}
+}
+
 func (at Spot) letterSymbol() symbol { return symbol(at.index >> 5) }
 func (at Spot) left() symbol         { return symbol(at.index & 31) }
 
 // One returns the price of turning letter i of the form into the letter at a spot,
 // which is that of keeping it where they are the same.
 func (s *Sheet) One(at Spot, i int) int32 {
-	var p int32
+	p := s.replace[i].price[at.index]
 	if s.form[i] == at.letter {
 		p = s.keep[i].price[at.index&31]
-	} else {
-		p = s.replace[i].price[at.index]
 	}
 	if p == 0 {
-		p = s.newOne(at, i)
+		return s.newOne(at, i)
 	}
 	return p
 }
@@ -175,6 +180,10 @@ func (s *Sheet) Insert(at Spot, i int) int32 {
 	if p := s.omit[i].price[at.index]; p != 0 {
 		return p
 	}
+	return s.newInsert(at, i)
+}
+
+func (s *Sheet) newInsert(at Spot, i int) int32 {
 	where := spot{left: at.left(), letter: at.letterSymbol(), right: s.symbol(i)}
 	price := s.costs.slipped(where, positionOf(i, len(s.form)), edge)
 	s.omit[i].price[at.index] = price
@@ -191,6 +200,10 @@ func (s *Sheet) deleted(left symbol, i int) int32 {
 	if p := s.extra[i].price[left]; p != 0 {
 		return p
 	}
+	return s.newDeleted(left, i)
+}
+
+func (s *Sheet) newDeleted(left symbol, i int) int32 {
 	where := spot{gap: true, left: left, right: s.symbol(i + 1)}
 	price := s.costs.slipped(where, positionOf(i, len(s.form)), s.symbols[i])
 	s.extra[i].price[left] = price
@@ -221,9 +234,6 @@ func (e *LongEdit) Yields(letters []Letter) bool {
 	}
 	return true
 }
-
-// Shift returns by how many letters e makes a word longer or shorter than the form.
-func (e *LongEdit) Shift() int { return max(e.M-e.N, e.N-e.M) }
 
 // Symbols returns the symbols ([Symbol]) of the letters that e yields.
 func (e *LongEdit) Symbols() [3]uint8 {
