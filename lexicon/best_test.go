@@ -166,6 +166,97 @@ func TestBestIsThatOfAScan(t *testing.T) {
 	}
 }
 
+// requireScanned asks for the best n words of forms and compares them with those of a
+// scan.
+func requireScanned(t *testing.T, x *Lexicon, costs *align.Fitted, p Prior, forms []string, n int) {
+	r := x.Ranking(p, nil)
+	sheet := new(align.Sheet)
+	for _, form := range forms {
+		sheet.Reset(costs, x.alphabet.AppendFolded(nil, form))
+		want := scanned(x, costs, p, nil, form, n, math.MaxInt32)
+		require.Equal(t, want, r.Best(nil, sheet, n, math.MaxInt32), "%q", form)
+		want = slices.DeleteFunc(want, func(m Match) bool { return m.Total() > want[0].Total()+8<<10 })
+		require.Equal(t, want, r.Near(nil, sheet, n, 8<<10), "%q", form)
+	}
+}
+
+func listOf(t *testing.T, texts []string) *List {
+	var words []Word
+	for _, text := range texts {
+		words = append(words, Word{Text: text, Sources: []Source{{Category: "english", Class: "words", Level: 10}}})
+	}
+	l, err := NewList("words", words)
+	require.NoError(t, err)
+	return l
+}
+
+// randomTexts returns words of least to most letters out of some.
+func randomTexts(random *rand.Rand, n, least, most int, letters string) []string {
+	texts := make([]string, n)
+	for i := range texts {
+		for range least + random.IntN(most-least+1) {
+			texts[i] += string(letters[random.IntN(len(letters))])
+		}
+	}
+	return texts
+}
+
+// Where two letters changed over cost less than one written for another, the row with
+// the first of them may cost too much by itself, and the whole be within the bound.
+func TestBestWithTranspositionsCheaperThanSubstitutions(t *testing.T) {
+	random := rand.New(rand.NewPCG(23, 24))
+	var pairs [][2]string
+	for _, w := range randomTexts(random, 300, 2, 7, "abcd") {
+		i := random.IntN(len(w) - 1)
+		pairs = append(pairs, [2]string{w[:i] + w[i+1:i+2] + w[i:i+1] + w[i+2:], w})
+	}
+	costs := fitted(t, pairs)
+	sheet := costs.Sheet([]align.Letter("abcd"))
+	var least align.Least
+	sheet.Least(&least)
+	for i := range 3 {
+		for _, c := range "abcd" {
+			if c != rune(sheet.Form()[i]) {
+				require.Less(t, sheet.Swap(i), least.One[align.Symbol(align.Letter(c))][i])
+			}
+		}
+	}
+	x := New(listOf(t, randomTexts(random, 400, 1, 9, "abcd")), AnyVariety)
+	p := func(w Word, letters, use int) (int32, bool) { return int32(letters) << 9, true }
+	requireScanned(t, x, costs, p, randomTexts(random, 150, 1, 9, "abcd"), 5)
+}
+
+// Long words with four errors, and words longer than a machine word has bits, are no
+// further out of reach than others.
+func TestBestOfLongWordsWithFourErrors(t *testing.T) {
+	costs := fitted(t, listedPairs(t, 7))
+	random := rand.New(rand.NewPCG(25, 26))
+	for _, c := range []struct{ words, least, most int }{{300, 12, 24}, {60, 60, 75}, {30, 90, MaxLetters}} {
+		words := randomTexts(random, c.words, c.least, c.most, "abcdefgh")
+		x := New(listOf(t, words), AnyVariety)
+		var forms []string
+		for range 12 {
+			form := []byte(words[random.IntN(len(words))])
+			for range 4 {
+				i := random.IntN(len(form) - 1)
+				switch random.IntN(4) {
+				case 0:
+					form = slices.Delete(form, i, i+1)
+				case 1:
+					form = slices.Insert(form, i, form[random.IntN(len(form))])
+				case 2:
+					form[i] = form[random.IntN(len(form))]
+				case 3:
+					form[i], form[i+1] = form[i+1], form[i]
+				}
+			}
+			forms = append(forms, string(form))
+		}
+		p := func(w Word, letters, use int) (int32, bool) { return 8<<10 + int32(letters)<<9, true }
+		requireScanned(t, x, costs, p, forms, 3)
+	}
+}
+
 // Once the prices of some forms are known, a search allocates nothing.
 func TestBestAllocatesNothing(t *testing.T) {
 	pairs := listedPairs(t, 20)

@@ -23,7 +23,6 @@ type layer struct {
 	*List
 	toLetter []align.Letter          // by label
 	symbols  []uint8                 // by label: as prices tell letters apart
-	ahead    func() []ahead          // by node, worked out when it is first asked for
 	toLabel  map[align.Letter]uint32 // the inverse
 	ascii    [128]uint32             // the inverse for ASCII, and one more; 0 where there is none
 }
@@ -82,7 +81,6 @@ func newLayer(l *List, a *align.Alphabet) *layer {
 		}
 	}
 	y.symbols = symbolsOf(y.toLetter)
-	y.ahead = sync.OnceValue(func() []ahead { return lookAhead(&y.trie, y.symbols) })
 	return y
 }
 

@@ -16,10 +16,12 @@ type own struct {
 	trie     trie // not minimal: a node for each beginning
 	toLetter []align.Letter
 	symbols  []uint8
-	ahead    []ahead   // by node
 	words    []ownWord // by their letters
 	starts   []uint32  // by number in the trie: its first word; and where the last one's end
 	ends     []uint32  // by arc: the number of the word that ends on it
+	reversed reversed  // the same words from their ends, likewise
+	back     trie      // that one before it is packed
+	begins   []uint32  // by arc of that: the number of the word that begins on it
 	numbers  map[ownKey]uint32
 }
 
@@ -36,10 +38,12 @@ type ownKey struct {
 	number uint32
 }
 
-// ownPrices are the prices of own words, and the least below each arc of their
-// trie.
+// ownPrices are the prices of own words, and by arc of either trie the least of the
+// words through it, two ways: above what a word of its length costs at least, and as
+// it is. Arc 0 has the least of all.
 type ownPrices struct {
-	words, below []int32
+	words             []int32
+	forward, backward [2][]int32
 }
 
 // ownWords finds the known words among used, and makes a trie of them.
@@ -157,7 +161,13 @@ func (o *own) grow() {
 		}
 	}
 	o.trie, o.ends = growPaths(paths)
-	o.ahead = lookAhead(&o.trie, o.symbols)
+	for i := range paths {
+		slices.Reverse(paths[i].labels)
+	}
+	slices.SortFunc(paths, func(x, y ownPath) int { return slices.Compare(x.labels, y.labels) })
+	back, begins := growPaths(paths)
+	o.reversed, o.begins = packed(back, len(o.toLetter)), begins
+	o.back = back
 }
 
 // ownPath is the path of an own word in a trie.
@@ -205,28 +215,52 @@ func growPaths(paths []ownPath) (trie, []uint32) {
 	return t, ends
 }
 
-// price asks a prior for the prices of all own words.
-func (o *own) price(p Prior) ownPrices {
+// price asks a prior for the prices of all own words; lengths are what words of lists
+// cost at least.
+func (o *own) price(p Prior, lengths []int32) ownPrices {
 	prices := ownPrices{words: make([]int32, len(o.words))}
 	for i := range o.words {
 		w := &o.words[i]
 		prices.words[i] = p.ask(w.word, len(w.letters), w.use)
 	}
-	prices.below = make([]int32, len(o.ends))
-	for arc := range prices.below {
-		prices.below[arc] = never
-		for a := o.trie.arcs[2*arc+1]; a != 0; a++ {
-			least := prices.below[a] // nodes stand after those they lead to
-			if o.trie.arcs[2*a]&endsWord != 0 {
-				least = min(least, prices.least(o, o.ends[a]))
-			}
-			prices.below[arc] = min(prices.below[arc], least)
-			if o.trie.arcs[2*a]&lastArc != 0 {
-				break
+	for way := range 2 {
+		floors := make([]int32, max(len(o.starts), 1)-1) // by number
+		for n := range floors {
+			of := o.starts[n]
+			floors[n] = slices.Min(prices.words[of:o.starts[n+1]])
+			if way == 0 {
+				floors[n] -= lengths[len(o.words[of].letters)]
 			}
 		}
+		prices.forward[way] = floorsThrough(&o.trie, o.ends, floors)
+		prices.backward[way] = floorsThrough(&o.back, o.begins, floors)
 	}
 	return prices
+}
+
+// floorsThrough returns by arc of a trie the least floor of the words through it; ends
+// has the numbers of the words that end on arcs.
+func floorsThrough(t *trie, ends []uint32, floors []int32) []int32 {
+	through := slices.Repeat([]int32{never}, len(ends))
+	nodes := slices.Repeat([]int32{never}, len(ends)) // by first arc
+	first := 1
+	for arc := 1; arc < len(ends); arc++ { // nodes stand after those they lead to
+		head := t.arcs[2*arc]
+		if child := t.arcs[2*arc+1]; child != 0 {
+			through[arc] = nodes[child]
+		}
+		if head&endsWord != 0 {
+			through[arc] = min(through[arc], floors[ends[arc]])
+		}
+		nodes[first] = min(nodes[first], through[arc])
+		if head&lastArc != 0 {
+			first = arc + 1
+		}
+	}
+	if len(through) > 0 {
+		through[0] = slices.Min(through)
+	}
+	return through
 }
 
 // of returns the own price of an entry; false where the manuscript does not use
@@ -242,9 +276,4 @@ func (o *own) of(prices *ownPrices, e entry) (int32, bool) {
 		}
 	}
 	return 0, false
-}
-
-// least returns the least price of the written forms of own word number.
-func (p *ownPrices) least(o *own, number uint32) int32 {
-	return slices.Min(p.words[o.starts[number]:o.starts[number+1]])
 }

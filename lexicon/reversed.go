@@ -42,7 +42,11 @@ func reverse(words [][]uint32, letters int) reversed {
 	for _, w := range turned {
 		b.add(w)
 	}
-	t := b.finish()
+	return packed(b.finish(), letters)
+}
+
+// packed returns a trie over so many letters in the form of a reversed automaton.
+func packed(t trie, letters int) reversed {
 	r := reversed{root: t.root, childBit: childBit(letters)}
 	if len(t.skips) > 1<<max(32-r.childBit, 0) {
 		return reversed{childBit: r.childBit}
