@@ -18,26 +18,58 @@ type reasoned struct {
 // Each stands between spaces, quotes, angle brackets or dashes; punctuation
 // after it is no part of it. What lies in skips is left alone.
 func addresses(text string, skips []extent) []reasoned {
-	if !strings.ContainsAny(text, "@#/\\_") && !strings.Contains(text, "www.") && !strings.Contains(text, ".") {
-		return nil
-	}
 	var found []reasoned
 	for at := 0; at < len(text); {
-		n := strings.IndexFunc(text[at:], endsChunk)
-		if n < 0 {
-			n = len(text) - at
+		sign := addressSign(text, at)
+		if sign < 0 {
+			break
 		}
-		if n > 2 && mayBeAddress(text[at:at+n]) {
-			from, to := trimChunk(text, at, at+n)
+		from, to := at, len(text)
+		if i := strings.LastIndexFunc(text[at:sign], endsChunk); i >= 0 {
+			_, size := utf8.DecodeRuneInString(text[at+i:])
+			from = at + i + size
+		}
+		if i := strings.IndexFunc(text[sign:], endsChunk); i >= 0 {
+			to = sign + i
+		}
+		at = to
+		if to-from > 2 {
+			from, to = trimChunk(text, from, to)
 			if reason := addressReason(text[from:to]); reason != "" && !overlaps(skips, from, to) {
 				found = append(found, reasoned{extent{from, to}, reason})
 			}
 		}
-		at += n
-		_, size := utf8.DecodeRuneInString(text[at:])
-		at += size
 	}
 	return found
+}
+
+// addressSign returns where the first sign of an address stands from byte at on,
+// -1 where none does: an address holds one of them, or a point that is not its last
+// character. Most paragraphs have none; searches for one byte tell so fastest.
+func addressSign(text string, at int) int {
+	first := -1
+	for _, c := range [...]byte{'@', '#', '/', '\\', '_'} {
+		if i := strings.IndexByte(text[at:], c); i >= 0 {
+			first = at + i
+			text = text[:first]
+		}
+	}
+	for i := at; ; i++ {
+		n := strings.IndexByte(text[i:], '.')
+		if n < 0 {
+			return first
+		}
+		i += n
+		if i+1 == len(text) {
+			if first < 0 {
+				return -1
+			}
+			return i // before another sign
+		}
+		if r, _ := utf8.DecodeRuneInString(text[i+1:]); !endsChunk(r) {
+			return i
+		}
+	}
 }
 
 func endsChunk(r rune) bool {
@@ -48,22 +80,6 @@ func endsChunk(r rune) bool {
 		return true
 	}
 	return strings.ContainsRune("“”‘’«»—–…", r)
-}
-
-// mayBeAddress is a quick no to most words: an address holds one of its signs,
-// or a point that is not its last character.
-func mayBeAddress(chunk string) bool {
-	for i := range len(chunk) {
-		switch chunk[i] {
-		case '@', '#', '/', '\\', '_':
-			return true
-		case '.':
-			if i+1 < len(chunk) {
-				return true
-			}
-		}
-	}
-	return false
 }
 
 // trimChunk takes brackets and quotes off both ends, points and the like off

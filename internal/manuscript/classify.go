@@ -9,9 +9,7 @@ import (
 // classify adds the traits and the fault that a word shows by itself.
 func classify(w *Word) {
 	if isPlain(w.Text) {
-		if strings.IndexByte("ivxl", w.Text[0]) >= 0 && isRomanWord(w.Text) {
-			w.Traits |= Roman
-		}
+		classifyPlain(w)
 		return
 	}
 	base, possessive := Base(w.Text)
@@ -46,6 +44,16 @@ func classify(w *Word) {
 	}
 	if strings.Contains(w.Text, "‘") && w.Fault == NoFault {
 		w.Fault, w.Instead = TurnedApostrophe, strings.ReplaceAll(w.Text, "‘", "’")
+	}
+}
+
+// classifyPlain is classify for a word that isPlain.
+func classifyPlain(w *Word) {
+	switch w.Text[0] {
+	case 'i', 'v', 'x', 'l':
+		if isRomanWord(w.Text) {
+			w.Traits |= Roman
+		}
 	}
 }
 

@@ -74,6 +74,22 @@ func composed(text string) string {
 	return norm.NFC.String(text)
 }
 
+// reads returns a word as it reads: in NFC, without line breaks and without
+// characters that only say where it may break. Most words are so already.
+func reads(raw string) string {
+	plain := true
+	for i := range len(raw) {
+		plain = plain && raw[i] < utf8.RuneSelf && raw[i] != '\n'
+	}
+	if plain {
+		return raw
+	}
+	if strings.ContainsAny(raw, "\n\u00AD\u2060\uFEFF") {
+		raw = strings.NewReplacer("\n", "", "\u00AD", "", "\u2060", "", "\uFEFF", "").Replace(raw)
+	}
+	return composed(raw)
+}
+
 // isFormatting tells the characters that say where a word may break: soft
 // hyphen, word joiner and zero width no-break space.
 func isFormatting(text string) bool {

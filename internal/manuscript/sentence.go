@@ -65,7 +65,10 @@ func (s *sentence) pass(i int) {
 // word takes in a word that ends at token last, and reports whether it starts a
 // sentence.
 func (s *sentence) word(last int, w *Word) bool {
-	r, _ := utf8.DecodeRuneInString(strings.TrimLeft(w.Text, "'’‘-"))
+	r := rune(w.Text[0])
+	if r < 'A' || r > 'z' {
+		r, _ = utf8.DecodeRuneInString(strings.TrimLeft(w.Text, "'’‘-"))
+	}
 	starts := s.starts && !(s.strict && unicode.IsLower(r))
 	s.starts, s.strict, s.point, s.pause = false, false, false, false
 	if w.Traits&Initial != 0 && strings.HasSuffix(w.Text, ".") && unicode.IsLower(r) && !isAbbreviation(strings.ReplaceAll(w.Text, ".", ""), "") {

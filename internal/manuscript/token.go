@@ -4,8 +4,6 @@ import (
 	"strings"
 	"unicode"
 	"unicode/utf8"
-
-	"github.com/rivo/uniseg"
 )
 
 // kind is what a token is to the splitter.
@@ -30,55 +28,7 @@ type token struct {
 	kind       kind
 	role       role // of a single quote
 	speech     bool // stands in speech
-}
-
-// segments calls yield with each segment of text between two word boundaries of
-// UAX #29, untailored. It takes O(n) time.
-//
-// Runs of ASCII are cut here, the rest by the library; a run ends only where no
-// rule could join what follows, so the library may start afresh after it.
-func segments(text string, yield func(segment string)) {
-	state := -1
-	for len(text) > 0 {
-		if n := plainRun(text); n > 0 {
-			yield(text[:n])
-			text, state = text[n:], -1
-			continue
-		}
-		var segment string
-		segment, text, state = uniseg.FirstWordInString(text, state)
-		yield(segment)
-	}
-}
-
-// plainRun returns the length of the segment that text begins with where it is
-// a run of ASCII letters, digits and underscores (rules WB5, WB8 to WB10, WB13a
-// and WB13b) or one space, and its end is certain; else 0.
-func plainRun(text string) int {
-	n := 0
-	for n < len(text) && isAlphanumeric(text[n]) {
-		n++
-	}
-	switch {
-	case n == 0:
-		if text[0] == ' ' && len(text) > 1 && text[1] < utf8.RuneSelf && text[1] != ' ' {
-			return 1
-		}
-		return 0
-	case n == len(text):
-		return n
-	case text[n] >= utf8.RuneSelf:
-		return 0
-	case strings.IndexByte("'.:,;", text[n]) < 0:
-		return n
-	case n+1 == len(text) || text[n+1] < utf8.RuneSelf && !isAlphanumeric(text[n+1]):
-		return n // WB6, WB7, WB11 and WB12 need a letter or digit on both sides
-	}
-	return 0
-}
-
-func isAlphanumeric(c byte) bool {
-	return 'a' <= c && c <= 'z' || 'A' <= c && c <= 'Z' || '0' <= c && c <= '9' || c == '_'
+	plain      bool // a wordToken that isPlain
 }
 
 // tokenise appends the tokens of text to s.tokens.
@@ -103,13 +53,15 @@ func (s *splitter) add(start, end int, k kind) {
 }
 
 func (s *splitter) tokeniseRun(text string, start, end int) {
-	segments(text[start:end], func(segment string) {
-		if k := kindOf(segment); k == wordToken {
-			s.cut(segment, start)
-		} else {
-			s.add(start, start+len(segment), k)
+	segments(text[:end], start, func(g segment) {
+		switch {
+		case g.kind == wordToken && g.whole:
+			s.tokens = append(s.tokens, token{start: int32(g.start), end: int32(g.end), kind: wordToken, plain: g.plain})
+		case g.kind == wordToken:
+			s.cut(text[g.start:g.end], g.start)
+		default:
+			s.add(g.start, g.end, g.kind)
 		}
-		start += len(segment)
 	})
 }
 

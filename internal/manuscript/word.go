@@ -50,8 +50,8 @@ type splitter struct {
 	tokens []token
 	ahead  []following
 	open   []quotation // while speech is marked
-	words  []Word
-	store  []Word // where the next paragraphs' words go
+	words  []Word      // of the paragraph, at the start of store
+	store  []Word      // where the next paragraphs' words go
 }
 
 // wordsPerStore is how many words are allocated at once.
@@ -66,10 +66,12 @@ const wordsPerStore = 4096
 // It takes O(n) time.
 func (s *splitter) split(text string, base Setting, italics, skips []extent) ([]Word, []reasoned) {
 	skipped := addresses(text, skips)
-	s.tokens, s.words = s.tokens[:0], s.words[:0]
+	s.tokens = s.tokens[:0]
 	s.tokenise(text, withAddresses(text, skips, skipped))
-	s.assignRoles(text)
-	s.markSpeech(text)
+	if s.count() {
+		s.assignRoles(text)
+		s.markSpeech(text)
+	}
 	sentence := sentence{text: text, tokens: s.tokens, starts: true, heading: base == Heading}
 	for i := 0; i < len(s.tokens); i++ {
 		t := s.tokens[i]
@@ -77,8 +79,19 @@ func (s *splitter) split(text string, base Setting, italics, skips []extent) ([]
 			sentence.pass(i)
 			continue
 		}
-		first, last := s.extend(text, i)
-		w := s.word(text, first, last)
+		last := i
+		s.words = append(s.words, Word{})
+		w := &s.words[len(s.words)-1]
+		if t.plain && s.standsAlone(i) {
+			w.Start, w.End = int(t.start), int(t.end)
+			w.Text = text[w.Start:w.End]
+			classifyPlain(w)
+		} else {
+			s.words = s.words[:len(s.words)-1]
+			first := 0
+			first, last = s.extend(text, i)
+			s.words = append(s.words, s.word(text, first, last))
+		}
 		for len(italics) > 0 && italics[0].end <= int(t.start) {
 			italics = italics[1:]
 		}
@@ -86,28 +99,57 @@ func (s *splitter) split(text string, base Setting, italics, skips []extent) ([]
 		if base == Heading {
 			w.Traits |= HeadingWord
 		}
-		if sentence.word(last, &w) {
+		if sentence.word(last, w) {
 			w.Traits |= SentenceStart
 		}
-		s.words = append(s.words, w)
 		i = last
 	}
 	return s.keep(), skipped
 }
 
-// keep moves the words to memory that stays.
+// count makes room for the words that the tokens may be, and reports whether there
+// are quotes among the tokens.
+func (s *splitter) count() (quotes bool) {
+	words := 0
+	for i := range s.tokens {
+		switch s.tokens[i].kind {
+		case wordToken:
+			words++
+		case single, double:
+			quotes = true
+		}
+	}
+	if words > len(s.store) {
+		s.store = make([]Word, max(words, wordsPerStore))
+	}
+	s.words = s.store[:0:words]
+	return quotes
+}
+
+// standsAlone reports whether token i, a plain word, is surely a word by itself: by
+// the rules at extend, nothing that stands beside it could be joined to it.
+func (s *splitter) standsAlone(i int) bool {
+	switch s.kindAt(i - 1) {
+	case single, hyphen:
+		return false
+	}
+	switch s.kindAt(i + 1) {
+	case single, hyphen:
+		return false
+	case end:
+		return s.tokens[i].end-s.tokens[i].start > 1
+	}
+	return true
+}
+
+// keep returns the paragraph's words, and leaves the rest of the store for others.
 func (s *splitter) keep() []Word {
 	n := len(s.words)
 	if n == 0 {
 		return nil
 	}
-	if n > len(s.store) {
-		s.store = make([]Word, max(n, wordsPerStore))
-	}
-	kept := s.store[:n:n]
 	s.store = s.store[n:]
-	copy(kept, s.words)
-	return kept
+	return s.words[:n:n]
 }
 
 // setting applies the precedence stated at Setting.
@@ -331,22 +373,6 @@ func (s *splitter) word(text string, first, last int) Word {
 	return w
 }
 
-// reads returns a word as it reads: in NFC, without line breaks and without
-// characters that only say where it may break. Most words are so already.
-func reads(raw string) string {
-	plain := true
-	for i := range len(raw) {
-		plain = plain && raw[i] < utf8.RuneSelf && raw[i] != '\n'
-	}
-	if plain {
-		return raw
-	}
-	if strings.ContainsAny(raw, "\n\u00AD\u2060\uFEFF") {
-		raw = strings.NewReplacer("\n", "", "\u00AD", "", "\u2060", "", "\uFEFF", "").Replace(raw)
-	}
-	return composed(raw)
-}
-
 func (s *splitter) startsWithDigit(text string, i int) bool {
 	return s.kindAt(i) == wordToken && isDigitAt(text, int(s.tokens[i].start))
 }
@@ -359,24 +385,4 @@ func isClippedAt(s *splitter, text string, i int) bool {
 	}
 	word := s.wordAt(text, i-1)
 	return isClipped(word) || word == "n" && i >= 2 && s.tokens[i-2].kind == single
-}
-
-// Base splits a possessive off: "harber’s" is "harber" and "’s", "pilots’" is
-// "pilots" and "’". The apostrophe may be straight, curly or turned. A word
-// that is no possessive is its own base; what ends in ’s for is or has (it’s)
-// cannot be told from one.
-func Base(text string) (base, possessive string) {
-	stem := text
-	if n := len(stem); n > 0 && (stem[n-1] == 's' || stem[n-1] == 'S') {
-		stem = stem[:n-1]
-	}
-	r, n := utf8.DecodeLastRuneInString(stem)
-	cut := stem[:len(stem)-n]
-	if !strings.ContainsRune("'’‘ʼ", r) || strings.Trim(cut, "'’‘ʼ") == "" {
-		return text, ""
-	}
-	if stem == text && strings.IndexByte("sSxXzZ", cut[len(cut)-1]) < 0 {
-		return text, ""
-	}
-	return cut, text[len(cut):]
 }
