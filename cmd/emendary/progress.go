@@ -1,14 +1,21 @@
 package main
 
 import (
+	"fmt"
 	"io"
 	"time"
 
-	"github.com/schollz/progressbar/v3"
+	"github.com/charmbracelet/bubbles/progress"
+	"github.com/charmbracelet/x/ansi"
+	"github.com/muesli/termenv"
 )
 
-// patience is how long work may take before a progress bar is worth its line.
-const patience = 500 * time.Millisecond
+// patience is how long work may take before a progress bar is worth its line, and
+// pause how long a bar stays as it is.
+const (
+	patience = 500 * time.Millisecond
+	pause    = 100 * time.Millisecond
+)
 
 // meter shows how far long work has come. The zero value shows nothing.
 type meter struct {
@@ -16,7 +23,7 @@ type meter struct {
 	what  string
 	now   func() time.Time
 	began time.Time
-	bar   *progressbar.ProgressBar
+	drawn time.Time // zero where no bar is on the screen
 }
 
 // meter returns a meter of the work called what. It shows something only where
@@ -30,21 +37,24 @@ func (p *program) meter(what string) *meter {
 
 // step says how far the work has come.
 func (m *meter) step(done, total int) {
-	if m.w == nil || total == 0 || m.now().Sub(m.began) < patience {
+	if m.w == nil || total == 0 {
 		return
 	}
-	if m.bar == nil {
-		m.bar = progressbar.NewOptions(total, progressbar.OptionSetWriter(m.w), progressbar.OptionSetDescription(m.what),
-			progressbar.OptionSetTheme(progressbar.ThemeASCII), progressbar.OptionSetWidth(30),
-			progressbar.OptionSetPredictTime(false), progressbar.OptionClearOnFinish(), progressbar.OptionThrottle(100*time.Millisecond))
+	now := m.now()
+	if now.Sub(m.began) < patience || now.Sub(m.drawn) < pause {
+		return
 	}
-	_ = m.bar.Set(done) // a bar that cannot be drawn is no matter
+	m.drawn = now
+	bar := progress.New(progress.WithWidth(30), progress.WithFillCharacters('=', ' '), progress.WithoutPercentage(),
+		progress.WithColorProfile(termenv.Ascii))
+	part := float64(done) / float64(total)
+	fmt.Fprintf(m.w, "\r%s %3.0f%% [%s]", m.what, 100*part, bar.ViewAs(part))
 }
 
 // clear takes the bar off the screen.
 func (m *meter) clear() {
-	if m.bar != nil {
-		_ = m.bar.Clear()
-		m.bar = nil
+	if !m.drawn.IsZero() {
+		fmt.Fprint(m.w, "\r"+ansi.EraseEntireLine+"\r")
+		m.drawn = time.Time{}
 	}
 }

@@ -199,9 +199,15 @@ func TestTheMeterShowsLongWorkAlone(t *testing.T) {
 	assert.Empty(t, screen.String())
 	now = now.Add(1)
 	m.step(3, 10)
-	assert.Contains(t, screen.String(), "reading  30%")
+	bar := "\rreading  30% [=========                     ]"
+	assert.Equal(t, bar, screen.String())
+	now = now.Add(pause - 1)
+	m.step(4, 10)
+	assert.Equal(t, bar, screen.String(), "a bar so new stays")
 	m.clear()
-	assert.True(t, strings.HasSuffix(screen.String(), "\r"), "%q", screen.String())
+	assert.Equal(t, bar+"\r\x1b[2K\r", screen.String())
+	m.clear()
+	assert.Equal(t, bar+"\r\x1b[2K\r", screen.String())
 
 	screen.Reset()
 	p := &program{printer: newPrinter(nil, io.Discard, &screen)} // no terminal
