@@ -158,12 +158,15 @@ func (x *Lexicon) weigh(y *layer, which Layer, p Prior) *weights {
 	}
 	w.leasts = make([]int32, len(members)*PriorLetters)
 	for kind, set := range members {
-		for i := range PriorLetters {
-			least := never
-			for rest := set; rest != 0; rest &= rest - 1 {
-				least = min(least, rows[bits.TrailingZeros64(rest)][i])
+		least := (*row)(w.leasts[kind*PriorLetters:])
+		for i := range least {
+			least[i] = never
+		}
+		for rest := set; rest != 0; rest &= rest - 1 {
+			of := &rows[bits.TrailingZeros64(rest)]
+			for i := range least {
+				least[i] = min(least[i], of[i])
 			}
-			w.leasts[kind*PriorLetters+i] = least
 		}
 	}
 	return w
