@@ -19,7 +19,7 @@ type census struct {
 // count reads all words of doc into a census. O(words); it stops when ctx ends.
 func count(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon, progress func(done, total int)) (*census, error) {
 	c := &census{forms: map[string]*form{}}
-	seen := map[string]*form{} // by the word as it stands, to look each up once
+	var seen manuscript.Table[*form] // by the word as it stands, to look each up once
 	for i := range doc.Paragraphs {
 		if i%512 == 0 {
 			if err := ctx.Err(); err != nil {
@@ -28,24 +28,33 @@ func count(ctx context.Context, doc *manuscript.Document, lex *lexicon.Lexicon, 
 			progress(i, len(doc.Paragraphs))
 		}
 		p := &doc.Paragraphs[i]
-		for j, w := range p.Words {
+		for j := range p.Words {
+			w := &p.Words[j]
 			c.size++
-			alike := w.Traits&(manuscript.Broken|manuscript.Elision) == 0 && w.Fault == manuscript.NoFault
-			f := seen[w.Text]
-			if f == nil || !alike {
-				f = c.form(plainApostrophe(part(p, w, lex).text))
-				if w.Fault != manuscript.NoFault {
-					f.fault, f.instead = w.Fault, w.Instead
+			var f *form
+			if w.Traits&(manuscript.Broken|manuscript.Elision) == 0 && w.Fault == manuscript.NoFault {
+				kept := seen.At(w.Text)
+				if *kept == nil {
+					*kept = c.formOf(p, w, lex)
 				}
-			}
-			if alike {
-				seen[w.Text] = f
+				f = *kept
+			} else {
+				f = c.formOf(p, w, lex)
 			}
 			f.places = append(f.places, place{int32(i), int32(j)})
 		}
 	}
 	progress(len(doc.Paragraphs), len(doc.Paragraphs))
 	return c, nil
+}
+
+// formOf returns the form of a word, with the word's fault if it has one.
+func (c *census) formOf(p *manuscript.Paragraph, w *manuscript.Word, lex *lexicon.Lexicon) *form {
+	f := c.form(plainApostrophe(part(p, *w, lex).text))
+	if w.Fault != manuscript.NoFault {
+		f.fault, f.instead = w.Fault, w.Instead
+	}
+	return f
 }
 
 // form returns the form with that text, a new one where there is none.

@@ -24,6 +24,16 @@ type segment struct {
 func segments(text string, start int, yield func(segment)) {
 	state := -1
 	for start < len(text) {
+		// Most of prose is a word in small letters and one space.
+		if c := text[start]; 'a' <= c|0x20 && c|0x20 <= 'z' {
+			i := smallRun(text, start+1)
+			if i+1 < len(text) && text[i] == ' ' && text[i+1] > ' ' && text[i+1] < utf8.RuneSelf {
+				yield(segment{start, i, wordToken, true, true})
+				yield(segment{start: i, end: i + 1, kind: space})
+				start, state = i+1, -1
+				continue
+			}
+		}
 		g := scan(text, start)
 		if g.end > start {
 			state = -1
@@ -202,9 +212,7 @@ func scanWord(text string, start, i int, first of) segment {
 func smallRun(text string, i int) int {
 	const ones, high = 0x0101010101010101, 0x8080808080808080
 	for ; i+8 <= len(text); i += 8 {
-		b := text[i : i+8]
-		v := uint64(b[0]) | uint64(b[1])<<8 | uint64(b[2])<<16 | uint64(b[3])<<24 |
-			uint64(b[4])<<32 | uint64(b[5])<<40 | uint64(b[6])<<48 | uint64(b[7])<<56
+		v := eightBytes(text[i:])
 		// Of seven bits, adding takes those from 'a' on over the high bit, and those
 		// beyond 'z'; no byte carries into the next.
 		low := v &^ high

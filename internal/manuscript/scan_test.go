@@ -1,6 +1,7 @@
 package manuscript
 
 import (
+	"maps"
 	"math/rand/v2"
 	"os"
 	"slices"
@@ -193,6 +194,7 @@ func FuzzSplit(f *testing.F) {
 	f.Fuzz(func(t *testing.T, text string) {
 		if utf8.ValidString(text) { // as all that is decoded is
 			c.agrees(t, text)
+			require.Equal(t, countSlowly(text), maps.Collect(CountSegments(text).All))
 		}
 	})
 }

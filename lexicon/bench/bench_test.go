@@ -65,6 +65,23 @@ func TestDistancesAreTheSame(t *testing.T) {
 	}
 }
 
+func TestCountingsFindTheSame(t *testing.T) {
+	text, err := bench.Prose(testdata+"/demo/manuscript.md", 5000)
+	require.NoError(t, err)
+	ways := bench.Countings()
+	require.NoError(t, bench.SameCounts(text, ways[0], ways[1]))
+	assert.Greater(t, ways[1].Count(text, nil), 1000)
+	more := bench.Counting{Name: "more", Count: func(text string, found func(string, int)) int {
+		found("harbour", 1)
+		return 1 + ways[0].Count(text, found)
+	}}
+	require.Error(t, bench.SameCounts(text, ways[0], more))
+	words, different, err := bench.Reading([]byte(text))
+	require.NoError(t, err)
+	assert.Greater(t, words, 4000)
+	assert.Greater(t, different, 1000)
+}
+
 func TestMeasureTakesTheShortestOfEachQuery(t *testing.T) {
 	calls := make([]int, 3)
 	timings, err := bench.Measure(3, 4, func(q int) error { calls[q]++; return nil })

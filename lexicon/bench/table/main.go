@@ -13,6 +13,7 @@ import (
 	"fmt"
 	"io"
 	"os"
+	"path/filepath"
 	"runtime"
 	"strings"
 	"time"
@@ -24,28 +25,34 @@ import (
 type part func(w io.Writer, in input) error
 
 // parts are what is compared, in the order of the table.
-var parts = []part{search, pairs}
+var parts = []part{search, pairs, count}
 
 // input is what the parts are measured on.
 type input struct {
 	misspellings []bench.Pair
 	level        int // of size of the words searched
 	rounds       int
+	text         string // path of the prose that is counted
 }
 
 func main() {
 	testdata := flag.String("testdata", "../../testdata", "the project's folder testdata")
 	level := flag.Int("size", 60, "search the words of lists up to this size")
 	rounds := flag.Int("rounds", 5, "measure each query so many times, of which the shortest counts")
+	text := flag.String("text", "", "count the words of this text; by default the manuscript in testdata")
 	flag.Parse()
-	if err := run(os.Stdout, *testdata, *level, *rounds); err != nil {
+	if *text == "" {
+		*text = filepath.Join(*testdata, "demo", "manuscript.md")
+	}
+	if err := run(os.Stdout, *testdata, input{level: *level, rounds: *rounds, text: *text}); err != nil {
 		fmt.Fprintln(os.Stderr, "table:", err)
 		os.Exit(1)
 	}
 }
 
-func run(w io.Writer, testdata string, level, rounds int) error {
-	misspellings, err := bench.Misspellings(testdata)
+func run(w io.Writer, testdata string, in input) error {
+	var err error
+	in.misspellings, err = bench.Misspellings(testdata)
 	if err != nil {
 		return err
 	}
@@ -53,7 +60,7 @@ func run(w io.Writer, testdata string, level, rounds int) error {
 		processor(), runtime.NumCPU(), runtime.Version(), arguments())
 	for _, p := range parts {
 		fmt.Fprintln(w)
-		if err := p(w, input{misspellings, level, rounds}); err != nil {
+		if err := p(w, in); err != nil {
 			return err
 		}
 	}
