@@ -11,7 +11,7 @@ import (
 // and is what is embedded. To fit the costs anew after align has changed, in this
 // folder:
 //
-//	go generate -run 'emendary fit|compile'
+//	go generate -run 'emendary fit|./compile'
 //
 //go:generate go run emendary/cmd/emendary fit ../../testdata/wikipedia-misspellings.tsv -o english.costs --force --source "Wikipedia, Lists of common misspellings, in its form for machines, by its contributors (testdata/README.md)" --licence "CC BY-SA 3.0" --date 2026-12-01
 //go:generate go run ./compile -in english.costs -out costs.compiled
