@@ -124,7 +124,7 @@ func BenchmarkBest(b *testing.B) {
 		of   func()
 	}{
 		{"ten", func() { matches = r.Best(matches[:0], sheet, 10, math.MaxInt32) }},
-		{"near", func() { matches = r.Near(matches[:0], sheet, 10, 10<<10) }},
+		{"near", func() { matches = r.Near(matches[:0], sheet, 10, math.MaxInt32, 10<<10) }},
 	} {
 		one := func(i int) {
 			sheet.Reset(costs, pairs[i*7%len(pairs)].Form)

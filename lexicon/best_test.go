@@ -156,7 +156,7 @@ func TestBestIsThatOfAScan(t *testing.T) {
 				margin := int32(random.IntN(8 << 10))
 				want = scanned(x, costs, p, used, form, n, math.MaxInt32)
 				want = slices.DeleteFunc(want, func(m Match) bool { return m.Total() > want[0].Total()+margin })
-				got = r.Near(got[:0], sheet, n, margin)
+				got = r.Near(got[:0], sheet, n, math.MaxInt32, margin)
 			}
 			require.Equal(t, len(want), len(got), "%q", form)
 			for i := range want {
@@ -176,7 +176,7 @@ func requireScanned(t *testing.T, x *Lexicon, costs *align.Fitted, p Prior, form
 		want := scanned(x, costs, p, nil, form, n, math.MaxInt32)
 		require.Equal(t, want, r.Best(nil, sheet, n, math.MaxInt32), "%q", form)
 		want = slices.DeleteFunc(want, func(m Match) bool { return m.Total() > want[0].Total()+8<<10 })
-		require.Equal(t, want, r.Near(nil, sheet, n, 8<<10), "%q", form)
+		require.Equal(t, want, r.Near(nil, sheet, n, math.MaxInt32, 8<<10), "%q", form)
 	}
 }
 

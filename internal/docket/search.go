@@ -90,10 +90,14 @@ type query struct {
 // candidate: one of a thousand times less probability is of no help.
 const margin = 10
 
-// outermost returns the most bits that a candidate of a form of so many letters
-// may come to: letters at random come to log₂ 27 bits each, and what lies far
-// beyond that is no slip for any word.
-func outermost(letters int) float64 { return 12 + 6*float64(letters) }
+// A candidate comes to at most so many bits and one more for each letter of the
+// form: it is near, as 99 of 100 misspelt words of the open list are to what was
+// meant (testdata/README.md); or far, where nothing is near and the form has no
+// capital, which makes a name of what is like no word.
+const (
+	nearby  = 30
+	farAway = 44
+)
 
 // spare is how many words more than candidates are asked for, since words that
 // differ in capitals alone make one candidate.
@@ -109,11 +113,8 @@ func (s *Search) words(ctx context.Context, form string, kind Kind, n int, add f
 	d.form = s.lex.Alphabet().AppendFolded(d.form[:0], form)
 	for _, m := range s.near(d, form, n) {
 		distance := align.Restricted(d.form, m.Letters)
-		if distance >= len(d.form) && len(d.form) > 0 {
+		if distance >= len(d.form) {
 			continue // no letter of the form is left
-		}
-		if s.costs != nil && m.Total() > grains(outermost(len(d.form))) {
-			continue
 		}
 		add(s.weigh(form, kind, m, distance))
 	}
@@ -125,18 +126,25 @@ func (s *Search) near(d *query, form string, n int) []lexicon.Match {
 	if s.costs == nil {
 		return s.within(d, form)
 	}
-	ranking := s.small()
-	if capitalsOf(form) != lower {
+	ranking, capital := s.small(), capitalsOf(form) != lower
+	if capital {
 		ranking = s.capital()
 	}
 	d.sheet.Reset(s.costs, d.form)
-	if s.lex.Find(form).Status == lexicon.Known {
-		// The form itself is the likeliest word: no margin is to be counted from it.
-		d.matches = ranking.Best(d.matches[:0], &d.sheet, n+spare, math.MaxInt32)
-	} else {
-		d.matches = ranking.Near(d.matches[:0], &d.sheet, n+spare, grains(margin))
+	limit := nearby
+	for {
+		most := grains(float64(limit + len(d.form)))
+		if s.lex.Find(form).Status == lexicon.Known {
+			// The form itself is the likeliest word: no margin is to be counted from it.
+			d.matches = ranking.Best(d.matches[:0], &d.sheet, n+spare, most)
+		} else {
+			d.matches = ranking.Near(d.matches[:0], &d.sheet, n+spare, most, grains(margin))
+		}
+		if limit == farAway || capital || len(d.matches) > 0 {
+			return d.matches
+		}
+		limit = farAway
 	}
-	return d.matches
 }
 
 // within returns the words near the form of a query under unit costs: two edits

@@ -36,7 +36,7 @@ type Model struct {
 	Name, Common float64
 	// Company is how many bits likelier than by chance two of the commonest words
 	// stand together that writers run together, since those are such as belong
-	// together (a lot); half of it where the rarer is of the second level.
+	// together (a lot).
 	Company float64
 	// Abbreviation is added to words that are listed as abbreviations only.
 	Abbreviation float64
@@ -147,11 +147,8 @@ func (m Model) Prior(word lexicon.Word, v lexicon.Variety, letters int, capital 
 // [Model.Prior].
 func (m Model) TwoWords(p, q float64, level int, capital bool, together, size int) float64 {
 	both := p * q
-	switch {
-	case level <= 10:
+	if level <= 10 {
 		both *= math.Exp2(m.Company)
-	case level <= 20:
-		both *= math.Exp2(m.Company / 2)
 	}
 	bits := -m.Weight * math.Log2((float64(together)+m.Smoothing*both)/(float64(size)+m.Smoothing))
 	if capital {
