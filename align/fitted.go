@@ -35,6 +35,7 @@ type Fitted struct {
 	swaps   [positions]float64               // probabilities of a transposition
 	chances *chances
 	long    []longPrice // by the letters of the form, then of the word
+	author  *author     // nil where they are those of all writers
 }
 
 // Origin says where costs come from.
@@ -108,12 +109,16 @@ func (f *Fitted) slipped(s spot, p position, letter symbol) int32 {
 	if side, ok := s.spaceOf(letter); ok {
 		return price(f.counts.spaces[side].blend(0.005, 200))
 	}
-	return price(f.wrong(s, p) * f.written(s, p, letter))
+	grains := price(f.wrong(s, p) * f.written(s, p, letter))
+	if f.author == nil {
+		return grains
+	}
+	return f.author.price(grains, f.slipAt(s, letter))
 }
 
 // swap prices the transposition of the letters to, as the word has them.
 func (f *Fitted) swap(to stretch, p position) int32 {
-	return price(f.counts.stretch(to).blend(f.swaps[p], f.smooth.swap))
+	return f.author.price(price(f.counts.stretch(to).blend(f.swaps[p], f.smooth.swap)), slip{swapKind, to[0], to[1]})
 }
 
 // newFitted works out the probabilities that counts give.

@@ -10,6 +10,7 @@ type KeyMap struct {
 	Unfold                                    key.Binding
 	Undo, Redo                                key.Binding
 	Next, Previous, NextOpen, Find, Order     key.Binding
+	Adapt                                     key.Binding
 	Focus, Actions                            key.Binding
 	Help, Quit, Break                         key.Binding
 }
@@ -31,6 +32,7 @@ func Keys() KeyMap {
 		NextOpen: key.NewBinding(key.WithKeys("n"), key.WithHelp("n", "next open")),
 		Find:     key.NewBinding(key.WithKeys("/"), key.WithHelp("/", "find")),
 		Order:    key.NewBinding(key.WithKeys("t"), key.WithHelp("t", "next order")),
+		Adapt:    key.NewBinding(key.WithKeys("e"), key.WithHelp("e", "price edits by what was accepted")),
 		Focus:    key.NewBinding(key.WithKeys("tab"), key.WithHelp("tab", "next part of the screen")),
 		Actions:  key.NewBinding(key.WithKeys(" "), key.WithHelp("space", "actions")),
 		Help:     key.NewBinding(key.WithKeys("?"), key.WithHelp("?", "help")),
@@ -51,7 +53,7 @@ func (k KeyMap) ShortHelp() []key.Binding { return append(k.rulings(), k.Help, k
 func (k KeyMap) FullHelp() [][]key.Binding {
 	return [][]key.Binding{
 		{k.Accept, k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Unfold, k.Undo, k.Redo},
-		{k.Next, k.Previous, k.NextOpen, k.Find, k.Order, k.Focus, k.Actions, k.Help, k.Quit, k.Break},
+		{k.Next, k.Previous, k.NextOpen, k.Find, k.Order, k.Adapt, k.Focus, k.Actions, k.Help, k.Quit, k.Break},
 	}
 }
 

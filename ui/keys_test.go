@@ -35,7 +35,7 @@ func TestNoKeyMeansTwoThings(t *testing.T) {
 	m := New(context.Background(), &docket.Session{Docket: &docket.Docket{}}, Options{Getenv: plain})
 	k := m.Keys
 	everywhere := []key.Binding{k.Stand, k.Add, k.Query, k.Later, k.Correct, k.Unfold, k.Undo, k.Redo, k.Next, k.Previous,
-		k.NextOpen, k.Find, k.Order, k.Focus, k.Help, k.Quit, k.Accept}
+		k.NextOpen, k.Find, k.Order, k.Adapt, k.Focus, k.Help, k.Quit, k.Accept}
 	for name, part := range map[string][][]key.Binding{
 		"alignment":   append(m.alignment.Keys.FullHelp(), []key.Binding{k.Actions}),
 		"concordance": m.concordance.Keys.FullHelp(),
@@ -69,6 +69,7 @@ on the bench | h left | h ← | previous entry
 on the bench | n | n | next open
 on the bench | / | / | find
 on the bench | t | t | next order
+on the bench | e | e | price edits by what was accepted
 on the bench | tab | tab | next part of the screen
 on the bench |   | space | actions
 on the bench | ? | ? | help

@@ -36,6 +36,8 @@ func (m *Model) pressBench(k tea.KeyMsg) tea.Cmd {
 		return m.move(m.openAfter(m.index()))
 	case key.Matches(k, m.Keys.Order):
 		return m.turnOrder()
+	case key.Matches(k, m.Keys.Adapt):
+		return m.adapt()
 	case m.screen == onFinished:
 	default:
 		if cmd, taken := m.pressPassage(k); taken {

@@ -91,6 +91,23 @@ func (m *Model) passed(e *docket.Entry) bool {
 	return !e.Open() || w != nil && w.shown
 }
 
+// adapt prices edits by what was accepted so far. The entry on screen keeps its rows;
+// candidates from the next entry on, and the order of what has not been shown,
+// follow the new costs.
+func (m *Model) adapt() tea.Cmd {
+	if !m.docket.InBits() {
+		m.warn("under unit costs every edit costs one: there is nothing to take up")
+		return nil
+	}
+	taken := m.docket.Adapt()
+	m.say(count(taken, "correction") + " taken up: edits are priced by what was accepted from here on")
+	m.grown()
+	if w := &m.weighing; w.begun && w.out == 0 && len(w.left) == 0 {
+		m.weighing = weighing{}
+	}
+	return m.compute()
+}
+
 // turnOrder puts what lies ahead in the next order of review.
 func (m *Model) turnOrder() tea.Cmd {
 	o := m.docket.Order().Next()

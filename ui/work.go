@@ -139,7 +139,8 @@ func (m *Model) take(c computed) {
 	}
 }
 
-// grown drops all facts: a word was added, so that other words are candidates now.
+// grown drops all facts: a word was added, or edits have other costs, so that other
+// words are candidates now.
 // Those of the entry on screen stay, lest rows change under the cursor. Searches
 // under way end, so that they keep no processor from those that count.
 func (m *Model) grown() {
@@ -232,6 +233,7 @@ func (m *Model) layRows(at int) {
 	if f != nil {
 		for _, c := range f.candidates {
 			row := lay(c.Text)
+			row.Why = text.Visible(m.docket.Why(e.Form, c.Text), m.sheet.Signs.ASCII)
 			row.Cost, row.Share, row.Priced, row.Remark = c.Cost, c.Share, true, text.Visible(c.Remark, m.sheet.Signs.ASCII)
 			rows = append(rows, row)
 		}

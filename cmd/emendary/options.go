@@ -66,12 +66,14 @@ func (w *words) load() (*lexicon.Lexicon, error) {
 type desk struct {
 	words
 	ledger, encoding, as string
+	noAdapt              bool
 }
 
 func (d *desk) flags(cmd *cobra.Command) {
 	f := cmd.Flags()
 	f.StringVar(&d.ledger, "ledger", "", "keep the rulings in `FILE`, not beside the manuscript")
 	f.StringVar(&d.encoding, "encoding", "", "`ENCODING` of a manuscript in neither UTF-8 nor UTF-16, such as windows-1252")
+	f.BoolVar(&d.noAdapt, "no-adapt", false, "price edits as for all writers, whatever was accepted before")
 	d.words.flags(cmd)
 }
 
@@ -91,7 +93,7 @@ func (p *program) open(ctx context.Context, d *desk, manuscript string, toRead b
 func (d *desk) options(manuscript string, toRead bool, progress func(done, total int)) docket.Options {
 	return docket.Options{
 		Manuscript: manuscript, Ledger: d.ledger, Encoding: d.encoding, Who: d.who(), ToRead: toRead, Progress: progress,
-		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series, With: d.with, Costs: d.costs,
+		Lexicon: d.lexicon, Variety: d.variety.value, House: d.house, Series: d.series, With: d.with, Costs: d.costs, NoAdapt: d.noAdapt,
 	}
 }
 

@@ -11,10 +11,12 @@ func (d *Docket) Align(form, text string) (formLetters, textLetters []align.Lett
 }
 
 // InBits reports whether costs are in bits; else they count edits.
-func (d *Docket) InBits() bool { return d.costs != nil }
+func (d *Docket) InBits() bool { return d.fitted != nil }
 
 // prices returns the costs in use.
 func (d *Docket) prices() align.Costs {
+	d.searching.Lock()
+	defer d.searching.Unlock()
 	if d.costs == nil {
 		return align.Unit{}
 	}
@@ -30,8 +32,8 @@ const fittedCells = 1 << 13
 const mostCells = 1 << 20
 
 // alignment is align.Align under costs where the table it fills is within bounds,
-// under unit costs where it is larger. Of still longer words, what they begin and end with alike agrees, and what is
-// between is aligned, or replaced as a whole where that is still too long.
+// under unit costs where it is larger. Of still longer words, what they begin and
+// end with alike agrees, and what is between is aligned, or replaced as a whole where that is still too long.
 func alignment(form, word []align.Letter, costs align.Costs) align.Alignment {
 	if cells(form, word) > fittedCells {
 		costs = align.Unit{}

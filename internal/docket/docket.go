@@ -14,8 +14,8 @@ import (
 )
 
 // Docket is the entries of one manuscript, in an order of review: by first place
-// until Reorder says otherwise. Its state changes by Record, Reorder and TakeSlips
-// alone, and Find may add an entry; all of these belong to one goroutine.
+// until Reorder says otherwise. Its state changes by Record, Adapt, Reorder and
+// TakeSlips alone, and Find may add an entry; all of these belong to one goroutine.
 // Candidates, Near, Parts, Dispersion, Slip, SlipGiven and Lexicon may run beside
 // it in others: they read only what never changes.
 type Docket struct {
@@ -26,7 +26,7 @@ type Docket struct {
 	census *census
 	use    map[string]int                  // count of each form by key
 	base   *lexicon.Lexicon                // decides what is on the docket: all layers but the book's
-	costs  *align.Fitted                   // of edits; nil for unit costs
+	fitted *align.Fitted                   // costs of edits, of all writers; nil for unit costs
 	lex    atomic.Pointer[lexicon.Lexicon] // base and what this book's rulings added
 
 	words    []int // of each part
@@ -41,7 +41,8 @@ type Docket struct {
 	byKey    map[string][]*Entry      // by key
 	log      []ledger.Ruling          // all rulings recorded, undos included
 
-	searching sync.Mutex // guards searcher
+	searching sync.Mutex    // guards what follows
+	costs     *align.Fitted // of edits, in use
 	searcher  *Search
 	surveying sync.Once
 	survey    *survey // made when first asked for
@@ -59,7 +60,7 @@ type Unplaced struct {
 // that they put on lists and the passages they are on; Record takes the rest.
 func lay(doc *manuscript.Document, c *census, lex *lexicon.Lexicon, costs *align.Fitted, rulings []ledger.Ruling) *Docket {
 	d := &Docket{
-		Document: doc, census: c, base: lex, costs: costs, now: time.Now,
+		Document: doc, census: c, base: lex, fitted: costs, costs: costs, now: time.Now,
 		use: map[string]int{}, byForm: map[string]*Entry{}, byKey: map[string][]*Entry{},
 		order: ByPlace, exact: map[*Entry]float64{}, ours: listed(rulings),
 	}

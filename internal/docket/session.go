@@ -22,6 +22,7 @@ type Options struct {
 	House      string     // list by name or file; "" means what the ledger remembers
 	Series     string     // likewise
 	Costs      string     // name or file of edit costs; "" means what the ledger remembers, else the default
+	NoAdapt    bool       // price edits as for all writers, whatever was accepted
 	With       []Language // whose words are known too; none means what the ledger remembers
 	Encoding   string
 	Who        string
@@ -119,6 +120,9 @@ func Start(ctx context.Context, opt Options) (_ *Session, err error) {
 	s.Docket = lay(doc, c, lex, costs, rulings)
 	s.Docket.who, s.Docket.now = opt.Who, opt.Now
 	s.Docket.Record(rulings...)
+	if !opt.NoAdapt {
+		s.Docket.Adapt()
+	}
 	s.keep(rulings)
 	return s, nil
 }

@@ -71,7 +71,7 @@ func (d *Docket) EvidenceGiven(e *Entry, found []Candidate) rank.Evidence {
 	best := found[0]
 	v.Found, v.Best, v.Distance = true, best.Text, best.Distance
 	v.Cost = best.Cost
-	if d.costs == nil {
+	if !d.InBits() {
 		v.Cost *= rank.Default().Edit
 	}
 	v.Bits = v.Cost + best.Prior

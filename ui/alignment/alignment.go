@@ -26,6 +26,7 @@ type Row struct {
 	Share     float64 // of all candidates, 0 to 1
 	Priced    bool    // Cost and Share are known: a word that was typed has none
 	Remark    string
+	Why       string // why it comes so far forward, if there is a reason to say
 }
 
 // KeyMap is the keys of the alignment.

@@ -55,7 +55,11 @@ func (m Model) speltOut(p plan) []string {
 		}
 		at += p.widths[i]
 	}
-	sentence := "   " + text.Cut(Sentence(m.form, m.rows[m.cursor]), m.width-4, m.sheet.Signs.Ellipsis)
+	said := Sentence(m.form, m.rows[m.cursor])
+	if why := m.rows[m.cursor].Why; why != "" {
+		said += " " + m.sheet.Signs.Agrees + " " + why
+	}
+	sentence := "   " + text.Cut(said, m.width-4, m.sheet.Signs.Ellipsis)
 	return []string{letters.String(), marks.String(), sentence}
 }
 
