@@ -92,3 +92,15 @@ func TestMeasureTakesTheShortestOfEachQuery(t *testing.T) {
 	_, err = bench.Measure(1, 1, func(int) error { return assert.AnError })
 	assert.ErrorIs(t, err, assert.AnError)
 }
+
+func TestBestWordsAreThoseOfAScan(t *testing.T) {
+	pairs, err := bench.Misspellings(testdata)
+	require.NoError(t, err)
+	b := bench.NewBest()
+	for _, p := range pairs[:4] {
+		want := b.Scan(p.Form, 10)
+		require.Equal(t, want, bench.Totals(b.Ten(p.Form)), p.Form)
+		near := slices.DeleteFunc(want, func(total int32) bool { return total > want[0]+10<<10 })
+		require.Equal(t, near, bench.Totals(b.Near(p.Form)), p.Form)
+	}
+}
