@@ -40,7 +40,7 @@ func (w *backward) node(node uint32, depth int, doubled bool) {
 			if w.floors != nil {
 				floor = w.floors[i]
 			}
-			w.follow(arc, depth, w.toLetter[label], symbol, backwardCuts(w.room(floor)))
+			w.follow(arc, depth, w.toLetter[label], symbol, w.backwardCuts(w.room(floor)))
 		}
 		if arc&lastArc != 0 {
 			return

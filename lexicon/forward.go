@@ -12,7 +12,7 @@ type forward struct {
 	below    []uint16       // by arc: the set of the words below; nil for own words
 	listed   []uint16       // by word: its set
 	floors   []int32        // by set, for own words by arc
-	whole    bool           // there is no way backward
+	whole    bool           // there is no search backward
 }
 
 // start walks the whole trie.
@@ -37,7 +37,7 @@ func (w *forward) cuts(room int32) cuts {
 	if w.whole {
 		return cuts{room, room}
 	}
-	return forwardCuts(room)
+	return w.forwardCuts(room)
 }
 
 // floor returns the floor of the words through an arc, of which the first has that

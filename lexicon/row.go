@@ -43,7 +43,9 @@ const (
 	middlePart = 40
 	// Edits in the first part may take this part of what edits may cost, in 64ths;
 	// those in the second the rest.
-	firstShare = 42
+	firstShare = 46
+	// So much they may take in a narrow search, which misses words.
+	narrowFirst, narrowSecond = 14, 5
 )
 
 // forwardCuts returns the cuts of a search from the start where edits may cost room.
@@ -54,11 +56,20 @@ const (
 // in Large Dictionaries”, Computational Linguistics 30(4), 2004, on backward
 // dictionaries, for unit costs). An edit across the middle counts as in the second.
 // Both shares grow with room, so that floors of priors may stand for the priors.
-func forwardCuts(room int32) cuts {
-	return cuts{int32(int64(room) * firstShare >> 6), room}
+func (b *best) forwardCuts(room int32) cuts {
+	if b.narrow {
+		return cuts{share(room, narrowFirst), room}
+	}
+	return cuts{share(room, firstShare), room}
 }
 
 // backwardCuts returns those of a search from the end.
-func backwardCuts(room int32) cuts {
-	return cuts{room - forwardCuts(room).first, room}
+func (b *best) backwardCuts(room int32) cuts {
+	if b.narrow {
+		return cuts{share(room, narrowSecond), room}
+	}
+	return cuts{room - share(room, firstShare), room}
 }
+
+// share returns so many 64ths of room, rounded down.
+func share(room int32, part int64) int32 { return int32(int64(room) * part >> 6) }
