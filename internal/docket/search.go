@@ -6,6 +6,7 @@ import (
 	"iter"
 	"math"
 	"slices"
+	"strings"
 	"sync"
 
 	"emendary/align"
@@ -92,8 +93,8 @@ const margin = 10
 
 // A candidate comes to at most so many bits and one more for each letter of the
 // form: it is near, as 99 of 100 misspelt words of the open list are to what was
-// meant (testdata/README.md); or far, where nothing is near and the form has no
-// capital, which makes a name of what is like no word.
+// meant (testdata/README.md); or far, where nothing is near and the form is neither
+// a name, by its capital, nor a compound, whose members are looked for one by one.
 const (
 	nearby  = 30
 	farAway = 44
@@ -131,7 +132,7 @@ func (s *Search) near(d *query, form string, n int) []lexicon.Match {
 		ranking = s.capital()
 	}
 	d.sheet.Reset(s.costs, d.form)
-	limit := nearby
+	limit, closed := nearby, capital || strings.ContainsFunc(form, isHyphen)
 	for {
 		most := grains(float64(limit + len(d.form)))
 		if s.lex.Find(form).Status == lexicon.Known {
@@ -140,7 +141,7 @@ func (s *Search) near(d *query, form string, n int) []lexicon.Match {
 		} else {
 			d.matches = ranking.Near(d.matches[:0], &d.sheet, n+spare, most, grains(margin))
 		}
-		if limit == farAway || capital || len(d.matches) > 0 {
+		if limit == farAway || closed || len(d.matches) > 0 {
 			return d.matches
 		}
 		limit = farAway
