@@ -13,8 +13,9 @@ import (
 // Adapt prices edits for this author from here on: by the costs of all writers and
 // the accepts in force, one count a form, whatever their order (see
 // [align.Fitted.Adapt]). It returns how many corrections it took up; none under unit
-// costs. Which spelling a word has in which English, and what a list bars, is no
-// author's slip and not taken up.
+// costs. Which spelling a word has in which English, what a list bars and what a
+// rule says (a letter for a digit) is no slip that comes again in other words, and
+// not taken up.
 func (d *Docket) Adapt() int {
 	if d.fitted == nil {
 		return 0
@@ -37,6 +38,9 @@ func (d *Docket) accepted() []align.Pair {
 			continue
 		}
 		form, word := Key(r.Form), Key(r.Word)
+		if e := d.byForm[r.Form]; e != nil && len(e.Instead) > 0 {
+			continue
+		}
 		if form == word || max(len(form), len(word)) > lexicon.MaxLetters {
 			continue
 		}
