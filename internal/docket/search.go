@@ -95,9 +95,12 @@ const margin = 10
 // form: it is near, as 99 of 100 misspelt words of the open list are to what was
 // meant (testdata/README.md); or far, where nothing is near and the form is neither
 // a name, by its capital, nor a compound, whose members are looked for one by one.
+// Only so many letters count: of longer words there are few, and none is near what
+// has so little in common.
 const (
 	nearby  = 30
 	farAway = 44
+	counted = 24
 )
 
 // spare is how many words more than candidates are asked for, since words that
@@ -134,7 +137,7 @@ func (s *Search) near(d *query, form string, n int) []lexicon.Match {
 	d.sheet.Reset(s.costs, d.form)
 	limit, closed := nearby, capital || strings.ContainsFunc(form, isHyphen)
 	for {
-		most := grains(float64(limit + len(d.form)))
+		most := grains(float64(limit + min(len(d.form), counted)))
 		if s.lex.Find(form).Status == lexicon.Known {
 			// The form itself is the likeliest word: no margin is to be counted from it.
 			d.matches = ranking.Best(d.matches[:0], &d.sheet, n+spare, most)
