@@ -5,6 +5,7 @@ import (
 	"context"
 	"iter"
 	"math"
+	"runtime"
 	"slices"
 	"strings"
 	"sync"
@@ -24,7 +25,7 @@ type Search struct {
 	model rank.Model
 
 	small, capital func() *lexicon.Ranking // for forms without capitals, and with one
-	queries        *sync.Pool              // of *query
+	queries        chan *query             // not in use; a pool would lose the prices that they know
 }
 
 // NewSearch returns a search of lex under costs, for forms that stand in no
@@ -43,7 +44,7 @@ type usage struct {
 
 func newSearch(lex *lexicon.Lexicon, costs *align.Fitted, of usage) *Search {
 	s := &Search{usage: of, lex: lex, costs: costs, model: rank.Default()}
-	s.queries = &sync.Pool{New: func() any { return new(query) }}
+	s.queries = make(chan *query, runtime.GOMAXPROCS(0))
 	s.small = sync.OnceValue(func() *lexicon.Ranking {
 		return lex.Ranking(s.prior(false), s.used())
 	})
@@ -87,6 +88,24 @@ type query struct {
 	matches []lexicon.Match
 }
 
+// query returns scratch space that is not in use.
+func (s *Search) query() *query {
+	select {
+	case d := <-s.queries:
+		return d
+	default:
+		return new(query)
+	}
+}
+
+// done gives scratch space back.
+func (s *Search) done(d *query) {
+	select {
+	case s.queries <- d:
+	default: // enough are kept
+	}
+}
+
 // margin is how many bits a word may be behind the likeliest one and still be a
 // candidate: one of a thousand times less probability is of no help.
 const margin = 10
@@ -98,9 +117,10 @@ const margin = 10
 // Only so many letters count: of longer words there are few, and none is near what
 // has so little in common.
 const (
-	nearby  = 30
-	farAway = 44
-	counted = 24
+	nearby   = 30
+	farAway  = 40
+	nearName = 26 // for a form with a capital, which most often is one
+	counted  = 24
 )
 
 // spare is how many words more than candidates are asked for, since words that
@@ -112,8 +132,8 @@ func (s *Search) words(ctx context.Context, form string, kind Kind, n int, add f
 	if err := ctx.Err(); err != nil {
 		return err
 	}
-	d := s.queries.Get().(*query)
-	defer s.queries.Put(d)
+	d := s.query()
+	defer s.done(d)
 	d.form = s.lex.Alphabet().AppendFolded(d.form[:0], form)
 	for _, m := range s.near(d, form, n) {
 		distance := align.Restricted(d.form, m.Letters)
@@ -136,6 +156,9 @@ func (s *Search) near(d *query, form string, n int) []lexicon.Match {
 	}
 	d.sheet.Reset(s.costs, d.form)
 	limit, closed := nearby, capital || strings.ContainsFunc(form, isHyphen)
+	if capital {
+		limit = nearName
+	}
 	for {
 		most := grains(float64(limit + min(len(d.form), counted)))
 		if s.lex.Find(form).Status == lexicon.Known {
@@ -173,8 +196,8 @@ func (s *Search) within(d *query, form string) []lexicon.Match {
 // edits returns what turning form into text comes to in bits, and how many unit
 // edits that takes.
 func (s *Search) edits(form, text string) (bits float64, distance int) {
-	d := s.queries.Get().(*query)
-	defer s.queries.Put(d)
+	d := s.query()
+	defer s.done(d)
 	d.form = s.lex.Alphabet().AppendFolded(d.form[:0], form)
 	d.word = s.lex.Alphabet().AppendFolded(d.word[:0], text)
 	distance = align.Restricted(d.form, d.word)
