@@ -118,8 +118,8 @@ const margin = 10
 // has so little in common.
 const (
 	nearby   = 30
-	farAway  = 40
-	nearName = 26 // for a form with a capital, which most often is one
+	farAway  = 44
+	nearName = 28 // for a form with a capital, which most often is one
 	counted  = 24
 )
 
@@ -137,8 +137,8 @@ func (s *Search) words(ctx context.Context, form string, kind Kind, n int, add f
 	d.form = s.lex.Alphabet().AppendFolded(d.form[:0], form)
 	for _, m := range s.near(d, form, n) {
 		distance := align.Restricted(d.form, m.Letters)
-		if distance >= len(d.form) {
-			continue // no letter of the form is left
+		if 2*distance > len(d.form)+1 {
+			continue // more of the form's letters are changed than left
 		}
 		add(s.weigh(form, kind, m, distance))
 	}
