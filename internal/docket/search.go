@@ -137,7 +137,7 @@ func (s *Search) words(ctx context.Context, form string, kind Kind, n int, add f
 	d.form = s.lex.Alphabet().AppendFolded(d.form[:0], form)
 	for _, m := range s.near(d, form, n) {
 		distance := align.Restricted(d.form, m.Letters)
-		if 2*distance > len(d.form)+1 {
+		if distance >= len(d.form) || 2*distance > len(d.form)+1 {
 			continue // more of the form's letters are changed than left
 		}
 		add(s.weigh(form, kind, m, distance))
