@@ -101,6 +101,11 @@ func price(p float64) int32 {
 	return int32(max(1, min(math.Round(-math.Log2(p)/Grain), 64/Grain)))
 }
 
+// marksOff is the probability that a letter comes with other marks than the word
+// has, or without: cliche. It is judged, not counted: lists of misspellings hold few
+// words with marks, while many writers leave them all out.
+const marksOff = 1. / 12
+
 // kept, slipped and added price what happens at a spot, in grains: the letter
 // written as it is, another letter (or none) written, a letter too many.
 func (f *Fitted) kept(s spot, p position) int32 { return price(1 - f.wrong(s, p)) }
@@ -108,6 +113,9 @@ func (f *Fitted) kept(s spot, p position) int32 { return price(1 - f.wrong(s, p)
 func (f *Fitted) slipped(s spot, p position, letter symbol) int32 {
 	if side, ok := s.spaceOf(letter); ok {
 		return price(f.counts.spaces[side].blend(0.005, 200))
+	}
+	if !s.gap && letter == s.letter && letter != other {
+		return price(marksOff)
 	}
 	grains := price(f.wrong(s, p) * f.written(s, p, letter))
 	if f.author == nil {

@@ -29,7 +29,7 @@ type listed struct {
 // listedCandidate is one candidate in a line of JSON.
 type listedCandidate struct {
 	Word   string   `json:"word"`
-	Cost   float64  `json:"cost"`
+	Cost   float64  `json:"cost"` // two decimals: a hundredth of a bit is nothing
 	Share  *float64 `json:"share,omitempty"` // nil where words were not weighed
 	remark string
 }
@@ -46,7 +46,7 @@ func listCandidates(found []docket.Candidate) []listedCandidate {
 	out := make([]listedCandidate, len(found))
 	for i, c := range found {
 		share := rounded(c.Share)
-		out[i] = listedCandidate{Word: c.Text, Cost: rounded(c.Cost), Share: &share, remark: c.Remark}
+		out[i] = listedCandidate{Word: c.Text, Cost: math.Round(100*c.Cost) / 100, Share: &share, remark: c.Remark}
 	}
 	return out
 }

@@ -146,7 +146,8 @@ func (s *Search) compounds(ctx context.Context, form string, kind Kind, n int, a
 	})
 }
 
-// splits finds the places where a space makes two known words of the form.
+// splits finds the places where a space makes two known words of the form, or a
+// hyphen a compound of the manuscript.
 func (s *Search) splits(form string, kind Kind, add func(weighed)) {
 	if kind == OtherVariety || kind == WordInContext || strings.ContainsFunc(form, isHyphen) {
 		return
@@ -167,6 +168,7 @@ func (s *Search) splits(form string, kind Kind, add func(weighed)) {
 		if first.Status != lexicon.Known || second.Status != lexicon.Known {
 			continue
 		}
+		s.hyphened(form, left+"-"+right, add)
 		text := left + " " + right
 		together := 0
 		if s.beside != nil {
@@ -184,11 +186,25 @@ func (s *Search) splits(form string, kind Kind, add func(weighed)) {
 	}
 }
 
+// hyphened adds the compound that the form is without its hyphen, where the
+// manuscript has it.
+func (s *Search) hyphened(form, text string, add func(weighed)) {
+	n := s.use[Key(text)]
+	if n == 0 {
+		return
+	}
+	bits, distance := s.edits(form, text)
+	prior := s.model.TwoWords(0, 0, 0, false, n, s.size)
+	add(weighed{Candidate{
+		Text: text, Distance: distance, Cost: s.cost(bits, distance), Prior: prior, Remark: "hyphened here",
+	}, bits + prior})
+}
+
 // possessives adds the word that the form may be the possessive of, where the
 // apostrophe is missing: charwomans.
 func (s *Search) possessives(form string, kind Kind, add func(weighed)) {
 	stem, ok := strings.CutSuffix(form, "s")
-	if !ok || kind != UnknownForm || len(stem) < leastStem {
+	if !ok || kind != UnknownForm || len(stem) < leastStem || strings.HasSuffix(stem, "s") {
 		return
 	}
 	finding := s.lex.Find(stem)

@@ -95,6 +95,11 @@ func TestTheManuscriptsOwnWordsComeFirst(t *testing.T) {
 	}
 	const form = "The larbour froze.\n"
 	assert.Greater(t, share(form+"The harbour, a harbour, one harbour, this harbour, that harbour.\n"), 2*share(form))
+	h := desk(t, "An all-time low, the all-time best. It was alltime.\n")
+	compound, err := h.Docket.Candidates(t.Context(), h.Docket.Find("alltime"), 5)
+	require.NoError(t, err)
+	require.NotEmpty(t, compound)
+	assert.Equal(t, "all-time", compound[0].Text)
 	s := desk(t, "He met the tide wife. A tide wife, the tide wife, no tide wife and that tide wife. The tidewife sang.\n")
 	found, err := s.Docket.Candidates(t.Context(), s.Docket.Find("tidewife"), 5)
 	require.NoError(t, err)
