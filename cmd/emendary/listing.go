@@ -29,7 +29,7 @@ type listed struct {
 // listedCandidate is one candidate in a line of JSON.
 type listedCandidate struct {
 	Word   string   `json:"word"`
-	Cost   float64  `json:"cost"` // two decimals: a hundredth of a bit is nothing
+	Cost   float64  `json:"cost"`            // two decimals: a hundredth of a bit is nothing
 	Share  *float64 `json:"share,omitempty"` // nil where words were not weighed
 	remark string
 }
