@@ -96,7 +96,7 @@ func (m *measured) docket(program, file string) error {
 const widest = 32
 
 func report(all []measured) {
-	fmt.Printf("%s, %d cores, %s, `go run ./growth %s`\n\n", time.Now().Format(time.DateOnly), runtime.NumCPU(), runtime.Version(), strings.Join(os.Args[1:], " "))
+	fmt.Printf("%s, %d cores, %s, `go run ./growth%s`\n\n", time.Now().Format(time.DateOnly), runtime.NumCPU(), runtime.Version(), strings.Join(append([]string{""}, os.Args[1:]...), " "))
 	fmt.Print("| words | entries | seconds | MiB | seconds for 62,500 words |\n|---|---|---|---|---|\n")
 	for _, m := range all {
 		fmt.Printf("| %d | %d | %.2f | %.0f | %.2f |\n", m.words, m.entries, m.took.Seconds(), m.mib, m.took.Seconds()*62_500/float64(m.words))
