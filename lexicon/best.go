@@ -31,8 +31,8 @@ func (r *Ranking) Best(dst []Match, sheet *align.Sheet, n int, limit int32) []Ma
 }
 
 // Near is Best for those words alone that cost at most margin grains more than the
-// best one as well. A margin of ten bits leaves out what is less likely by a factor of a
-// thousand; then it takes half a millisecond.
+// best one as well. A margin of ten bits leaves out what is less likely by a factor
+// of a thousand; then it takes half a millisecond.
 func (r *Ranking) Near(dst []Match, sheet *align.Sheet, n int, limit, margin int32) []Match {
 	return r.best(dst, sheet, n, limit, min(max(margin, 0), never))
 }

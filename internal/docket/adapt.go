@@ -23,7 +23,7 @@ func (d *Docket) Adapt() int {
 	pairs := d.accepted()
 	costs := d.fitted.Adapt(pairs)
 	d.searching.Lock()
-	d.costs, d.searcher = costs, nil
+	d.costs = costs
 	d.searching.Unlock()
 	return len(pairs)
 }

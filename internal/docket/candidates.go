@@ -33,12 +33,16 @@ func (d *Docket) Candidates(ctx context.Context, e *Entry, n int) ([]Candidate, 
 }
 
 // search returns what candidates are looked for with: made when first asked for,
-// and anew when the lexicon has grown.
+// and anew when the lexicon has grown or edits have other costs.
 func (d *Docket) search() *Search {
 	d.searching.Lock()
 	defer d.searching.Unlock()
-	if lex := d.Lexicon(); d.searcher == nil || d.searcher.lex != lex {
+	lex, last := d.Lexicon(), d.searcher
+	if last == nil || last.lex != lex || last.costs != d.costs {
 		d.searcher = newSearch(lex, d.costs, usage{d.census.size, d.use, maps.Keys(d.census.forms), d.adjacent})
+		if last != nil {
+			d.searcher.queries = last.queries // which know prices
+		}
 	}
 	return d.searcher
 }
