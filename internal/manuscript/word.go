@@ -370,6 +370,9 @@ func (s *splitter) word(text string, first, last int) Word {
 		}
 	}
 	classify(&w)
+	if w.Fault == WrongOrdinal && w.Start > 0 && text[w.Start-1] == '/' {
+		w.Fault, w.Instead = NoFault, "" // the denominator of a fraction: the 1/2th part
+	}
 	return w
 }
 

@@ -79,6 +79,7 @@ func TestWords(t *testing.T) {
 		{"titles", "Mr. Pell and Dr. Sallow of St. Anne", "Mr|Pell|and|Dr|Sallow|of|St|Anne"},
 		{"numbers", "1,200 3.5 £5 $1,200.50 −4 -4 1914-18", "1,200 number|3.5 number|£5 number|$1,200.50 number|−4 number|-4 number|1914-18 number hyphenated"},
 		{"ordinals", "1st 2nd 3rd 4th 11th 12th 13th 21st 22nd 111th 1,001st", "1st number ordinal|2nd number ordinal|3rd number ordinal|4th number ordinal|11th number ordinal|12th number ordinal|13th number ordinal|21st number ordinal|22nd number ordinal|111th number ordinal|1,001st number ordinal"},
+		{"a fraction's denominator is no wrong ordinal", "27-1/2th", "27-1 number hyphenated|2th number ordinal"},
 		{"wrong ordinals", "2th 11st 22th 1ND", "2th number ordinal (wrong ordinal: 2nd)|11st number ordinal (wrong ordinal: 11th)|22th number ordinal (wrong ordinal: 22nd)|1ND number ordinal (wrong ordinal: 1ST)"},
 		{"letters for digits", "l9l4 1O 1,2OO 2lst 192Os I914 o56", "l9l4 number (letter for a digit: 1914)|1O number (letter for a digit: 10)|1,2OO number (letter for a digit: 1,200)|2lst number ordinal (letter for a digit: 21st)|192Os number ordinal (letter for a digit: 1920s)|I914 number (letter for a digit: 1914)|o56 number (letter for a digit: 056)"},
 		{"no letters for digits", "20l I95 O2 B5 10m 4x4 5s", "20l|I95|O2|B5|10m|4x4|5s number ordinal"},
