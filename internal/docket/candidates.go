@@ -29,7 +29,8 @@ func (d *Docket) Candidates(ctx context.Context, e *Entry, n int) ([]Candidate, 
 	if e.Kind == Passage {
 		return nil, ctx.Err()
 	}
-	return d.search().candidates(ctx, e.Form, e.Kind, e.Instead, n)
+	s := d.search()
+	return s.candidates(ctx, e.Form, e.Kind, e.Instead, n, func(add func(weighed)) { d.likeFamiliar(s, e, add) })
 }
 
 // search returns what candidates are looked for with: made when first asked for,
@@ -53,7 +54,7 @@ func (s *Search) Candidates(ctx context.Context, form string, n int) ([]Candidat
 	if s.lex.Find(form).Status == lexicon.OtherVariety {
 		kind = OtherVariety
 	}
-	return s.candidates(ctx, plainApostrophe(form), kind, nil, n)
+	return s.candidates(ctx, plainApostrophe(form), kind, nil, n, func(func(weighed)) {})
 }
 
 // weighed is a candidate with all its bits, edits and prior.
@@ -62,7 +63,9 @@ type weighed struct {
 	bits float64
 }
 
-func (s *Search) candidates(ctx context.Context, form string, kind Kind, instead []string, n int) ([]Candidate, error) {
+// candidates returns the n best candidates of a form; others adds those that are in
+// no list.
+func (s *Search) candidates(ctx context.Context, form string, kind Kind, instead []string, n int, others func(add func(weighed))) ([]Candidate, error) {
 	// Of words that differ in capitals or apostrophes alone, the likeliest is enough.
 	found := map[string]weighed{}
 	add := func(w weighed) {
@@ -80,6 +83,7 @@ func (s *Search) candidates(ctx context.Context, form string, kind Kind, instead
 		}
 		s.splits(form, kind, add)
 		s.possessives(form, kind, add)
+		others(add)
 	}
 	s.named(form, instead, found)
 	return best(slices.Collect(maps.Values(found)), n), nil

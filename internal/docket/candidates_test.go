@@ -107,3 +107,19 @@ func TestTheManuscriptsOwnWordsComeFirst(t *testing.T) {
 	assert.Equal(t, "tide wife", found[0].Text)
 	assert.Equal(t, "two words", found[0].Remark)
 }
+
+// A name that drifts: what the manuscript has often is what a rarer form like it may
+// stand for, though no list knows it.
+func TestAFamiliarFormIsACandidateOfARarerOne(t *testing.T) {
+	s := desk(t, "Captain Brannock came. He saw Brannock; Brannock spoke. Then Brannock and old Brannock left Branock.\n")
+	found, err := s.Docket.Candidates(t.Context(), s.Docket.Find("Branock"), 5)
+	require.NoError(t, err)
+	require.NotEmpty(t, found)
+	assert.Equal(t, "Brannock", found[0].Text)
+	assert.Equal(t, "×5 here", found[0].Remark)
+	found, err = s.Docket.Candidates(t.Context(), s.Docket.Find("Brannock"), 5)
+	require.NoError(t, err)
+	for _, c := range found {
+		assert.NotEqual(t, "Branock", c.Text, "not the other way round")
+	}
+}

@@ -44,6 +44,8 @@ type Docket struct {
 	searching sync.Mutex    // guards what follows
 	costs     *align.Fitted // of edits, in use
 	searcher  *Search
+	knowing   sync.Once
+	known     []familiar // see familiars
 	surveying sync.Once
 	survey    *survey // made when first asked for
 	who       string

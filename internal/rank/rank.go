@@ -43,6 +43,8 @@ type Model struct {
 	// Possessive is added for a word with 's at its end where the form lacks the
 	// apostrophe.
 	Possessive float64
+	// Familiar is added for a form that no list knows but the manuscript has often.
+	Familiar float64
 	// SameWord is taken off where the form belongs to another variety and the
 	// word is one that the varieties spell differently: then the two are most
 	// likely one word, in bits.
@@ -54,7 +56,7 @@ type Model struct {
 // costs were not fitted to, where anything from 0.7 to 0.9, 2 to 5, and 5,000 to
 // 20,000 does as well; the others decide few cases and are set by hand.
 func Default() Model {
-	return Model{Edit: 9, Weight: 0.8, Smoothing: 10_000, Name: 3, Common: 1, Company: 6, Abbreviation: 6, Possessive: 4, SameWord: 8}
+	return Model{Edit: 9, Weight: 0.8, Smoothing: 10_000, Name: 3, Common: 1, Company: 6, Abbreviation: 6, Possessive: 4, Familiar: 3, SameWord: 8}
 }
 
 // listLevel is the size level that a word on an editor's list counts as: somebody
