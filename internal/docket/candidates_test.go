@@ -117,6 +117,12 @@ func TestAFamiliarFormIsACandidateOfARarerOne(t *testing.T) {
 	require.NotEmpty(t, found)
 	assert.Equal(t, "Brannock", found[0].Text)
 	assert.Equal(t, "×5 here", found[0].Remark)
+	plural := desk(t, "Brannock saw Brannock; Brannock spoke to Brannock. The Brannocks left.\n")
+	found, err = plural.Docket.Candidates(t.Context(), plural.Docket.Find("Brannocks"), 5)
+	require.NoError(t, err)
+	for _, c := range found {
+		assert.NotEqual(t, "Brannock", c.Text, "a plural is no slip for its singular")
+	}
 	found, err = s.Docket.Candidates(t.Context(), s.Docket.Find("Brannock"), 5)
 	require.NoError(t, err)
 	for _, c := range found {

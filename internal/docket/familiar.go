@@ -53,8 +53,8 @@ func (d *Docket) likeFamiliar(s *Search, e *Entry, add func(weighed)) {
 		if f.count < timesFamiliar*len(e.Occurrences) || abs(len(f.letters)-len(letters)) > most {
 			continue
 		}
-		if k := align.Restricted(letters, f.letters); k == 0 || k > most {
-			continue
+		if k := align.Restricted(letters, f.letters); k == 0 || k > most || builtOn(Key(e.Form), Key(f.form)) {
+			continue // the Roylotts are no slip for Roylott
 		}
 		bits, distance := s.edits(e.Form, f.form)
 		prior := s.model.Familiar + s.model.TwoWords(0, 0, 0, false, f.count, s.size)
