@@ -202,7 +202,7 @@ func (s *Search) hyphened(form, text string, add func(weighed)) {
 		return
 	}
 	bits, distance := s.edits(form, text)
-	prior := s.model.TwoWords(0, 0, 0, false, n, s.size)
+	prior := s.model.Seen(n, s.size)
 	add(weighed{Candidate{
 		Text: text, Distance: distance, Cost: s.cost(bits, distance), Prior: prior, Remark: "hyphened here",
 	}, bits + prior})

@@ -57,7 +57,7 @@ func (d *Docket) likeFamiliar(s *Search, e *Entry, add func(weighed)) {
 			continue // the Roylotts are no slip for Roylott
 		}
 		bits, distance := s.edits(e.Form, f.form)
-		prior := s.model.Familiar + s.model.TwoWords(0, 0, 0, false, f.count, s.size)
+		prior := s.model.Familiar + s.model.Seen(f.count, s.size)
 		add(weighed{Candidate{
 			Text: like(e.Form, f.form), Distance: distance, Cost: s.cost(bits, distance), Prior: prior,
 			Remark: fmt.Sprintf("×%d here", f.count),

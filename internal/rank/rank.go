@@ -159,6 +159,12 @@ func (m Model) TwoWords(p, q float64, level int, capital bool, together, size in
 	return bits
 }
 
+// Seen returns the cost in bits of meeting a form that no list has, but a manuscript
+// of size running words count times.
+func (m Model) Seen(count, size int) float64 {
+	return -m.Weight * math.Log2(float64(count)/(float64(size)+m.Smoothing))
+}
+
 // Level returns the size level that a word counts as in variety v.
 func (m Model) Level(word lexicon.Word, v lexicon.Variety) int {
 	level, ok := word.Level(v)
